@@ -1,0 +1,30 @@
+/**
+ * What a brief is written from: the market's names, the series, where it came from and the stored result of a fit.
+ * Nothing else is consulted, so the same facts always give the same brief, on the server, in the browser and from a frozen forecast.
+ */
+import type { FitReport } from '../forecast/report';
+import type { MonthlySeries } from '../series/types';
+
+export interface MarketFacts {
+  name: string;
+  /** What is counted, in the analyst's words: "monthly active users". */
+  unit: string;
+  focalName: string;
+  rivalName: string;
+  /** Stated measurement error, sd of ln users (0.1 is a panel estimate of +-10 %); 0 or absent: counted exactly. */
+  measurementError?: { focal: number; rival: number };
+}
+
+export interface RevisionFacts {
+  number: number;
+  /** ISO 8601, or null when not known. */
+  createdAt: string | null;
+  fileName: string | null;
+}
+
+export interface BriefFacts {
+  market: MarketFacts;
+  series: MonthlySeries;
+  revision: RevisionFacts;
+  report: FitReport;
+}

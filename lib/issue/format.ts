@@ -1,0 +1,49 @@
+/**
+ * The issued forecast: an outlook with its data and scenario, frozen as plain JSON under a format version.
+ * It stores numbers, not recipes, so it reads the same after the market, the engine or the words have changed.
+ * A stored version is never rewritten: a new version gets a new reader here and the old reader stays.
+ */
+import { z } from 'zod';
+import { fitReportSchema } from '../forecast/report';
+import { scenarioComparisonSchema } from '../scenario/comparison';
+import { pushesSchema } from '../scenario/push-schema';
+
+export const ISSUE_FORMAT_VERSION = 1;
+
+const count = z.number().nonnegative().nullable();
+
+const marketSchema = z.object({
+  name: z.string(),
+  unit: z.string(),
+  focalName: z.string(),
+  rivalName: z.string(),
+  measurementError: z.object({ focal: z.number().nonnegative(), rival: z.number().nonnegative() }).optional(),
+});
+
+const revisionSchema = z.object({
+  number: z.number().int().positive(),
+  createdAt: z.string().nullable(),
+  fileName: z.string().nullable(),
+});
+
+const seriesSchema = z
+  .object({ firstMonth: z.number().int(), focal: z.array(count), rival: z.array(count) })
+  .refine((series) => series.focal.length === series.rival.length, {
+    message: 'both firms must have the same number of months',
+  });
+
+export const issuedForecastSchema = z.object({
+  formatVersion: z.literal(ISSUE_FORMAT_VERSION),
+  /** ISO 8601 with time zone. */
+  issuedAt: z.iso.datetime({ offset: true }),
+  /** Name of the person who issued it. */
+  issuedBy: z.string(),
+  market: marketSchema,
+  revision: revisionSchema,
+  series: seriesSchema,
+  report: fitReportSchema,
+  scenario: z
+    .object({ name: z.string(), pushes: pushesSchema, comparison: scenarioComparisonSchema })
+    .nullable(),
+});
+export type IssuedForecast = z.infer<typeof issuedForecastSchema>;
