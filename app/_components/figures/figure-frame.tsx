@@ -1,0 +1,27 @@
+/**
+ * The frame of every figure: the plot, a caption that says what it shows in this market, and the numbers as a table
+ * behind a disclosure. The plot names itself to a screen reader; the table is its long form.
+ */
+import type { ReactNode } from 'react';
+import type { FigureTable, Sentence } from '@/lib/brief/types';
+import { SentenceText } from '../text/sentence-text';
+import styles from './figure-frame.module.css';
+import { NumbersTable } from './numbers-table';
+
+interface FigureFrameProps {
+  caption: Sentence;
+  table: FigureTable;
+  children: ReactNode;
+}
+
+export function FigureFrame({ caption, table, children }: FigureFrameProps) {
+  return (
+    <figure className={styles.figure}>
+      {children}
+      <figcaption className={styles.caption}>
+        <SentenceText sentence={caption} />
+      </figcaption>
+      <NumbersTable table={table} />
+    </figure>
+  );
+}

@@ -1,0 +1,70 @@
+'use client';
+
+/**
+ * The main figure: users or share, history and forecast, with a read-out of any month by pointer, touch or arrow keys.
+ * The chart itself loads after the page; its place is reserved, so nothing moves when it comes.
+ */
+import dynamic from 'next/dynamic';
+import { useState } from 'react';
+import { useElementSize } from '@/app/_lib/use-element-size';
+import type { ForecastFigure as ForecastFigureData, ForecastView } from '@/lib/brief/types';
+import { ViewSwitch } from '../controls/view-switch';
+import { FigureFrame } from './figure-frame';
+import styles from './forecast-figure.module.css';
+import { layOutForecast } from './forecast-layout';
+import { ForecastReadOut } from './forecast-read-out';
+import { MonthReader } from './month-reader';
+
+const ForecastPlot = dynamic(() => import('./forecast-plot').then((module) => module.ForecastPlot), {
+  ssr: false,
+});
+
+const VIEWS = [
+  { id: 'users', label: 'Users' },
+  { id: 'share', label: 'Share' },
+] as const;
+
+export function ForecastFigure({ figure }: { figure: ForecastFigureData }) {
+  const [viewId, setViewId] = useState<ForecastView['id']>('users');
+  const view = figure[viewId];
+  const [reading, setReading] = useState<number | null>(null);
+  const index = Math.min(reading ?? view.rows.length - 1, view.rows.length - 1);
+  return (
+    <FigureFrame caption={view.caption} table={view.table}>
+      <div className={styles.head}>
+        <ViewSwitch label="What the chart counts" views={VIEWS} value={viewId} onChange={setViewId} />
+        <p className={styles.axisLabel}>{view.axisLabel}</p>
+      </div>
+      <ForecastReadOut view={view} index={index} />
+      <ForecastCanvas view={view} index={index} isReading={reading !== null} onRead={setReading} />
+    </FigureFrame>
+  );
+}
+
+interface ForecastCanvasProps {
+  view: ForecastView;
+  index: number;
+  isReading: boolean;
+  onRead: (index: number | null) => void;
+}
+
+function ForecastCanvas({ view, index, isReading, onRead }: ForecastCanvasProps) {
+  const [ref, size] = useElementSize<HTMLDivElement>();
+  const layout = size
+    ? layOutForecast(
+        size,
+        view.ticks.map((tick) => tick.label),
+        view.series.map((series) => series.end.text),
+      )
+    : null;
+  return (
+    <div className={styles.canvas} ref={ref}>
+      <div className={styles.picture} role="img" aria-label={view.title}>
+        {size && layout ? <ForecastPlot view={view} layout={layout} size={size} /> : null}
+      </div>
+      {layout ? (
+        <MonthReader view={view} plot={layout.plot} index={index} isReading={isReading} onRead={onRead} />
+      ) : null}
+    </div>
+  );
+}
