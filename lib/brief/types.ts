@@ -116,8 +116,10 @@ export interface ForecastView {
   series: ForecastSeries[];
   /** One row per month, history then forecast. */
   rows: ForecastRow[];
-  /** Vertical axis, from 0. */
+  /** Vertical axis, from 0. Cut the drawing to it. */
   domain: [number, number];
+  /** A band leaves the figure at the top (the caption says so). */
+  isCut: boolean;
   ticks: Tick[];
   /** What the vertical axis counts: "thousand monthly active users", "Quillfern's share". */
   axisLabel: string;

@@ -1,0 +1,174 @@
+/**
+ * Numbers for reading. Rounding is honest: a number shows the digits that its 90 % interval supports (the rounding step is at most a
+ * fifth of the interval's width, and one significant digit always stays), a chance or a forecast share is never shown as certain
+ * ("<1 %", ">99 %"), zero has no sign. What is not finite is a caller's mistake and throws.
+ */
+import { createStepSpeller, exponentOf, type StepSpeller, stepExponent, type Width } from './rounding';
+
+export type { Width } from './rounding';
+
+export interface NumberFormat {
+  locale: string;
+  /** Users as a whole number: "310,000", "<1". */
+  users(value: number, width?: Width): string;
+  /** "280,000 to 340,000". */
+  usersInterval(width: Width): string;
+  /** Signed users: "−4,200". */
+  usersDifference(value: number, width?: Width): string;
+  /** A chance over draws, or a forecast share: "88 %", "<1 %" down to 0, ">99 %" up to 1. */
+  chance(probability: number): string;
+  /** "44 to 61 %", "<1 to 12 %". */
+  chanceInterval(width: Width): string;
+  /** A share that was observed: 0 and 100 % are possible. */
+  seenShare(fraction: number): string;
+  /** Difference of shares in points with its sign: "−4 points", "+0.5 points", "about 0 points". */
+  points(fraction: number, width?: Width): string;
+  /** "−6 to −2 points". */
+  pointsInterval(width: Width): string;
+  /** A fraction as percent, any size: "62 %". */
+  percent(fraction: number, width?: Width): string;
+  percentInterval(width: Width): string;
+  /** A plain number. */
+  number(value: number, width?: Width): string;
+  numberInterval(width: Width): string;
+  /** Short axis label: "400k", "1.2M". */
+  axis(value: number): string;
+}
+
+/** Keeps a unit on the line of its number. */
+export const UNIT_SPACE = '\u00a0';
+export const MINUS = '\u2212';
+/** Points of share are told to a tenth at most. */
+const POINTS_FINEST = -1;
+
+/** @param locale BCP 47 tag for digits and separators */
+export function createNumberFormat(locale: string): NumberFormat {
+  const speller = createStepSpeller(locale);
+  return {
+    locale,
+    ...usersFormat(speller),
+    ...shareFormat(speller),
+    ...pointsFormat(speller),
+    ...plainFormat(speller),
+    axis: (value) => spellAxis(value, speller),
+  };
+}
+
+function usersFormat({ spell, spellRange }: StepSpeller) {
+  const exponent = (value: number, width?: Width) => Math.max(0, stepExponent(value, width));
+  const users = (value: number, width?: Width) => {
+    if (value > 0 && value < 0.5) return `<${spell(1, 0)}`;
+    return spell(value, exponent(value, width), 0);
+  };
+  return {
+    users,
+    usersInterval: (width: Width) =>
+      width.q95 < 0.5 ? users(width.q95) : spellRange(width.q05, width.q95, exponent(0, width), 0),
+    usersDifference: (value: number, width?: Width) => {
+      if (value !== 0 && Math.abs(value) < 0.5) return 'about 0';
+      return withSign(spell(value, exponent(value, width), 0));
+    },
+  };
+}
+
+function shareFormat({ spell }: StepSpeller) {
+  const bare = (fraction: number) => {
+    requireFraction(fraction);
+    if (fraction < 0.01) return `<${spell(1, 0)}`;
+    if (fraction > 0.99) return `>${spell(99, 0)}`;
+    return spell(fraction * 100, 0, 0);
+  };
+  return {
+    chance: (probability: number) => `${bare(probability)}${UNIT_SPACE}%`,
+    chanceInterval: (width: Width) => {
+      const [low, high] = [bare(width.q05), bare(width.q95)];
+      return `${low === high ? low : `${low} to ${high}`}${UNIT_SPACE}%`;
+    },
+    seenShare: (fraction: number) => {
+      const isWhole = fraction === 0 || fraction === 1;
+      return `${isWhole ? spell(fraction * 100, 0) : bare(fraction)}${UNIT_SPACE}%`;
+    },
+  };
+}
+
+function pointsFormat({ spell, spellRange }: StepSpeller) {
+  const exponent = (percent: number, width?: Width) => {
+    if (!width) return Math.abs(percent) < 1 ? POINTS_FINEST : 0;
+    return Math.max(POINTS_FINEST, Math.min(0, stepExponent(percent, width)));
+  };
+  return {
+    points: (fraction: number, width?: Width) => {
+      const percent = fraction * 100;
+      if (percent === 0) return `${spell(0, 0)}${UNIT_SPACE}points`;
+      const text = spell(percent, exponent(percent, width && scaleWidth(width, 100)), POINTS_FINEST);
+      if (percent !== 0 && isZero(text)) return `about 0${UNIT_SPACE}points`;
+      const isOne = text === spell(1, 0) || text === spell(-1, 0);
+      return `${withSign(text)}${UNIT_SPACE}${isOne ? 'point' : 'points'}`;
+    },
+    pointsInterval: (width: Width) => {
+      const percent = scaleWidth(width, 100);
+      const step = exponent(0, percent);
+      if (
+        isZero(spell(percent.q05, step, POINTS_FINEST)) &&
+        isZero(spell(percent.q95, step, POINTS_FINEST))
+      ) {
+        return `about 0${UNIT_SPACE}points`;
+      }
+      return `${spellRange(percent.q05, percent.q95, step, POINTS_FINEST, withSign)}${UNIT_SPACE}points`;
+    },
+  };
+}
+
+function plainFormat({ spell, spellRange }: StepSpeller) {
+  const percentExponent = (value: number, width?: Width) => Math.min(1, stepExponent(value, width));
+  return {
+    percent: (fraction: number, width?: Width) =>
+      `${spell(fraction * 100, percentExponent(fraction * 100, width && scaleWidth(width, 100)))}${UNIT_SPACE}%`,
+    percentInterval: (width: Width) => {
+      const percent = scaleWidth(width, 100);
+      return `${spellRange(percent.q05, percent.q95, percentExponent(0, percent))}${UNIT_SPACE}%`;
+    },
+    number: (value: number, width?: Width) => spell(value, stepExponent(value, width)),
+    numberInterval: (width: Width) => spellRange(width.q05, width.q95, stepExponent(0, width)),
+  };
+}
+
+function scaleWidth(width: Width, factor: number): Width {
+  return { q05: width.q05 * factor, q95: width.q95 * factor };
+}
+
+function requireFraction(fraction: number): void {
+  if (!(fraction >= 0 && fraction <= 1)) {
+    throw new RangeError(`a chance or share must be between 0 and 1, got ${fraction}`);
+  }
+}
+
+function isZero(text: string): boolean {
+  return !/[1-9]/.test(text);
+}
+
+function withSign(text: string): string {
+  return text.startsWith(MINUS) || isZero(text) ? text : `+${text}`;
+}
+
+const AXIS_UNITS: [number, string][] = [
+  [1e9, 'bn'],
+  [1e6, 'M'],
+  [1e3, 'k'],
+];
+/** Most decimals of an axis label. */
+const AXIS_DIGITS = 3;
+
+function spellAxis(value: number, { spell }: StepSpeller): string {
+  const [size, unit] = AXIS_UNITS.find(([limit]) => Math.abs(value) >= limit) ?? [1, ''];
+  const scaled = value / size;
+  if (scaled === 0) return spell(0, 0);
+  let exponent = Math.min(0, exponentOf(Math.abs(scaled)));
+  while (
+    exponent > -AXIS_DIGITS &&
+    Math.abs(scaled * 10 ** -exponent - Math.round(scaled * 10 ** -exponent)) > 1e-6
+  ) {
+    exponent--;
+  }
+  return spell(scaled, exponent) + unit;
+}
