@@ -1,0 +1,153 @@
+/** Markets: one contest between two firms, with its newest revision and fit for the list. */
+import type { Prisma } from '../../prisma/generated/client';
+import { type AuditInput, insertAuditEntry } from './audit';
+import { getPrisma } from './client';
+import { FIT_VIEW_COLUMNS, type FitView, insertFit, type NewFit, toView } from './fits';
+import { createId } from './ids';
+import { insertRevision, type NewRevision } from './revisions';
+
+export interface Market {
+  id: string;
+  name: string;
+  unit: string;
+  focalName: string;
+  rivalName: string;
+  /** Smallest measurement error, sd of ln users, per firm. */
+  focalError: number;
+  rivalError: number;
+  isDemo: boolean;
+  archivedAt: Date | null;
+  createdAt: Date;
+}
+
+export interface NewMarket {
+  id?: string;
+  name: string;
+  unit: string;
+  focalName: string;
+  rivalName: string;
+  focalError: number;
+  rivalError: number;
+  isDemo?: boolean;
+}
+
+export interface MarketListRow extends Market {
+  /** Newest revision: its number, last month and how many months it has. */
+  revision: { id: string; number: number; lastMonth: number; months: number } | null;
+  /** Newest fit, in whatever state. */
+  fit: FitView | null;
+}
+
+const MARKET = {
+  id: true,
+  name: true,
+  unit: true,
+  focalName: true,
+  rivalName: true,
+  focalError: true,
+  rivalError: true,
+  isDemo: true,
+  archivedAt: true,
+  createdAt: true,
+} as const satisfies Prisma.MarketSelect;
+
+/** Stores a market with its first revision and queues a fit of it, together or not at all. */
+export async function createMarket(args: {
+  workspaceId: string;
+  market: NewMarket;
+  revision: NewRevision;
+  fit: NewFit | null;
+  audit?: Omit<AuditInput, 'subjectType' | 'subjectId'>;
+}): Promise<{ marketId: string; revisionId: string; fitId: string | null }> {
+  const { workspaceId, market, revision, fit, audit } = args;
+  return getPrisma().$transaction(async (db) => {
+    const marketId = market.id ?? createId();
+    await db.market.create({ data: { ...market, id: marketId, workspaceId }, select: { id: true } });
+    const revisionId = await insertRevision(db, { workspaceId, marketId, number: 1, revision });
+    const fitId = fit ? await insertFit(db, { workspaceId, marketId, revisionId, fit }) : null;
+    if (audit)
+      await insertAuditEntry(db, workspaceId, { ...audit, subjectType: 'market', subjectId: marketId });
+    return { marketId, revisionId, fitId };
+  });
+}
+
+export async function readMarket(args: { workspaceId: string; marketId: string }): Promise<Market | null> {
+  return getPrisma().market.findFirst({
+    where: { id: args.marketId, workspaceId: args.workspaceId },
+    select: MARKET,
+  });
+}
+
+/** Markets that are not archived, own before demo, newest first. */
+export async function listMarkets(args: { workspaceId: string }): Promise<MarketListRow[]> {
+  const rows = await getPrisma().market.findMany({
+    where: { workspaceId: args.workspaceId, archivedAt: null },
+    orderBy: [{ isDemo: 'asc' }, { createdAt: 'desc' }, { id: 'asc' }],
+    select: {
+      ...MARKET,
+      revisions: {
+        orderBy: { number: 'desc' },
+        take: 1,
+        select: {
+          id: true,
+          number: true,
+          observations: { orderBy: { month: 'desc' }, take: 1, select: { month: true } },
+          _count: { select: { observations: true } },
+        },
+      },
+      fits: { orderBy: [{ createdAt: 'desc' }, { id: 'desc' }], take: 1, select: FIT_VIEW_COLUMNS },
+    },
+  });
+  return rows.map(({ revisions, fits, ...market }) => ({
+    ...market,
+    revision: revisions[0] ? toNewestRevision(revisions[0]) : null,
+    fit: fits[0] ? toView(fits[0]) : null,
+  }));
+}
+
+/** Changes only the fields given. @returns false when the workspace has no such market */
+export async function editMarket(args: {
+  workspaceId: string;
+  marketId: string;
+  changes: Partial<Pick<Market, 'name' | 'unit' | 'focalName' | 'rivalName' | 'focalError' | 'rivalError'>>;
+  audit?: Omit<AuditInput, 'subjectType' | 'subjectId'>;
+}): Promise<boolean> {
+  return updateMarket(args, args.changes);
+}
+
+/** Takes a market off the list; its issued forecasts stay. @returns false when there is no such market on the list */
+export async function archiveMarket(args: {
+  workspaceId: string;
+  marketId: string;
+  audit?: Omit<AuditInput, 'subjectType' | 'subjectId'>;
+}): Promise<boolean> {
+  return updateMarket(args, { archivedAt: new Date() });
+}
+
+async function updateMarket(
+  args: { workspaceId: string; marketId: string; audit?: Omit<AuditInput, 'subjectType' | 'subjectId'> },
+  data: Prisma.MarketUpdateManyMutationInput,
+): Promise<boolean> {
+  const { workspaceId, marketId, audit } = args;
+  return getPrisma().$transaction(async (db) => {
+    const { count } = await db.market.updateMany({
+      where: { id: marketId, workspaceId, archivedAt: null },
+      data,
+    });
+    if (count !== 1) return false;
+    if (audit)
+      await insertAuditEntry(db, workspaceId, { ...audit, subjectType: 'market', subjectId: marketId });
+    return true;
+  });
+}
+
+function toNewestRevision(row: {
+  id: string;
+  number: number;
+  observations: { month: number }[];
+  _count: { observations: number };
+}): MarketListRow['revision'] {
+  const lastMonth = row.observations[0]?.month;
+  if (lastMonth === undefined) return null;
+  return { id: row.id, number: row.number, lastMonth, months: row._count.observations };
+}
