@@ -1,0 +1,11 @@
+/** Why a fit can end as failed; `lib/services/explain.ts` has the sentences. */
+import type { FitStatus } from '../estimate/types';
+import type { GAVE_UP } from '../store/fit-work';
+
+/** The engine threw or gave a result that is no result: a defect, logged with the fit's id. */
+export const ENGINE_ERROR = 'engine-error';
+
+export type FailureCode =
+  | Exclude<FitStatus, 'converged' | 'not-converged'>
+  | typeof ENGINE_ERROR
+  | typeof GAVE_UP;

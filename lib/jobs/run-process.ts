@@ -1,0 +1,27 @@
+/** Runs a worker as a process: starts it, waits for a sign to stop, stops it, and ends. */
+import type { FitWorker } from './fit-worker';
+import { getLogger } from './log';
+
+const SIGNS_TO_STOP = ['SIGTERM', 'SIGINT', 'disconnect'] as const;
+
+export async function runProcess(start: () => Promise<FitWorker>): Promise<void> {
+  const log = getLogger();
+  try {
+    // Listening before starting: a sign that comes during the start must not be lost.
+    const sign = waitForSign();
+    const worker = await start();
+    log.info('worker ready');
+    log.info({ sign: await sign }, 'worker stopping');
+    await worker.stop();
+    process.exit(0);
+  } catch (error) {
+    log.fatal({ err: error }, 'worker failed');
+    process.exit(1);
+  }
+}
+
+function waitForSign(): Promise<string> {
+  return new Promise((resolve) => {
+    for (const sign of SIGNS_TO_STOP) process.once(sign, () => resolve(sign));
+  });
+}

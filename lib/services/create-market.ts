@@ -1,0 +1,31 @@
+/** Stores a new market with its first revision and has it fitted. */
+import { enqueueFit } from '../jobs/enqueue-fit';
+import { createMarket as storeMarket } from '../store/markets';
+import { type MarketForm, marketFormSchema } from './forms';
+import { newFit } from './new-fit';
+import { type Success, succeed } from './outcome';
+import { type InvalidInput, type NotAllowed, parseWrite } from './parse-form';
+import { readFormSeries, type UnreadableSeries } from './read-form-series';
+import type { Viewer } from './viewer';
+
+export async function createMarket(
+  viewer: Viewer,
+  form: MarketForm,
+): Promise<Success<{ marketId: string; fitId: string }> | NotAllowed | InvalidInput | UnreadableSeries> {
+  const parsed = parseWrite(viewer, marketFormSchema, form);
+  if (!parsed.ok) return parsed;
+  const series = readFormSeries(parsed.value);
+  if (!series.ok) return series;
+  const { workspaceId, userId } = viewer;
+  const { text: _text, mapping: _mapping, fileName, sourceNote, ...market } = parsed.value;
+  const fit = newFit(viewer, market);
+  const { marketId } = await storeMarket({
+    workspaceId,
+    market,
+    revision: { series: series.value, fileName, sourceNote, createdById: userId },
+    fit,
+    audit: { userId, action: 'create-market', detail: { months: series.value.focal.length } },
+  });
+  await enqueueFit({ fitId: fit.id, workspaceId });
+  return succeed({ marketId, fitId: fit.id });
+}

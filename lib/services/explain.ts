@@ -1,0 +1,127 @@
+/** Sentences for the codes that services return and fits end with: what happened, why, what to try. */
+import type { FailureCode } from '../jobs/failure';
+import type { StaleReason } from './staleness';
+
+export interface Explanation {
+  what: string;
+  why: string;
+  tryThis: string;
+}
+
+const EXPLANATIONS = {
+  'not-found': {
+    what: 'This is not here.',
+    why: 'It does not exist in your workspace, or it was removed.',
+    tryThis: 'Go back to the list of markets and open it from there.',
+  },
+  'not-allowed': {
+    what: 'Your role does not allow this.',
+    why: 'Readers can look at everything but change nothing; only owners invite members.',
+    tryThis: 'Ask an owner of the workspace for another role.',
+  },
+  'invalid-input': {
+    what: 'Something in the form cannot be used.',
+    why: 'A field is empty, too long, or out of its range.',
+    tryThis: 'Correct the marked fields and send the form again.',
+  },
+  'unreadable-series': {
+    what: 'The counts were not stored.',
+    why: 'Some rows cannot be read without guessing.',
+    tryThis: 'Correct the listed rows and upload the table again.',
+  },
+  'same-series': {
+    what: 'Nothing was stored.',
+    why: 'These counts are the same as in the current revision.',
+    tryThis: 'Upload a table with new or corrected months.',
+  },
+  'nothing-running': {
+    what: 'There is nothing to cancel.',
+    why: 'The fit has already ended.',
+    tryThis: 'Reload the page to see how it ended.',
+  },
+  'no-result': {
+    what: 'There is no outlook yet.',
+    why: 'No fit of this market has ended with a usable result.',
+    tryThis: 'Run a fit and wait for it to end.',
+  },
+  'is-stale': {
+    what: 'The outlook is out of date.',
+    why: 'The data or the market changed after it was made.',
+    tryThis: 'Fit again, then issue the new outlook.',
+  },
+  'wrong-credentials': {
+    what: 'You are not signed in.',
+    why: 'E-mail address and password do not belong together.',
+    tryThis: 'Check both and try again. An owner of your workspace can send you a new set-up link.',
+  },
+  'too-many-tries': {
+    what: 'Too many tries.',
+    why: 'After several failures in a row we stop looking for a while.',
+    tryThis: 'Wait a quarter of an hour and try again.',
+  },
+  'not-available': {
+    what: 'This link does not open anything.',
+    why: 'It was mistyped, has expired, or was withdrawn; we cannot tell which.',
+    tryThis: 'Ask the person who sent it for a new one.',
+  },
+  'email-taken': {
+    what: 'The account was not made.',
+    why: 'There is already an account with this e-mail address.',
+    tryThis: 'Sign in with it, or use another address.',
+  },
+} satisfies Record<string, Explanation>;
+
+export type ServiceCode = keyof typeof EXPLANATIONS;
+
+export function explainCode(code: ServiceCode): Explanation {
+  return EXPLANATIONS[code];
+}
+
+const FAILURES: Record<FailureCode, Explanation> = {
+  'too-short': {
+    what: 'There are too few months to fit.',
+    why: 'A market is fitted from twelve months on in which both firms are known.',
+    tryThis: 'Upload a longer series, or wait for more months.',
+  },
+  'no-usable-data': {
+    what: 'There is nothing to fit.',
+    why: 'One of the firms has no count above zero, or its counts never change.',
+    tryThis: 'Check that the right columns were picked and that they hold user counts.',
+  },
+  failed: {
+    what: 'No curve of two competing firms fits these counts.',
+    why: 'None of the starting points led to a finite fit.',
+    tryThis: 'Look for a mistyped count or mixed units, and upload the corrected table.',
+  },
+  'engine-error': {
+    what: 'The fit broke off.',
+    why: 'The calculation met a fault of its own. It is written in the log of the server.',
+    tryThis: 'Fit again after the next update, and report the market if it happens again.',
+  },
+  'gave-up': {
+    what: 'The fit did not end.',
+    why: 'Several workers stopped in the middle of it, perhaps for lack of memory.',
+    tryThis: 'Look after the server, then fit again.',
+  },
+};
+
+const UNKNOWN_FAILURE: Explanation = {
+  what: 'The fit failed.',
+  why: 'The reason is not known to this version.',
+  tryThis: 'Fit again.',
+};
+
+/** @param code as stored with the fit, perhaps by another version */
+export function explainFailure(code: string | null): Explanation {
+  return FAILURES[code as FailureCode] ?? UNKNOWN_FAILURE;
+}
+
+const STALE_REASONS: Record<StaleReason, string> = {
+  'newer-revision': 'Newer data have arrived since this outlook was made.',
+  'measurement-changed': 'The measurement errors of the market were changed since this outlook was made.',
+  'engine-changed': 'The method of calculation was improved since this outlook was made.',
+};
+
+export function explainStaleReason(reason: StaleReason): string {
+  return STALE_REASONS[reason];
+}

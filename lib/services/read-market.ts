@@ -1,0 +1,97 @@
+/** Everything that the page of one market shows. */
+import type { BriefFacts } from '../brief/facts';
+import type { FitProgress } from '../estimate/types';
+import type { MonthlySeries } from '../series/types';
+import { type DoneFit, type FitState, type FitView, latestDoneFit, latestFit } from '../store/fits';
+import { type IssuedForecastSummary, listIssuedForecasts } from '../store/issued-forecasts';
+import { type Market, readMarket as readStoredMarket } from '../store/markets';
+import { latestRevision, type Revision, type RevisionSummary, readRevision } from '../store/revisions';
+import { listScenarios, type Scenario } from '../store/scenarios';
+import { toBriefFacts } from './market-facts';
+import { refuse, type Success, succeed } from './outcome';
+import type { NotFound } from './parse-form';
+import { listStaleReasons, type StaleReason } from './staleness';
+import type { Viewer } from './viewer';
+
+export type IssuedSummary = IssuedForecastSummary;
+
+export interface MarketPage {
+  market: Market;
+  /** The newest one, with its counts in `series`. */
+  revision: RevisionSummary;
+  series: MonthlySeries;
+  /** The newest fit, in whatever state; null: never fitted. */
+  fit: FitStanding | null;
+  /** The newest fit that ended well: what `facts` tell of and draws are read from. */
+  outlook: { fitId: string; staleReasons: StaleReason[] } | null;
+  /** null: no fit has ended well yet. They may be of an earlier revision; `outlook.staleReasons` says so. */
+  facts: BriefFacts | null;
+  issued: IssuedSummary[];
+  scenarios: Scenario[];
+}
+
+export interface FitStanding {
+  id: string;
+  state: FitState;
+  progress: FitProgress | null;
+  failureCode: string | null;
+  isCancelling: boolean;
+  createdAt: Date;
+  /** The outlook shown is out of date. */
+  isStale: boolean;
+}
+
+export async function readMarket(viewer: Viewer, marketId: string): Promise<Success<MarketPage> | NotFound> {
+  const scope = { workspaceId: viewer.workspaceId, marketId };
+  const [market, newest, fit, done, issued, scenarios] = await Promise.all([
+    readStoredMarket(scope),
+    latestRevision(scope),
+    latestFit(scope),
+    latestDoneFit(scope),
+    listIssuedForecasts(scope),
+    listScenarios(scope),
+  ]);
+  if (!market || !newest) return refuse('not-found');
+  const { series, ...revision } = newest;
+  const facts = done && (await readFacts(viewer, market, newest, done));
+  const outlook = done && { fitId: done.id, staleReasons: listReasons(done, market, newest) };
+  const isStale = outlook !== null && outlook.staleReasons.length > 0;
+  return succeed({
+    market,
+    revision,
+    series,
+    fit: fit && toStanding(fit, isStale),
+    outlook,
+    facts,
+    issued,
+    scenarios,
+  });
+}
+
+async function readFacts(
+  { workspaceId }: Viewer,
+  market: Market,
+  newest: Revision,
+  done: DoneFit,
+): Promise<BriefFacts | null> {
+  const { revisionId } = done;
+  const fitted = revisionId === newest.id ? newest : await readRevision({ workspaceId, revisionId });
+  return fitted && toBriefFacts(market, fitted, done);
+}
+
+function listReasons(done: DoneFit, market: Market, newest: Revision): StaleReason[] {
+  return listStaleReasons({ ...done, engineVersion: done.report.engineVersion }, market, newest.id);
+}
+
+function toStanding(fit: FitView, isStale: boolean): FitStanding {
+  const { id, state, progress, failureCode, cancelAsked, createdAt } = fit;
+  return {
+    id,
+    state,
+    progress,
+    failureCode,
+    isCancelling: cancelAsked && state === 'running',
+    createdAt,
+    isStale,
+  };
+}
