@@ -114,7 +114,7 @@ function findConstantSum(series: MonthlySeries): SeriesProblem[] {
   const isConstant = relativeSpread(sums) <= CONSTANT_SUM_SPREAD;
   const isMoving = relativeSpread(pairs.map(([focal]) => focal)) > CONSTANT_SUM_SPREAD;
   return isConstant && isMoving
-    ? [makeWarning('constant-sum', { value: String(sums[sums.length - 1]) })]
+    ? [makeWarning('constant-sum', { value: String(Number(sums[0].toPrecision(4))) })]
     : [];
 }
 

@@ -5,6 +5,7 @@
 import Papa from 'papaparse';
 import { FORMULA_START } from './clean-name';
 import { formatMonth } from './month';
+import { readCountText } from './number';
 import type { MonthlySeries } from './types';
 
 export interface NamedSeries {
@@ -20,10 +21,16 @@ export function toCsv({ series, focalName, rivalName }: NamedSeries): string {
   const header = [MONTH_HEADER, focalName, rivalName];
   const rows = series.focal.map((count, index) => [
     formatMonth(series.firstMonth + index),
-    count ?? '',
-    series.rival[index] ?? '',
+    writeCount(count),
+    writeCount(series.rival[index]),
   ]);
   return `${writeCsv([header, ...rows])}\r\n`;
+}
+
+/** Shortest form that reads back to the same double; 12.345 gets a zero more, for it could also be twelve thousand. */
+function writeCount(count: number | null): string {
+  if (count === null) return '';
+  return readCountText(String(count)).kind === 'ambiguous' ? `${count}0` : String(count);
 }
 
 /** Rows of cells -> CSV with formulas shielded, for every table that leaves the application. */

@@ -42,7 +42,7 @@ const PLAIN_NUMBER: Record<DecimalMark, RegExp> = {
   comma: /^(?:\d+|[1-9]\d{0,2}(?:\.\d{3})+)?(?:,\d+)?$/,
 };
 
-const NUMBER_WITH_SIZE = /^([\d.,]*\d)(?:e([+-]?\d{1,2})|\s*([a-z]+)\.?)?$/i;
+const NUMBER_WITH_SIZE = /^([\d.,]*\d)(?:e([+-]?\d{1,3})|\s*([a-z]+)\.?)?$/i;
 
 /** One text by itself. */
 export function readCountText(text: string): CountReading {

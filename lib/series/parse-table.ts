@@ -50,12 +50,13 @@ export function readTable(text: string): TableReading {
     );
   }
   const filled = lines.filter(({ cells }) => cells.some((cell) => cell !== ''));
+  if (filled.length === 0) return unusable(makeError('empty-file'));
   const headerIndex = Math.max(
     0,
     filled.findIndex(({ cells }) => cells.filter((cell) => cell !== '').length > 1),
   );
   const table = filled.slice(headerIndex);
-  const width = Math.max(...table.map(({ cells }) => cells.length));
+  const width = table.reduce((widest, { cells }) => Math.max(widest, cells.length), 0);
   if (width > MAX_COLUMNS) {
     return unusable(
       makeError('too-large', {
