@@ -55,9 +55,3 @@ export async function hasOwner(args: { workspaceId: string }): Promise<boolean> 
   const owners = await getPrisma().member.count({ where: { workspaceId: args.workspaceId, role: 'owner' } });
   return owners > 0;
 }
-
-/** Takes back an account that could not be given a membership. Only for a user who belongs to no workspace. */
-export async function removeUserWithoutWorkspace(args: { userId: string }): Promise<boolean> {
-  const { count } = await getPrisma().user.deleteMany({ where: { id: args.userId, members: { none: {} } } });
-  return count === 1;
-}

@@ -1,5 +1,4 @@
 /** One-time links that let their holder sign up into a workspace. The token itself is never stored, only its hash. */
-import { type AuditInput, insertAuditEntry } from './audit';
 import { getPrisma } from './client';
 import { createId } from './ids';
 import type { Role } from './members';
@@ -50,38 +49,4 @@ export async function findSetupLink(args: { tokenHash: string; now: Date }): Pro
   if (!row) return null;
   const { workspace, ...link } = row;
   return { ...link, workspaceName: workspace.name };
-}
-
-/**
- * Uses the link up and makes the user a member, together or not at all.
- * @returns false when the link is wrong, expired or was used in the meantime
- */
-export async function redeemSetupLink(args: {
-  tokenHash: string;
-  userId: string;
-  now: Date;
-  audit?: Omit<AuditInput, 'subjectId' | 'userId' | 'subjectType'>;
-}): Promise<boolean> {
-  const { tokenHash, userId, now, audit } = args;
-  return getPrisma().$transaction(async (db) => {
-    const [used] = await db.setupLink.updateManyAndReturn({
-      where: { tokenHash, usedAt: null, expiresAt: { gt: now } },
-      data: { usedAt: now },
-      select: { workspaceId: true, role: true },
-    });
-    if (!used) return false;
-    const member = await db.member.create({
-      data: { id: createId(), userId, ...used },
-      select: { id: true },
-    });
-    if (audit) {
-      await insertAuditEntry(db, used.workspaceId, {
-        ...audit,
-        userId,
-        subjectType: 'member',
-        subjectId: member.id,
-      });
-    }
-    return true;
-  });
 }

@@ -38,7 +38,9 @@ export function shareSession(database, onBroken) {
   async function exec(sql) {
     if (isRunOpen) {
       isRunOpen = false;
-      await database.runExclusive(() => database.execProtocolRawStream(SYNC_MESSAGE, { onRawData: () => {} }));
+      await database.runExclusive(() =>
+        database.execProtocolRawStream(SYNC_MESSAGE, { onRawData: () => {} }),
+      );
     }
     return database.exec(sql);
   }
