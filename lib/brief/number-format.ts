@@ -3,7 +3,14 @@
  * fifth of the interval's width, and one significant digit always stays), a chance or a forecast share is never shown as certain
  * ("<1 %", ">99 %"), zero has no sign. What is not finite is a caller's mistake and throws.
  */
-import { createStepSpeller, exponentOf, type StepSpeller, stepExponent, type Width } from './rounding';
+import {
+  createStepSpeller,
+  DIGITS_WITHOUT_INTERVAL,
+  type StepSpeller,
+  shortestExponent,
+  stepExponent,
+  type Width,
+} from './rounding';
 
 export type { Width } from './rounding';
 
@@ -120,7 +127,9 @@ function pointsFormat({ spell, spellRange }: StepSpeller) {
 }
 
 function plainFormat({ spell, spellRange }: StepSpeller) {
-  const percentExponent = (value: number, width?: Width) => Math.min(1, stepExponent(value, width));
+  const exponent = (value: number, width?: Width) =>
+    width ? stepExponent(value, width) : shortestExponent(value, DIGITS_WITHOUT_INTERVAL);
+  const percentExponent = (value: number, width?: Width) => Math.min(1, exponent(value, width));
   return {
     percent: (fraction: number, width?: Width) =>
       `${spell(fraction * 100, percentExponent(fraction * 100, width && scaleWidth(width, 100)))}${UNIT_SPACE}%`,
@@ -128,8 +137,8 @@ function plainFormat({ spell, spellRange }: StepSpeller) {
       const percent = scaleWidth(width, 100);
       return `${spellRange(percent.q05, percent.q95, percentExponent(0, percent))}${UNIT_SPACE}%`;
     },
-    number: (value: number, width?: Width) => spell(value, stepExponent(value, width)),
-    numberInterval: (width: Width) => spellRange(width.q05, width.q95, stepExponent(0, width)),
+    number: (value: number, width?: Width) => spell(value, exponent(value, width)),
+    numberInterval: (width: Width) => spellRange(width.q05, width.q95, exponent(0, width)),
   };
 }
 
@@ -156,19 +165,11 @@ const AXIS_UNITS: [number, string][] = [
   [1e6, 'M'],
   [1e3, 'k'],
 ];
-/** Most decimals of an axis label. */
+/** Most significant digits of an axis label. */
 const AXIS_DIGITS = 3;
 
 function spellAxis(value: number, { spell }: StepSpeller): string {
   const [size, unit] = AXIS_UNITS.find(([limit]) => Math.abs(value) >= limit) ?? [1, ''];
   const scaled = value / size;
-  if (scaled === 0) return spell(0, 0);
-  let exponent = Math.min(0, exponentOf(Math.abs(scaled)));
-  while (
-    exponent > -AXIS_DIGITS &&
-    Math.abs(scaled * 10 ** -exponent - Math.round(scaled * 10 ** -exponent)) > 1e-6
-  ) {
-    exponent--;
-  }
-  return spell(scaled, exponent) + unit;
+  return spell(scaled, shortestExponent(scaled, AXIS_DIGITS)) + unit;
 }

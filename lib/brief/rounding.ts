@@ -22,7 +22,7 @@ export interface StepSpeller {
 /** Part of the interval's width that the rounding step may reach. */
 const STEP_OF_WIDTH = 0.2;
 /** Digits shown when no interval says how many are supported. */
-const DIGITS_WITHOUT_INTERVAL = 3;
+export const DIGITS_WITHOUT_INTERVAL = 3;
 /** Most digits shown. */
 const MAX_DIGITS = 4;
 /** Most decimals that are spelt; smaller numbers read as 0. */
@@ -44,6 +44,16 @@ export function stepExponent(value: number, width?: Width): number {
   const spread = width ? Math.abs(width.q95 - width.q05) : 0;
   if (!(spread > 0)) return top - (DIGITS_WITHOUT_INTERVAL - 1);
   return Math.min(top, Math.max(top - (MAX_DIGITS - 1), exponentOf(spread * STEP_OF_WIDTH)));
+}
+
+/** Exponent of the coarsest step that shows `value` unchanged, or as well as `digits` significant digits can. */
+export function shortestExponent(value: number, digits: number): number {
+  if (value === 0) return 0;
+  const finest = exponentOf(Math.abs(value)) - (digits - 1);
+  let exponent = exponentOf(Math.abs(value));
+  while (exponent > finest && Math.abs(roundToStep(value, exponent) - value) > 1e-9 * Math.abs(value))
+    exponent--;
+  return exponent;
 }
 
 /** `value` to a multiple of 10^exponent, half away from zero; never negative zero. */

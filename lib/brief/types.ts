@@ -208,8 +208,11 @@ export interface PhaseMap {
 
 export interface GrowthStop {
   firm: 'focal' | 'rival';
+  /** "Quillfern stops growing". */
+  name: string;
   tone: Tone;
   isDashed: boolean;
+  /** Two ends, or none when the line lies outside the map. */
   points: MapPoint[];
 }
 

@@ -1,0 +1,97 @@
+/** The brief of one market from its facts: five questions, read top to bottom. Pure: the same facts give the same brief. */
+import { OUTCOMES } from '../forecast/report';
+import { writeCautions } from './cautions';
+import type { BriefFacts } from './facts';
+import { buildForecastFigure } from './forecast-figure';
+import { writeMilestones } from './milestones';
+import { buildOddsMap } from './odds-map';
+import { buildOddsStrip, spellOdds } from './odds-strip';
+import { labelOutcome } from './outcomes';
+import { buildParameterTable } from './parameters';
+import { buildPhaseMap } from './phase-map';
+import { describeSampler } from './sampler-health';
+import { listWords, sentence } from './text';
+import type { Brief, Sentence, TrustSection, WhereSection, WhySection } from './types';
+import { writeUnknowns } from './unknowns';
+import { writeVerdict } from './verdict';
+import { createWords, DEFAULT_LOCALE, type Words } from './words';
+
+export interface BriefOptions {
+  /** BCP 47 tag for numbers and months; sentences are English. */
+  locale?: string;
+  /** Pushes are shown beside the brief: their cautions apply. */
+  hasScenario?: boolean;
+}
+
+/** Odds before the data within this of 25 % read as "25 %". */
+const EVEN_WITHIN = 0.02;
+
+export function buildBrief(facts: BriefFacts, options: BriefOptions = {}): Brief {
+  const { locale = DEFAULT_LOCALE, hasScenario = false } = options;
+  const words = createWords(facts, locale);
+  const { name, unit, focalName, rivalName } = facts.market;
+  return {
+    market: { name, unit, focalName, rivalName },
+    dataLine: writeDataLine(words),
+    locale,
+    where: buildWhere(words),
+    why: buildWhy(words),
+    change: {
+      question: 'What would change it?',
+      note: sentence('Gains and losses against no push, on the same draws and the same luck.'),
+    },
+    trust: buildTrust(words),
+    cautions: writeCautions(words, hasScenario),
+  };
+}
+
+/** "revision 4 · 42 months to Dec 2025". */
+function writeDataLine(words: Words): string {
+  const months = words.facts.series.focal.length;
+  return `revision ${words.facts.revision.number} · ${months} months to ${words.months.short(words.lastMonth)}`;
+}
+
+function buildWhere(words: Words): WhereSection {
+  return {
+    question: 'Where is it heading?',
+    note: writePriorNote(words),
+    verdict: writeVerdict(words),
+    odds: buildOddsStrip(words),
+    forecast: buildForecastFigure(words),
+    milestones: writeMilestones(words),
+  };
+}
+
+function writePriorNote(words: Words): Sentence {
+  const { priorOdds } = words.facts.report.outlook;
+  if (OUTCOMES.every((outcome) => Math.abs(priorOdds[outcome] - 0.25) <= EVEN_WITHIN)) {
+    return sentence('Before the data each outcome stood at 25\u00a0%.');
+  }
+  const spelt = spellOdds(words, priorOdds);
+  const parts = OUTCOMES.map((outcome) => `${labelOutcome(words, outcome)} ${spelt[outcome]}`);
+  return sentence(`Before the data: ${listWords(parts)}.`);
+}
+
+function buildWhy(words: Words): WhySection {
+  return {
+    question: 'Why?',
+    note: sentence(
+      'Each firm grows until it meets its line. Where the lines cross, both stand still. Each dot of the odds map is one set of strengths that fits the history.',
+    ),
+    phaseMap: buildPhaseMap(words),
+    oddsMap: buildOddsMap(words),
+    parameters: buildParameterTable(words),
+  };
+}
+
+function buildTrust(words: Words): TrustSection {
+  return {
+    question: 'How far can I trust it?',
+    note: sentence('What the history cannot tell, and how the numbers were got.'),
+    unknowns: writeUnknowns(words),
+    sampler: describeSampler(words),
+    leftOut: sentence(
+      `Left out: a third firm, prices, seasons, and every change of strengths after ${words.months.long(words.lastMonth)}.`,
+    ),
+  };
+}

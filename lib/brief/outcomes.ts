@@ -1,0 +1,65 @@
+/** The four outcomes: which one is decided, who wins, what each is called and coloured. */
+import { type Odds, OUTCOMES, type Outcome } from '../forecast/report';
+import { LIKELY_ABOVE } from './probability-words';
+import type { Tone } from './types';
+import { type FirmRole, otherFirm, type Words } from './words';
+
+const TONES: Record<Outcome, Tone> = {
+  coexistence: 'both',
+  exclusionByFocal: 'focal',
+  exclusionByRival: 'rival',
+  headStartDecides: 'headStart',
+};
+
+export function toneOfOutcome(outcome: Outcome): Tone {
+  return TONES[outcome];
+}
+
+/** The outcome whose odds pass "likely", else null: the data do not decide yet. */
+export function decideOutcome(odds: Odds): Outcome | null {
+  return OUTCOMES.find((outcome) => odds[outcome] > LIKELY_ABOVE) ?? null;
+}
+
+/** Outcomes from the best odds to the worst; equal ones in the order of OUTCOMES. */
+export function rankOutcomes(odds: Odds): Outcome[] {
+  return [...OUTCOMES].sort((a, b) => odds[b] - odds[a]);
+}
+
+/** Who squeezes whom out; null when nobody does, or when the head start decides who. */
+export function winnerOf(outcome: Outcome): FirmRole | null {
+  if (outcome === 'exclusionByFocal') return 'focal';
+  return outcome === 'exclusionByRival' ? 'rival' : null;
+}
+
+export function loserOf(outcome: Outcome): FirmRole | null {
+  const winner = winnerOf(outcome);
+  return winner && otherFirm(winner);
+}
+
+/** "both stay", "Quillfern alone", "head start decides". */
+export function labelOutcome(words: Pick<Words, 'name'>, outcome: Outcome): string {
+  const winner = winnerOf(outcome);
+  if (winner) return `${words.name(winner)} alone`;
+  return outcome === 'coexistence' ? 'both stay' : 'head start decides';
+}
+
+/** As the subject of a sentence: "both firms staying", "Quillfern alone staying", "the head start deciding". */
+export function subjectOutcome(words: Words, outcome: Outcome): string {
+  const winner = winnerOf(outcome);
+  if (winner) return `${words.name(winner)} alone staying`;
+  return outcome === 'coexistence' ? 'both firms staying' : 'the head start deciding';
+}
+
+/** The outcome that coefficients alpha and beta stand for; a coefficient of exactly 1 counts as above. */
+export function outcomeOfCoefficients(alpha: number, beta: number): Outcome {
+  if (alpha < 1) return beta < 1 ? 'coexistence' : 'exclusionByFocal';
+  return beta < 1 ? 'exclusionByRival' : 'headStartDecides';
+}
+
+/** Chances over draws that the rival takes all of the focal firm's room (alpha > 1), and the reverse (beta > 1). */
+export function chancesOfTakingAll(odds: Odds): { alpha: number; beta: number } {
+  return {
+    alpha: Math.min(1, odds.exclusionByRival + odds.headStartDecides),
+    beta: Math.min(1, odds.exclusionByFocal + odds.headStartDecides),
+  };
+}
