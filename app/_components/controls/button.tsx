@@ -1,17 +1,10 @@
 'use client';
 
 /**
- * Buttons: `main` for the one step a page asks for, `plain` beside it, `text` inside a line. A link that acts as the next
- * step takes the same classes through `buttonClass`.
+ * Buttons: `main` for the one step a page asks for, `plain` beside it, `text` inside a line.
  */
 import type { ComponentPropsWithRef } from 'react';
-import styles from './button.module.css';
-
-export type ButtonKind = 'main' | 'plain' | 'text';
-
-export function buttonClass(kind: ButtonKind): string {
-  return `${styles.button} ${styles[kind]}`;
-}
+import { type ButtonKind, buttonClass } from './button-class';
 
 interface ButtonProps extends ComponentPropsWithRef<'button'> {
   kind?: ButtonKind;

@@ -4,6 +4,7 @@
 import type { ReactNode } from 'react';
 import { Input, NumberField } from 'react-aria-components/NumberField';
 import { Slider, SliderThumb, SliderTrack } from 'react-aria-components/Slider';
+import { LOCALE } from '@/app/_lib/locale';
 import styles from './range-field.module.css';
 
 interface RangeFieldProps {
@@ -75,5 +76,5 @@ export function RangeField({
 
 /** Letters that the widest value takes, with room for the caret. */
 function widthOf(max: number, format: Intl.NumberFormatOptions | undefined): number {
-  return new Intl.NumberFormat('en-GB', format).format(max).length + 2;
+  return new Intl.NumberFormat(LOCALE, format).format(max).length + 2;
 }

@@ -1,7 +1,7 @@
 /** The line above the forecast chart that spells the month being read; without a reading, the last month of the forecast. */
-import { markColour } from '@/app/_lib/tone';
-import type { ForecastSeries, ForecastView } from '@/lib/brief/types';
+import type { ForecastView } from '@/lib/brief/types';
 import styles from './forecast-figure.module.css';
+import { SeriesSample } from './series-sample';
 
 export function ForecastReadOut({ view, index }: { view: ForecastView; index: number }) {
   const row = view.rows[index];
@@ -15,33 +15,12 @@ export function ForecastReadOut({ view, index }: { view: ForecastView; index: nu
       {view.series.map((series) => (
         <div key={series.key} className={styles.readSeries}>
           <dt>
-            <SeriesSample series={series} />
+            <SeriesSample {...series} />
             {series.name}
           </dt>
           <dd>{row.points[series.key]?.text || 'no count'}</dd>
         </div>
       ))}
     </dl>
-  );
-}
-
-function SeriesSample({ series }: { series: ForecastSeries }) {
-  const colour = markColour(series.tone);
-  return (
-    <svg width={26} height={10} aria-hidden="true" className={styles.sample}>
-      <line
-        x1={0}
-        x2={26}
-        y1={5}
-        y2={5}
-        stroke={colour}
-        strokeWidth={2}
-        strokeDasharray={series.isDashed ? '5 3' : undefined}
-      />
-      {series.marker === 'square-open' ? (
-        <rect x={10} y={2} width={6} height={6} fill="var(--paper)" stroke={colour} strokeWidth={1.25} />
-      ) : null}
-      {series.marker === 'round' ? <circle cx={13} cy={5} r={3} fill={colour} /> : null}
-    </svg>
   );
 }

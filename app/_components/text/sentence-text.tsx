@@ -15,8 +15,3 @@ function renderRun(run: TextRun) {
   if (run.strong) return <strong className={className}>{run.text}</strong>;
   return className ? <span className={className}>{run.text}</span> : run.text;
 }
-
-/** The plain reading, for labels and titles. */
-export function plainSentence(sentence: Sentence): string {
-  return sentence.map((run) => run.text).join('');
-}

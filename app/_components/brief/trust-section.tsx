@@ -1,0 +1,50 @@
+/** How far can I trust it? What the data cannot tell, the sampler's health, what the model leaves out, the cautions. */
+
+import { plainText } from '@/lib/brief/text';
+import type { Caution, TrustSection as TrustSectionData } from '@/lib/brief/types';
+import { Question } from '../frame/question';
+import { SentenceText } from '../text/sentence-text';
+import styles from './sections.module.css';
+
+interface TrustSectionProps {
+  trust: TrustSectionData;
+  cautions: Caution[];
+}
+
+export function TrustSection({ trust, cautions }: TrustSectionProps) {
+  return (
+    <Question id="trust" question={trust.question} note={<SentenceText sentence={trust.note} />}>
+      <ul className={styles.unknowns}>
+        {trust.unknowns.map((unknown) => (
+          <li key={`${unknown.code} ${plainText(unknown.sentence)}`}>
+            <SentenceText sentence={unknown.sentence} />
+          </li>
+        ))}
+      </ul>
+      <p className={styles.leftOut}>
+        <SentenceText sentence={trust.leftOut} />
+      </p>
+      <div className={styles.sampler}>
+        <p>
+          <SentenceText sentence={trust.sampler.line} />
+        </p>
+        <details>
+          <summary>How the estimate was made</summary>
+          <dl className={styles.samplerDetails}>
+            {trust.sampler.details.map((detail) => (
+              <div key={detail.label}>
+                <dt>{detail.label}</dt>
+                <dd>{detail.value}</dd>
+              </div>
+            ))}
+          </dl>
+        </details>
+      </div>
+      <ul className={styles.cautions}>
+        {cautions.map((caution) => (
+          <li key={caution.id}>{caution.text}</li>
+        ))}
+      </ul>
+    </Question>
+  );
+}

@@ -1,0 +1,111 @@
+'use client';
+
+/** Two firms' counts as they were read, without a fit: the chart of a preview and of the data page. */
+import { CartesianGrid, ComposedChart, type DotItemDotProps, Line, XAxis, YAxis } from 'recharts';
+import { LOCALE } from '@/app/_lib/locale';
+import { createNumberFormat } from '@/lib/brief/number-format';
+import type { MonthlySeries } from '@/lib/series/types';
+import { thinTicks } from './forecast-layout';
+
+const MONTHS_PER_YEAR = 12;
+const Y_AXIS_WIDTH = 52;
+const RIGHT = 14;
+const TICK_STYLE = { fontSize: 13, fill: 'var(--ink-2)' };
+const numbers = createNumberFormat(LOCALE);
+
+interface HistoryPlotProps {
+  series: MonthlySeries;
+  size: { width: number; height: number };
+}
+
+export function HistoryPlot({ series, size }: HistoryPlotProps) {
+  const rows = series.focal.map((focal, index) => ({
+    month: series.firstMonth + index,
+    focal,
+    rival: series.rival[index] ?? null,
+  }));
+  const domain: [number, number] = [series.firstMonth, series.firstMonth + Math.max(rows.length - 1, 1)];
+  const ticks = thinTicks(listYears(domain), domain, size.width - Y_AXIS_WIDTH - RIGHT);
+  return (
+    <ComposedChart
+      width={size.width}
+      height={size.height}
+      data={rows}
+      margin={{ top: 8, right: RIGHT, bottom: 0, left: 0 }}
+      accessibilityLayer={false}
+    >
+      <CartesianGrid vertical={false} stroke="var(--rule)" />
+      <XAxis
+        dataKey="month"
+        type="number"
+        domain={domain}
+        ticks={ticks.map((tick) => tick.value)}
+        tickFormatter={(month: number) => String(Math.floor(month / MONTHS_PER_YEAR))}
+        tick={TICK_STYLE}
+        axisLine={false}
+        tickLine={{ stroke: 'var(--rule-strong)' }}
+        interval={0}
+      />
+      <YAxis
+        width={Y_AXIS_WIDTH}
+        domain={[0, 'auto']}
+        tickFormatter={(value: number) => numbers.axis(value)}
+        tick={TICK_STYLE}
+        axisLine={false}
+        tickLine={false}
+      />
+      <Line
+        dataKey="focal"
+        type="linear"
+        stroke="var(--focal)"
+        strokeWidth={1.5}
+        dot={renderRound}
+        activeDot={false}
+        isAnimationActive={false}
+      />
+      <Line
+        dataKey="rival"
+        type="linear"
+        stroke="var(--rival)"
+        strokeWidth={1.5}
+        strokeDasharray="6 3"
+        dot={renderSquare}
+        activeDot={false}
+        isAnimationActive={false}
+      />
+    </ComposedChart>
+  );
+}
+
+function listYears([first, last]: [number, number]) {
+  const ticks = [];
+  for (
+    let month = Math.ceil(first / MONTHS_PER_YEAR) * MONTHS_PER_YEAR;
+    month <= last;
+    month += MONTHS_PER_YEAR
+  ) {
+    ticks.push({ value: month, label: String(month / MONTHS_PER_YEAR) });
+  }
+  return ticks;
+}
+
+function renderRound({ cx, cy, index, value }: DotItemDotProps) {
+  if (cx == null || cy == null || value == null) return <g key={index} />;
+  return <circle key={index} cx={cx} cy={cy} r={2.2} fill="var(--focal)" />;
+}
+
+function renderSquare({ cx, cy, index, value }: DotItemDotProps) {
+  if (cx == null || cy == null || value == null) return <g key={index} />;
+  return (
+    <rect
+      key={index}
+      x={cx - 2.2}
+      y={cy - 2.2}
+      width={4.4}
+      height={4.4}
+      fill="var(--paper)"
+      stroke="var(--rival)"
+      strokeWidth={1.2}
+    />
+  );
+}

@@ -1,0 +1,45 @@
+'use client';
+
+import { LOCALE } from '@/app/_lib/locale';
+/** What was understood from the table: one sentence, the chart and the months, and every problem. */
+import { createMonthFormat } from '@/lib/brief/month-words';
+import { MIN_MONTHS_TO_FIT } from '@/lib/series/limits';
+import type { MonthlySeries, SeriesReading } from '@/lib/series/types';
+import { HistoryFigure } from '../figures/history-figure';
+import { ProblemList } from './problem-list';
+import styles from './understood-step.module.css';
+
+interface UnderstoodStepProps {
+  reading: SeriesReading;
+  focalName: string;
+  rivalName: string;
+  unit: string;
+}
+
+export function UnderstoodStep({ reading, focalName, rivalName, unit }: UnderstoodStepProps) {
+  return (
+    <div>
+      <p className={styles.summary} aria-live="polite">
+        {reading.series ? describeSeries(reading.series) : 'Nothing could be read as counts yet.'}
+      </p>
+      {reading.series ? (
+        <HistoryFigure series={reading.series} focalName={focalName} rivalName={rivalName} unit={unit} />
+      ) : null}
+      <ProblemList problems={reading.problems} />
+    </div>
+  );
+}
+
+function describeSeries({ firstMonth, focal, rival }: MonthlySeries): string {
+  const months = createMonthFormat(LOCALE);
+  const length = focal.length;
+  const last = firstMonth + length - 1;
+  const known = focal.filter((count, index) => count !== null && rival[index] !== null).length;
+  const span =
+    length === 1
+      ? `One month, ${months.long(last)}`
+      : `${length} months, ${months.long(firstMonth)} to ${months.long(last)}`;
+  const complete = known === length ? 'both firms known in each' : `both firms known in ${known}`;
+  const enough = known < MIN_MONTHS_TO_FIT ? ` A fit needs ${MIN_MONTHS_TO_FIT}.` : '';
+  return `${span}; ${complete}.${enough}`;
+}
