@@ -15,11 +15,15 @@ import { MAX_PASSWORD_LENGTH, MIN_PASSWORD_LENGTH } from './forms';
 const SESSION_SECONDS = 30 * 24 * 60 * 60;
 
 type Auth = ReturnType<typeof createAuth>;
-let auth: Auth | null = null;
+
+/** One for each pool; there is one pool a process. */
+const auths = new WeakMap<object, Auth>();
 
 /** Made on first use, so that a build needs neither settings nor a database. */
 export function getAuth(): Auth {
-  auth ??= createAuth();
+  const prisma = getPrisma();
+  const auth = auths.get(prisma) ?? createAuth();
+  auths.set(prisma, auth);
   return auth;
 }
 

@@ -30,7 +30,8 @@ export interface Try {
   subject: string;
 }
 
-const limiters = new Map<TryKind, RateLimiterPrisma>();
+/** For each pool; there is one pool a process. */
+const limiters = new WeakMap<object, Map<TryKind, RateLimiterPrisma>>();
 
 /** Counts the tries; false when one of them is one too many. */
 export async function countTries(tries: Try[]): Promise<boolean> {
@@ -60,17 +61,16 @@ async function countTry({ kind, subject }: Try): Promise<boolean> {
 }
 
 function getLimiter(kind: TryKind): RateLimiterPrisma {
-  let limiter = limiters.get(kind);
-  if (!limiter) {
-    limiter = new RateLimiterPrisma({
-      storeClient: getPrisma(),
-      tableName: 'rateLimit',
-      keyPrefix: kind,
-      ...TRY_LIMITS[kind],
-    });
-    limiters.set(kind, limiter);
-  }
+  const storeClient = getPrisma();
+  const ofPool = limiters.get(storeClient) ?? new Map<TryKind, RateLimiterPrisma>();
+  limiters.set(storeClient, ofPool);
+  const limiter = ofPool.get(kind) ?? createLimiter(kind, storeClient);
+  ofPool.set(kind, limiter);
   return limiter;
+}
+
+function createLimiter(kind: TryKind, storeClient: object): RateLimiterPrisma {
+  return new RateLimiterPrisma({ storeClient, tableName: 'rateLimit', keyPrefix: kind, ...TRY_LIMITS[kind] });
 }
 
 /** E-mail and network addresses are personal data: the table holds only their hash. */
