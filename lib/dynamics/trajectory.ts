@@ -65,8 +65,10 @@ export interface Trajectory {
  */
 export function createTrajectory(grid: TrajectoryGrid): Trajectory {
   const { months, entry1, entry2 } = grid;
-  if (!(Number.isInteger(months) && months >= 1)) throw new RangeError(`months must be a positive integer, got ${months}`);
-  if (!(Math.min(entry1, entry2) === 0)) throw new RangeError(`one firm must enter in month 0, got ${entry1} and ${entry2}`);
+  if (!(Number.isInteger(months) && months >= 1))
+    throw new RangeError(`months must be a positive integer, got ${months}`);
+  if (!(Math.min(entry1, entry2) === 0))
+    throw new RangeError(`one firm must enter in month 0, got ${entry1} and ${entry2}`);
 
   const logLevel1 = new Float64Array(months);
   const logLevel2 = new Float64Array(months);
@@ -339,7 +341,13 @@ function enter(tangent: Float64Array, row: number, level: number): void {
 }
 
 /** d ln N / d theta from the scaled tangents: ln N_i = ln K_i + ln x_i and ln x_i(start) = ln N_i(start) - ln K_i. */
-function writeLogSensitivities(tangent: Float64Array, row: number, inverseLevel: number, out: Float64Array, to: number): void {
+function writeLogSensitivities(
+  tangent: Float64Array,
+  row: number,
+  inverseLevel: number,
+  out: Float64Array,
+  to: number,
+): void {
   const startX = tangent[8 + row] * inverseLevel;
   const startY = tangent[10 + row] * inverseLevel;
   const own = inverseLevel === 0 ? 0 : 1;

@@ -23,7 +23,12 @@ export type Odds = z.infer<typeof oddsSchema>;
 export const bandsSchema = z.object({ q05: row, q25: row, q50: row, q75: row, q95: row });
 export type Bands = z.infer<typeof bandsSchema>;
 
-export const seriesBandsSchema = z.object({ focal: bandsSchema, rival: bandsSchema, total: bandsSchema, share: bandsSchema });
+export const seriesBandsSchema = z.object({
+  focal: bandsSchema,
+  rival: bandsSchema,
+  total: bandsSchema,
+  share: bandsSchema,
+});
 export type SeriesBands = z.infer<typeof seriesBandsSchema>;
 
 /** Median and 90 % interval. null stands for "runs off to infinity / not identified". */
@@ -123,10 +128,17 @@ export type Diagnostics = z.infer<typeof diagnosticsSchema>;
 
 /** The best single point, natural units. */
 export const pointFitSchema = z.object({
-  r1: z.number(), r2: z.number(), k1: z.number(), k2: z.number(), alpha: z.number(), beta: z.number(),
-  n1Start: z.number(), n2Start: z.number(),
+  r1: z.number(),
+  r2: z.number(),
+  k1: z.number(),
+  k2: z.number(),
+  alpha: z.number(),
+  beta: z.number(),
+  n1Start: z.number(),
+  n2Start: z.number(),
   /** Users at the last observed month on the fitted path. */
-  n1Last: z.number(), n2Last: z.number(),
+  n1Last: z.number(),
+  n2Last: z.number(),
 });
 export type PointFit = z.infer<typeof pointFitSchema>;
 

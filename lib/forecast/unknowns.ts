@@ -1,0 +1,83 @@
+/**
+ * What the data cannot tell: named facts, each from a stated threshold. `lib/brief` says them in words.
+ */
+import type { Fit } from '../estimate/fit-run';
+import type { FirmObservations } from '../estimate/observations';
+import { CONSTANT_SUM_SPREAD } from '../series/limits';
+import type { FitReport, ParameterRow, Unknown } from './report';
+
+/** Fewer months than this are a short series (common practice: two years). */
+export const SHORT_SERIES_MONTHS = 24;
+/** A saturation level whose prior variance shrank by less than this share is a guess. */
+export const UNSEEN_SATURATION_BELOW = 0.5;
+/** A coefficient whose 90 % interval spans a larger factor is not identified; its prior's spans a factor of about 14. */
+export const UNIDENTIFIED_FACTOR = 6;
+/** A median further than this from the prior mean, in prior sd, is a conflict. */
+export const CONFLICT_SDS = 2;
+/** Month-to-month correlation of the errors above which the months are fewer than they look. */
+export const STRONG_PERSISTENCE = 0.7;
+/** A firm whose largest count is in this first share of its months and that has lost the second share since only falls. */
+const EARLY_SHARE = 0.2;
+const FALL_SHARE = 0.2;
+
+export function listUnknowns(
+  fit: Fit,
+  rows: readonly ParameterRow[],
+  errors: FitReport['errors'],
+): Unknown[] {
+  const row = (id: ParameterRow['id']) => rows.find((candidate) => candidate.id === id)!;
+  const unknowns: Unknown[] = [];
+  const add = (code: Unknown['code'], firm: 1 | 2 | null = null, parameter: string | null = null) => {
+    unknowns.push({ code, firm, parameter });
+  };
+  if (fit.status === 'not-converged') add('not-converged');
+  if (fit.observations.months < SHORT_SERIES_MONTHS) add('short-series');
+  if (hasConstantSum(fit.observations.firms)) add('share-only');
+  for (const firm of [1, 2] as const) {
+    const observed = fit.observations.firms[firm - 1];
+    const saturation = row(`k${firm}`);
+    const coefficient = row(firm === 1 ? 'alpha' : 'beta');
+    if (observed.entry > 0) add('late-launch', firm);
+    if (onlyFalls(observed)) add('flat-incumbent', firm, saturation.id);
+    else if (saturation.contraction < UNSEEN_SATURATION_BELOW) add('saturation-unseen', firm, saturation.id);
+    if (
+      coefficient.posterior.q95 > UNIDENTIFIED_FACTOR * coefficient.posterior.q05 &&
+      !isClearlyWeak(coefficient)
+    ) {
+      add('competition-unidentified', firm, coefficient.id);
+    }
+    const persistence = firm === 1 ? errors.persistenceFocal : errors.persistenceRival;
+    if (persistence.q50 > STRONG_PERSISTENCE) add('persistent-errors', firm);
+  }
+  for (const id of ['r1', 'r2', 'k1', 'k2'] as const) {
+    const { meanLog, sdLog } = fit.priors.parameters[id];
+    const distance = Math.abs(Math.log(row(id).posterior.q50) - meanLog);
+    if (distance > CONFLICT_SDS * sdLog) add('prior-conflict', id.endsWith('1') ? 1 : 2, id);
+  }
+  return unknowns;
+}
+
+/** A coefficient that is surely small spans a large factor on the way to 0 and is still known for what it is. */
+function isClearlyWeak(row: ParameterRow): boolean {
+  return row.posterior.q95 < 0.5;
+}
+
+function onlyFalls({ logCounts }: FirmObservations): boolean {
+  let top = 0;
+  for (let k = 1; k < logCounts.length; k++) if (logCounts[k] > logCounts[top]) top = k;
+  const fallen = 1 - Math.exp(logCounts[logCounts.length - 1] - logCounts[top]);
+  return top <= EARLY_SHARE * (logCounts.length - 1) && fallen >= FALL_SHARE;
+}
+
+/** Months known of both firms whose counts add to a constant: a split of a fixed whole. */
+function hasConstantSum([focal, rival]: readonly [FirmObservations, FirmObservations]): boolean {
+  const rivalAt = new Map(Array.from(rival.months, (month, k) => [month, rival.logCounts[k]]));
+  const sums: number[] = [];
+  focal.months.forEach((month, k) => {
+    const other = rivalAt.get(month);
+    if (other !== undefined) sums.push(Math.exp(focal.logCounts[k]) + Math.exp(other));
+  });
+  if (sums.length < 2) return false;
+  const largest = Math.max(...sums);
+  return largest - Math.min(...sums) <= CONSTANT_SUM_SPREAD * largest;
+}
