@@ -9,7 +9,8 @@ export type MigrationEnd =
   | { code: 'half-applied'; name: string; reason: string | null };
 
 /**
- * Applies what the database lacks; a database that is up to date is left alone.
+ * Applies what the database lacks; a database that is up to date is left alone. On a server, a second process waits
+ * until the first has ended. The embedded database cannot make it wait; there, only the launcher migrates.
  * @param url connection string of a PostgreSQL database
  * @throws Error when the database cannot be reached
  */
@@ -18,8 +19,6 @@ export async function applyMigrations(
   migrationsList: MigrationList = readMigrations(),
 ): Promise<MigrationEnd> {
   return withDatabase(url, async (engine) => {
-    const before = await findHalfApplied(engine, migrationsList);
-    if (before !== null) return { code: 'half-applied', name: before, reason: null };
     try {
       const { appliedMigrationNames } = await engine.applyMigrations({ migrationsList, filters: NO_FILTER });
       return { code: 'migrated', applied: appliedMigrationNames };

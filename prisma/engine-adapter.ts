@@ -26,6 +26,9 @@ const CHAR_COLUMNS = [
   { selected: 'con.confupdtype', name: 'confupdtype' },
 ];
 
+/** The engine's lock against a second migration at the same time belongs to one connection, which must stay. */
+const ONE_CONNECTION = { max: 1, idleTimeoutMillis: 0 };
+
 /** Where the engine finds the database itself and, each time it asks, a fresh empty one: connection strings. */
 export interface EngineDatabases {
   database: () => Promise<string>;
@@ -41,7 +44,7 @@ export interface EngineAdapter {
 export function createEngineAdapter(databases: EngineDatabases): EngineAdapter {
   const opened: PgAdapter[] = [];
   async function connect(url: string): Promise<SqlDriverAdapter> {
-    const adapter = await new PrismaPg({ connectionString: url }).connect();
+    const adapter = await new PrismaPg({ connectionString: url, ...ONE_CONNECTION }).connect();
     opened.push(adapter);
     sendScriptsWhole(adapter);
     readCharColumns(adapter);

@@ -15,8 +15,11 @@ export async function findSchemaDifference(
   migrationsList: MigrationList = readMigrations(),
   schema = readSchema(),
 ): Promise<string | null> {
-  return withEmptyDatabases((start) =>
-    withSchemaEngine({ database: start, emptyDatabase: start }, schema, async (engine) => {
+  const embedded = await startEmbedded({ dataFolder: null, socketFolder: null });
+  // The engine wants a database of its own and an empty one to try the migrations in; it leaves its own alone.
+  const connect = async () => embedded.url;
+  try {
+    return await withSchemaEngine({ database: connect, emptyDatabase: connect }, schema, async (engine) => {
       const difference = await engine.diff({
         from: { tag: 'migrations', ...migrationsList },
         to: { tag: 'schemaDatamodel', ...schema },
@@ -25,19 +28,8 @@ export async function findSchemaDifference(
         filters: NO_FILTER,
       });
       return difference.exitCode === DIFFERENT ? difference.stdout : null;
-    }),
-  );
-}
-
-async function withEmptyDatabases<T>(work: (start: () => Promise<string>) => Promise<T>): Promise<T> {
-  const started: Awaited<ReturnType<typeof startEmbedded>>[] = [];
-  try {
-    return await work(async () => {
-      const embedded = await startEmbedded({ dataFolder: null, socketFolder: null });
-      started.push(embedded);
-      return embedded.url;
     });
   } finally {
-    await Promise.all(started.map((embedded) => embedded.stop()));
+    await embedded.stop();
   }
 }
