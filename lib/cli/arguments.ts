@@ -1,0 +1,128 @@
+/**
+ * The words of the command line -> what to do. Nothing is run here.
+ */
+import { parseArgs } from 'node:util';
+import Papa from 'papaparse';
+import { DEFAULT_FIT_OPTIONS } from '../estimate/defaults';
+import type { DateOrder, DecimalMark } from '../series/types';
+
+export interface ForecastRequest {
+  file: string;
+  /** Headers of the month, the focal firm and the rival; null: guess them. */
+  columns: [string, string, string] | null;
+  decimalMark?: DecimalMark;
+  dateOrder?: DateOrder;
+  horizonMonths: number;
+  seed: number;
+}
+
+export type Command =
+  | { kind: 'help' }
+  | { kind: 'version' }
+  | { kind: 'forecast'; request: ForecastRequest }
+  | { kind: 'not-understood'; reason: string };
+
+/** Longest forecast: ten years. Beyond it the bands say nothing. */
+export const MAX_HORIZON_MONTHS = 120;
+
+/** Seeds are 32-bit. */
+export const MAX_SEED = 2 ** 32 - 1;
+
+const OPTIONS = {
+  columns: { type: 'string' },
+  'decimal-mark': { type: 'string' },
+  'date-order': { type: 'string' },
+  months: { type: 'string' },
+  seed: { type: 'string' },
+  json: { type: 'boolean' },
+  help: { type: 'boolean', short: 'h' },
+  version: { type: 'boolean' },
+} as const;
+
+export function readArguments(args: readonly string[]): Command {
+  try {
+    const { values, positionals } = parseArgs({ args: [...args], options: OPTIONS, allowPositionals: true });
+    if (values.help || (positionals[0] === 'help' && positionals.length === 1)) return { kind: 'help' };
+    if (values.version) return { kind: 'version' };
+    return readForecast(values, positionals);
+  } catch (error) {
+    if (isArgumentError(error)) return { kind: 'not-understood', reason: firstSentence(error.message) };
+    throw error;
+  }
+}
+
+/** True when `--json` was asked for, even where the rest of the command is not understood. */
+export function wantsJson(args: readonly string[]): boolean {
+  const end = args.indexOf('--');
+  return args.slice(0, end < 0 ? args.length : end).includes('--json');
+}
+
+type Values = Partial<Record<'columns' | 'decimal-mark' | 'date-order' | 'months' | 'seed', string>>;
+
+function readForecast(values: Values, [command, file, ...more]: string[]): Command {
+  if (command === undefined) return notUnderstood('Say what to do: elbowroom forecast FILE.');
+  if (command !== 'forecast') return notUnderstood(`There is no command “${command}”; there is “forecast”.`);
+  if (file === undefined) return notUnderstood('Name a file: elbowroom forecast FILE.');
+  if (more.length > 0) return notUnderstood(`One file at a time; “${more[0]}” is too much.`);
+
+  const columns = values.columns === undefined ? null : splitColumns(values.columns);
+  if (columns?.length !== 3 && columns !== null) {
+    return notUnderstood(
+      '--columns takes three headers: month,focal,rival. Put one that holds a comma into double quotes.',
+    );
+  }
+  const horizonMonths = readInteger(values.months, DEFAULT_FIT_OPTIONS.horizonMonths, 1, MAX_HORIZON_MONTHS);
+  if (horizonMonths === null)
+    return notUnderstood(`--months takes a whole number from 1 to ${MAX_HORIZON_MONTHS}.`);
+  const seed = readInteger(values.seed, DEFAULT_FIT_OPTIONS.seed, 0, MAX_SEED);
+  if (seed === null) return notUnderstood(`--seed takes a whole number from 0 to ${MAX_SEED}.`);
+  const decimalMark = values['decimal-mark'];
+  if (!isOneOf(decimalMark, ['point', 'comma'])) return notUnderstood('--decimal-mark takes point or comma.');
+  const dateOrder = values['date-order'];
+  if (!isOneOf(dateOrder, ['day-first', 'month-first']))
+    return notUnderstood('--date-order takes day-first or month-first.');
+
+  const request = {
+    file,
+    columns: columns as ForecastRequest['columns'],
+    decimalMark,
+    dateOrder,
+    horizonMonths,
+    seed,
+  };
+  return { kind: 'forecast', request };
+}
+
+function notUnderstood(reason: string): Command {
+  return { kind: 'not-understood', reason };
+}
+
+/** Headers may hold commas inside quotes, as in the file itself. */
+function splitColumns(text: string): string[] {
+  const [cells = []] = Papa.parse<string[]>(text, { delimiter: ',' }).data;
+  return cells.map((cell) => cell.trim());
+}
+
+function readInteger(
+  text: string | undefined,
+  otherwise: number,
+  lowest: number,
+  highest: number,
+): number | null {
+  if (text === undefined) return otherwise;
+  const value = Number(text);
+  return /^\d+$/.test(text) && value >= lowest && value <= highest ? value : null;
+}
+
+function isOneOf<T extends string>(text: string | undefined, words: readonly T[]): text is T | undefined {
+  return text === undefined || (words as readonly string[]).includes(text);
+}
+
+function isArgumentError(error: unknown): error is Error {
+  return error instanceof Error && 'code' in error && String(error.code).startsWith('ERR_PARSE_ARGS');
+}
+
+/** Node's messages go on with advice for programmers. */
+function firstSentence(message: string): string {
+  return `${message.split(/\.(?:\s|$)|\n/)[0]}.`;
+}
