@@ -78,8 +78,8 @@ async function driveRun(claim: ClaimedFit, tools: FitJobTools): Promise<FitJobEn
   }
 }
 
-async function store(claim: ClaimedFit, step: OutlookStep & { done: true }): Promise<FitJobEnd> {
-  if ('failure' in step) return fail(claim, step.failure as FailureCode);
+async function store(claim: ClaimedFit, step: Extract<OutlookStep, { done: true }>): Promise<FitJobEnd> {
+  if ('failure' in step) return fail(claim, step.failure);
   const report = runEngine(() => fitReportSchema.parse(step.report));
   const draws = runEngine(() => thinDraws(step.draws, STORED_DRAWS));
   if (await finishFit(claim, { report, draws })) return 'done';
