@@ -78,7 +78,7 @@ function kindWhenAlone(pressureOnNewcomer: number): EquilibriumKind {
 /** The second root comes from the product of the two, pq (1 - alpha beta), so that it does not suffer from cancellation. */
 function sharedEigenvalues(p: number, q: number, alphaBeta: number): readonly [number, number] {
   const fast = -(p + q + Math.sqrt((p - q) ** 2 + 4 * p * q * alphaBeta)) / 2;
-  return [fast, (p * q * (1 - alphaBeta)) / fast];
+  return sortPair(fast, (p * q * (1 - alphaBeta)) / fast);
 }
 
 function sortPair(a: number, b: number): readonly [number, number] {

@@ -14,9 +14,9 @@ import { type CompetitionSystem, type State, toCrowdingForm } from './system';
 
 export type ForcedStatus = 'complete' | 'not-finite' | 'too-many-steps';
 
-/** Error allowed in one step, as a share of the level, and of K for a firm near zero. Far below what a chart or a score can show. */
-export const FORCED_RELATIVE_TOLERANCE = 1e-6;
-const FORCED_ABSOLUTE_SHARE = 1e-10;
+/** Error allowed in one step as a share of the level, far below what a chart or a score can show; the share of K only guards a firm at 0. */
+export const FORCED_RELATIVE_TOLERANCE = 1e-7;
+const FORCED_ABSOLUTE_SHARE = 1e-16;
 /** Steps in one segment of at most a month before the path is given up: parameters far outside anything a market shows. */
 const MAX_STEPS_PER_SEGMENT = 5_000;
 /** Coefficients in force at one stage. */

@@ -19,6 +19,8 @@ export interface IntegrateOptions {
   /** Same unit as y; one number for all components, or one for each. */
   absoluteTolerance: number | ArrayLike<number>;
   maxSteps: number;
+  /** Length of the first trial step; null lets the slope at the start decide. */
+  firstStep: number | null;
   /** Keep what `evaluateAt` needs. */
   isDense: boolean;
   /** Looked at after every accepted step; true ends the run there. */
@@ -29,6 +31,7 @@ export const DEFAULT_INTEGRATE_OPTIONS: Readonly<IntegrateOptions> = {
   relativeTolerance: 1e-9,
   absoluteTolerance: 1e-12,
   maxSteps: 10_000,
+  firstStep: null,
   isDense: false,
   shouldStop: null,
 };
@@ -127,7 +130,7 @@ class IntegrationRun {
     this.h = 0;
     if (!isFiniteVector(this.k[0]) || !isFiniteVector(this.y)) this.status = 'not-finite';
     else if (t0 === tEnd) this.status = 'reached-end';
-    else this.h = this.firstStep();
+    else this.h = this.direction * (settings.firstStep ?? this.guessFirstStep());
   }
 
   /** One trial step. */
@@ -213,7 +216,7 @@ class IntegrationRun {
   }
 
   /** First step after Hairer, Norsett & Wanner, section II.4: a Euler step changes y by 1 % and its error is in the tolerance. */
-  private firstStep(): number {
+  private guessFirstStep(): number {
     const { k, y, y1, n } = this;
     const span = Math.abs(this.tEnd - this.t);
     const size = this.scaledNorm(y);
@@ -227,7 +230,7 @@ class IntegrationRun {
     const steepest = Math.max(slope, curvature);
     const byError = steepest > 1e-15 ? (0.01 / steepest) ** 0.2 : Math.max(1e-6, guess * 1e-3);
     const h = Math.min(100 * guess, byError, span);
-    return this.direction * (Number.isFinite(h) ? h : guess);
+    return Number.isFinite(h) ? h : guess;
   }
 
   private scaledNorm(values: Float64Array): number {

@@ -2,7 +2,7 @@
  * The separatrix of a market in which the head start decides (alpha > 1, beta > 1): the stable manifold of the shared saddle. It is a
  * rising curve from (0, 0) through the saddle outwards. Below it (more of firm 1) firm 1 ends alone, above it firm 2.
  *
- * Traced from the saddle backwards in time, in scaled time and state x = N1/K1, y = N2/K2, from a point a small way along the stable
+ * Traced from the saddle backwards in time, in scaled state x = N1/K1, y = N2/K2, from a point a small way along the stable
  * eigenvector v to either side. With p = x*, q = rho y* and the stable eigenvalue m of [[-p, -alpha x*], [-rho beta y*, -q]]:
  *
  *   v = (alpha x*, -p - m)       both components positive, since m < -p
@@ -106,7 +106,8 @@ export function sideOfSeparatrix(system: CompetitionSystem, state: State): Separ
   };
   const run = integrate((_, y, out) => fillGrowth(system, y, out), 0, state, MAX_SCALED_TIME / system.r1, {
     relativeTolerance: SIDE_TOLERANCE,
-    absoluteTolerance: [SIDE_TOLERANCE * system.k1 * 1e-6, SIDE_TOLERANCE * system.k2 * 1e-6],
+    // Relative alone: how far behind a firm is may hang on its last digits while it is still small.
+    absoluteTolerance: 0,
     shouldStop: (_, y) => readSide(y) !== 'onSeparatrix',
   });
   return readSide(run.y);
@@ -153,7 +154,7 @@ function follow(
 ): Integration {
   const [vx, vy] = stableDirection(system, saddle);
   const start = [saddle[0] + sign * FIRST_DISTANCE * vx, saddle[1] + sign * FIRST_DISTANCE * vy];
-  return integrate(scaledGrowth(system), 0, start, -MAX_SCALED_TIME, {
+  return integrate(slowedGrowth(system), 0, start, -MAX_SCALED_TIME, {
     relativeTolerance: TRACE_TOLERANCE,
     absoluteTolerance: 0,
     isDense: true,
@@ -174,11 +175,16 @@ function followOutwards(system: CompetitionSystem, saddle: State, frame: State):
   return follow(system, saddle, 1, (_, at) => at[0] >= frame[0] || at[1] >= frame[1]);
 }
 
-function scaledGrowth(system: CompetitionSystem): RightHandSide {
+/**
+ * Scaled growth on a clock that slows down far out, dt' = (1 + x + y) dt: the curve is the same, and going backwards no longer
+ * reaches infinity in finite time.
+ */
+function slowedGrowth(system: CompetitionSystem): RightHandSide {
   const { rho, alpha, beta } = toScaledSystem(system);
   return (_, state, out) => {
-    out[0] = state[0] * (1 - state[0] - alpha * state[1]);
-    out[1] = rho * state[1] * (1 - state[1] - beta * state[0]);
+    const slowing = 1 / (1 + state[0] + state[1]);
+    out[0] = slowing * state[0] * (1 - state[0] - alpha * state[1]);
+    out[1] = slowing * rho * state[1] * (1 - state[1] - beta * state[0]);
   };
 }
 
