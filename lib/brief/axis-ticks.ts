@@ -29,6 +29,11 @@ export function axisFromZero(max: number, spell: (value: number) => string, want
   return { domain: [0, count * step], ticks: stepTicks(0, count, step, spell) };
 }
 
+/** Ticks of a round axis from 0 that do not pass `max`. */
+export function ticksUpTo(max: number, spell: (value: number) => string): Tick[] {
+  return axisFromZero(max, spell).ticks.filter((tick) => tick.value <= max * (1 + 1e-9));
+}
+
 /** A round axis around zero that holds `low` and `high`. */
 export function axisAroundZero(
   low: number,

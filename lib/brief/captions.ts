@@ -4,6 +4,7 @@ import { spellOdds } from './odds-strip';
 import { decideOutcome, subjectOutcome } from './outcomes';
 import { capitalise, joinSentences, possessive, sentence } from './text';
 import type { PhaseMap, Sentence } from './types';
+import { spellShare } from './verdict-support';
 import { type FirmRole, horizonMonthOf, intervalAt, type Words } from './words';
 
 /** Which numbers of the users view leave the figure at its top. */
@@ -32,10 +33,7 @@ export function captionShare(words: Words): Sentence {
   const last = intervalAt(share, share.q50.length - 1);
   return joinSentences([
     sentence(`${possessive(words.focal)} part of both firms’ ${words.facts.market.unit}. ${bandKey()}`),
-    sentence(
-      `By ${words.months.long(horizonMonthOf(words))} it is near ${words.numbers.chance(last.q50)} ` +
-        `(90\u00a0% interval ${words.numbers.chanceInterval(last)}).`,
-    ),
+    sentence(`By ${words.months.long(horizonMonthOf(words))} it is ${spellShare(words, last)}.`),
     ...errorSentences(words),
   ]);
 }
@@ -137,7 +135,7 @@ export function captionOddsMap(words: Words): Sentence {
     `Each dot is one pair of strengths that fits the history; 100\u00a0% is all of the other’s room. ` +
     `Left of the upright line ${words.rival} leaves ${words.focal} some room; below the level line ${words.focal} leaves ${words.rival} some.`;
   const where = decided
-    ? `${spelt[decided]} of the draws lie in the shaded quarter, ${subjectOutcome(words, decided)}.`
+    ? `The shaded quarter, ${subjectOutcome(words, decided)}, holds ${spelt[decided]} of the draws.`
     : 'No quarter holds two thirds of the draws.';
   return joinSentences([sentence(key), sentence(where)]);
 }

@@ -68,7 +68,7 @@ function describeNearDestination(words: Words): MilestoneRow {
     label: 'Within 5\u00a0% of the destination',
     value,
     chance,
-    sentence: sentence(`The market comes within 5\u00a0% of where it is heading: ${value} (${chance}).`),
+    sentence: sentence(`The market comes within 5\u00a0% of where it is heading ${value}; ${chance}.`),
   };
 }
 
@@ -91,8 +91,7 @@ function spellTime(words: Words, milestone: Milestone): string {
   const { monthsAhead, chance } = milestone;
   if (!monthsAhead) return chance < 0.01 ? 'no sign of it' : 'may never come';
   const when = `${words.months.when(monthsAhead, words.lastMonth)} (${words.months.interval(monthsAhead, words.lastMonth)})`;
-  if (chance > 0.99) return when;
-  if (chance > LIKELY_ABOVE) return `${when}, or never`;
+  if (chance > LIKELY_ABOVE) return when;
   return `may never come; if it does, ${when}`;
 }
 

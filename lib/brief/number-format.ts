@@ -1,6 +1,6 @@
 /**
  * Numbers for reading. Rounding is honest: a number shows the digits that its 90 % interval supports (the rounding step is at most a
- * fifth of the interval's width, and one significant digit always stays), a chance or a forecast share is never shown as certain
+ * quarter of the interval's width, and one significant digit always stays), a chance or a forecast share is never shown as certain
  * ("<1 %", ">99 %"), zero has no sign. What is not finite is a caller's mistake and throws.
  */
 import {
@@ -30,6 +30,8 @@ export interface NumberFormat {
   seenShare(fraction: number): string;
   /** Difference of shares in points with its sign: "−4 points", "+0.5 points", "about 0 points". */
   points(fraction: number, width?: Width): string;
+  /** The same without its sign: "4 points". */
+  pointsSize(fraction: number, width?: Width): string;
   /** "−6 to −2 points". */
   pointsInterval(width: Width): string;
   /** A fraction as percent, any size: "62 %". */
@@ -61,16 +63,17 @@ export function createNumberFormat(locale: string): NumberFormat {
   };
 }
 
-function usersFormat({ spell, spellRange }: StepSpeller) {
+function usersFormat({ spell }: StepSpeller) {
   const exponent = (value: number, width?: Width) => Math.max(0, stepExponent(value, width));
-  const users = (value: number, width?: Width) => {
-    if (value > 0 && value < 0.5) return `<${spell(1, 0)}`;
-    return spell(value, exponent(value, width), 0);
-  };
+  const spellUsers = (value: number, step: number) =>
+    value > 0 && value < 0.5 ? `<${spell(1, 0)}` : spell(value, step, 0);
   return {
-    users,
-    usersInterval: (width: Width) =>
-      width.q95 < 0.5 ? users(width.q95) : spellRange(width.q05, width.q95, exponent(0, width), 0),
+    users: (value: number, width?: Width) => spellUsers(value, exponent(value, width)),
+    usersInterval: (width: Width) => {
+      const step = exponent(0, width);
+      const [low, high] = [spellUsers(width.q05, step), spellUsers(width.q95, step)];
+      return low === high ? low : `${low} to ${high}`;
+    },
     usersDifference: (value: number, width?: Width) => {
       if (value !== 0 && Math.abs(value) < 0.5) return 'about 0';
       return withSign(spell(value, exponent(value, width), 0));
@@ -103,24 +106,23 @@ function pointsFormat({ spell, spellRange }: StepSpeller) {
     if (!width) return Math.abs(percent) < 1 ? POINTS_FINEST : 0;
     return Math.max(POINTS_FINEST, Math.min(0, stepExponent(percent, width)));
   };
+  const spellPoints = (fraction: number, width: Width | undefined, decorate: (text: string) => string) => {
+    const percent = fraction * 100;
+    if (percent === 0) return `${spell(0, 0)}${UNIT_SPACE}points`;
+    const text = spell(percent, exponent(percent, width && scaleWidth(width, 100)), POINTS_FINEST);
+    if (isZero(text)) return `about 0${UNIT_SPACE}points`;
+    const isOne = text === spell(1, 0) || text === spell(-1, 0);
+    return `${decorate(text)}${UNIT_SPACE}${isOne ? 'point' : 'points'}`;
+  };
   return {
-    points: (fraction: number, width?: Width) => {
-      const percent = fraction * 100;
-      if (percent === 0) return `${spell(0, 0)}${UNIT_SPACE}points`;
-      const text = spell(percent, exponent(percent, width && scaleWidth(width, 100)), POINTS_FINEST);
-      if (percent !== 0 && isZero(text)) return `about 0${UNIT_SPACE}points`;
-      const isOne = text === spell(1, 0) || text === spell(-1, 0);
-      return `${withSign(text)}${UNIT_SPACE}${isOne ? 'point' : 'points'}`;
-    },
+    points: (fraction: number, width?: Width) => spellPoints(fraction, width, withSign),
+    pointsSize: (fraction: number, width?: Width) =>
+      spellPoints(fraction, width, (text) => text.replace(MINUS, '')),
     pointsInterval: (width: Width) => {
       const percent = scaleWidth(width, 100);
       const step = exponent(0, percent);
-      if (
-        isZero(spell(percent.q05, step, POINTS_FINEST)) &&
-        isZero(spell(percent.q95, step, POINTS_FINEST))
-      ) {
-        return `about 0${UNIT_SPACE}points`;
-      }
+      const isNothing = [percent.q05, percent.q95].every((end) => isZero(spell(end, step, POINTS_FINEST)));
+      if (isNothing) return `about 0${UNIT_SPACE}points`;
       return `${spellRange(percent.q05, percent.q95, step, POINTS_FINEST, withSign)}${UNIT_SPACE}points`;
     },
   };
@@ -156,8 +158,10 @@ function isZero(text: string): boolean {
   return !/[1-9]/.test(text);
 }
 
+/** "+4"; a number that rounds to 0 has neither sign nor decimals. */
 function withSign(text: string): string {
-  return text.startsWith(MINUS) || isZero(text) ? text : `+${text}`;
+  if (isZero(text)) return text.replace(MINUS, '').replace(/[.,]0+$/, '');
+  return text.startsWith(MINUS) ? text : `+${text}`;
 }
 
 const AXIS_UNITS: [number, string][] = [

@@ -94,7 +94,7 @@ function describeRoom(words: Words, firm: FirmRole, room: Interval): Description
     label: `Room that ${taker} takes from ${own}`,
     value: words.numbers.percent(room.q50, room),
     interval: spellRoomInterval(words, room).replace(/^from (?=\S+ to)/, ''),
-    meaning: `a full ${taker} takes ${spellRoomTaken(words, room)} ${possessive(own)} room`,
+    meaning: `a full ${taker} takes ${spellRoomTaken(words, room, possessive(own))}`,
   };
 }
 

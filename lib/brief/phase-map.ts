@@ -9,7 +9,7 @@
 import { type Equilibrium, findEquilibria } from '../dynamics/equilibria';
 import { traceSeparatrix } from '../dynamics/separatrix';
 import type { CompetitionSystem } from '../dynamics/system';
-import { axisFromZero } from './axis-ticks';
+import { axisFromZero, ticksUpTo } from './axis-ticks';
 import { captionPhaseMap } from './captions';
 import { buildDirections } from './direction-field';
 import { type Box, clipPolyline, clipSegment, isInside } from './map-geometry';
@@ -46,16 +46,14 @@ export function buildPhaseMap(words: Words): PhaseMap {
   const growthStops = buildGrowthStops(words, map.system, box);
   const separatrix = buildSeparatrix(map.system, box);
   const { cloud } = words.facts.report;
-  const xAxis = axisFromZero(box.x1, words.numbers.axis);
-  const yAxis = axisFromZero(box.y1, words.numbers.axis);
   const lines = growthStops.map((stop) => stop.points);
   const drawn: Omit<PhaseMap, 'caption' | 'table'> = {
     title: `Phase map: ${words.focal} across, ${words.rival} up`,
     xLabel: `${words.focal} users →`,
     yLabel: `${words.rival} users →`,
     domain: { x: [0, box.x1], y: [0, box.y1] },
-    xTicks: xAxis.ticks,
-    yTicks: yAxis.ticks,
+    xTicks: ticksUpTo(box.x1, words.numbers.axis),
+    yTicks: ticksUpTo(box.y1, words.numbers.axis),
     growthStops,
     equilibria: buildEquilibria(words, map).filter((one) => isInside(one.point, box)),
     pathSoFar: readPathSoFar(words.facts.series, words.months),

@@ -16,6 +16,9 @@ export function findParameter(words: Words, id: string): Interval {
   return row.posterior;
 }
 
+/** A part this close to 1 reads as "about all". */
+const ALL_WITHIN = 0.1;
+
 /** "anywhere from 40 to 210 % fits". */
 export function spellRoomRange(words: Words, id: 'alpha' | 'beta'): string {
   return `anywhere ${spellRoomInterval(words, findParameter(words, id))} fits`;
@@ -31,10 +34,11 @@ export function spellRoomInterval(words: Words, room: Interval): string {
   return `from ${words.numbers.percentInterval(room)}`;
 }
 
-/** "hardly any of", "about 60 % of", "all of", "all and more of (1.6 times)". */
-export function spellRoomTaken(words: Words, room: Interval): string {
-  if (room.q50 < NONE_BELOW) return 'hardly any of';
-  if (room.q50 <= 1) return `about ${words.numbers.percent(room.q50, room)} of`;
-  if (room.q50 > WITHOUT_BOUND_ABOVE) return 'many times all of';
-  return `all of (${words.numbers.number(room.q50, room)} times)`;
+/** "hardly any of Quillfern’s room", "about 60 % of ...", "all of ..., 1.6 times over". `whose` is a possessive. */
+export function spellRoomTaken(words: Words, room: Interval, whose: string): string {
+  if (room.q50 < NONE_BELOW) return `hardly any of ${whose} room`;
+  if (Math.abs(room.q50 - 1) <= ALL_WITHIN) return `about all of ${whose} room`;
+  if (room.q50 < 1) return `about ${words.numbers.percent(room.q50, room)} of ${whose} room`;
+  if (room.q50 > WITHOUT_BOUND_ABOVE) return `all of ${whose} room, many times over`;
+  return `all of ${whose} room, ${words.numbers.number(room.q50, room)} times over`;
 }

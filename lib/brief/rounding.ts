@@ -20,7 +20,7 @@ export interface StepSpeller {
 }
 
 /** Part of the interval's width that the rounding step may reach. */
-const STEP_OF_WIDTH = 0.2;
+const STEP_OF_WIDTH = 0.25;
 /** Digits shown when no interval says how many are supported. */
 export const DIGITS_WITHOUT_INTERVAL = 3;
 /** Most digits shown. */

@@ -43,15 +43,22 @@ export function writeUndecided(words: Words): Verdict {
   };
 }
 
+/** What leads; outcomes within LEVEL_WITHIN of the best are named together. */
 function leadingSentence(words: Words): Sentence {
   const { odds } = words.facts.report.outlook;
   const percents = spellOdds(words, odds);
-  const [first, second] = rankOutcomes(odds) as [Outcome, Outcome];
-  const [a, b] = [subjectOutcome(words, first), subjectOutcome(words, second)];
-  if (odds[first] - odds[second] < LEVEL_WITHIN) {
-    return sentence(`${capitalise(a)} (${percents[first]}) and ${b} (${percents[second]}) are about level.`);
+  const ranked = rankOutcomes(odds) as [Outcome, Outcome, Outcome, Outcome];
+  const level = ranked.filter((outcome) => odds[ranked[0]] - odds[outcome] < LEVEL_WITHIN);
+  if (level.length === ranked.length) return sentence('All four outcomes are about level.');
+  if (level.length > 1) {
+    const named = level.map((outcome) => `${subjectOutcome(words, outcome)} (${percents[outcome]})`);
+    return sentence(`${capitalise(listWords(named))} are about level.`);
   }
-  return sentence(`${capitalise(a)} leads with ${percents[first]}, ahead of ${b} with ${percents[second]}.`);
+  const [first, second] = ranked;
+  const [leader, next] = [subjectOutcome(words, first), subjectOutcome(words, second)];
+  return sentence(
+    `${capitalise(leader)} leads with ${percents[first]}, ahead of ${next} with ${percents[second]}.`,
+  );
 }
 
 /** Which coefficient may lie on either side of 1, and how wide it is. */

@@ -47,7 +47,12 @@ export const effectSchema = z.object({
     q50: z.number(),
     q95: z.number(),
   }),
-  /** First month after the worst from which the median difference stays within half a point of share; null: not within the horizon. */
+  /** Months that the difference was followed for; may reach beyond the horizon. */
+  followedMonths: z.number().int().positive(),
+  /**
+   * First month after the worst from which the median difference stays within half a point of share to the end of what was followed;
+   * null: it does not come back by then, or never left.
+   */
   backWithinHalfPointMonth: z.number().int().positive().nullable(),
   /** Half-life of return to the destination over draws, months; null when it cannot be told. */
   returnHalfLifeMonths: intervalSchema.nullable(),

@@ -279,13 +279,23 @@ function makeOutlook(o: SampleOptions, draws: Draw[], last: [number, number]): F
   };
 }
 
-function drawSet(draws: Draw[]): DrawSet {
-  const columns = ['r1', 'r2', 'k1', 'k2', 'alpha', 'beta', 'n1', 'n2'] as const;
+/** The columns of a draw set with AR(1) errors; the errors have no memory and are 0 in the last month. */
+function drawSet(draws: Draw[], o: SampleOptions): DrawSet {
+  const errors = {
+    size1: ERROR_SD,
+    size2: ERROR_SD,
+    persistence1: 0,
+    persistence2: 0,
+    residual1: 0,
+    residual2: 0,
+  };
+  const rows = draws.map((d) => ({ ...d, n1Start: o.n1Start, n2Start: o.n2Start, ...errors }));
+  const columns = Object.keys(rows[0]!) as (keyof (typeof rows)[number])[];
   return {
     errorModel: 'ar1',
     columns: [...columns],
-    count: draws.length,
-    values: draws.flatMap((d) => columns.map((column) => d[column])),
+    count: rows.length,
+    values: rows.flatMap((row) => columns.map((column) => row[column])),
   };
 }
 
@@ -360,5 +370,5 @@ export function makeSample(nameOrOptions: SampleName | SampleOptions): { facts: 
     revision: { number: 4, createdAt: '2026-01-08T09:00:00Z', fileName: 'northmere.csv' },
     report,
   };
-  return { facts, draws: drawSet(draws) };
+  return { facts, draws: drawSet(draws, o) };
 }

@@ -1,0 +1,71 @@
+/**
+ * Posterior draws made ready for scenarios: one system and start per draw, the month of the push counted from the last observed one, and
+ * the measurement errors of future counts, drawn once so that every scenario meets the same luck (common random numbers).
+ *
+ *   count(h) = level(h) exp(e(h)),   e(h) = phi e(h-1) + s sqrt(1 - phi^2) z(h),   e(0) the error in the last observed month
+ *
+ * Each draw has REPLICATES errors in antithetic pairs (z and -z), so that the quantiles of counts are smooth.
+ */
+import type { CompetitionSystem, State } from '../dynamics/system';
+import { readColumn } from '../estimate/draws';
+import type { DrawSet } from '../estimate/types';
+import { readDrawTable } from '../forecast/draw-table';
+import { createStream } from '../numeric/random';
+
+/** Errors per draw; even. */
+export const REPLICATES = 2;
+/** Stream of the seed for the errors of firm 1; firm 2 has the next. */
+const ERROR_STREAM = 40;
+
+export interface ScenarioDraws {
+  count: number;
+  systems: CompetitionSystem[];
+  /** Users in the last observed month. */
+  starts: State[];
+}
+
+export function readScenarioDraws(draws: DrawSet): ScenarioDraws {
+  const table = readDrawTable(draws);
+  const systems: CompetitionSystem[] = [];
+  const starts: State[] = [];
+  for (let i = 0; i < table.count; i++) {
+    systems.push({
+      r1: table.r1[i]!,
+      r2: table.r2[i]!,
+      k1: table.k1[i]!,
+      k2: table.k2[i]!,
+      alpha: table.alpha[i]!,
+      beta: table.beta[i]!,
+    });
+    starts.push([table.n1[i]!, table.n2[i]!]);
+  }
+  return { count: table.count, systems, starts };
+}
+
+/**
+ * Factors exp(e(h)) of one firm's counts, month-major: month h (1 .. months), draw i, replicate k is at
+ * ((h - 1) count + i) REPLICATES + k.
+ */
+export function drawErrorFactors(draws: DrawSet, firm: 1 | 2, months: number, seed: number): Float64Array {
+  const size = readColumn(draws, `size${firm}`);
+  const persistence = readColumn(draws, `persistence${firm}`);
+  const residual = readColumn(draws, `residual${firm}`);
+  const stream = createStream(seed, ERROR_STREAM + firm - 1);
+  const factors = new Float64Array(months * draws.count * REPLICATES);
+  for (let i = 0; i < draws.count; i++) {
+    const phi = persistence[i]!;
+    const fresh = size[i]! * Math.sqrt(1 - phi * phi);
+    for (let pair = 0; pair < REPLICATES; pair += 2) {
+      let carried = residual[i]!;
+      let noise = 0;
+      for (let h = 0; h < months; h++) {
+        carried *= phi;
+        noise = phi * noise + fresh * stream.normal();
+        const at = (h * draws.count + i) * REPLICATES + pair;
+        factors[at] = Math.exp(carried + noise);
+        factors[at + 1] = Math.exp(carried - noise);
+      }
+    }
+  }
+  return factors;
+}
