@@ -1,4 +1,5 @@
 /** Sentences for whoever migrates: what happened, why, and what to do. They never show a password. */
+import { describePlace } from './launch/database-place.mjs';
 
 export function explainHalfApplied(name: string, reason: string | null): string {
   const why = reason === null ? '' : ` (${reason})`;
@@ -15,14 +16,4 @@ export function explainFailure(url: string, error: unknown): string {
     `The database at ${describePlace(url)} could not be migrated: ${first}. ` +
     'Check that it runs and that DATABASE_URL names a user who may create tables.'
   );
-}
-
-/** Host, port and database of a connection string. */
-export function describePlace(url: string): string {
-  try {
-    const { host, pathname, searchParams } = new URL(url);
-    return `${searchParams.get('host') ?? host}${pathname}`;
-  } catch {
-    return 'DATABASE_URL';
-  }
 }
