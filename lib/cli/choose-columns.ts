@@ -14,9 +14,11 @@ export function chooseColumns(table: TableReading, request: ForecastRequest): Co
   const rival = columns?.[2] ?? guess.rival;
   if (month === null || focal === null || rival === null) {
     const lacking = month === null ? 'no column of months' : 'fewer than two columns of counts';
+    const advice =
+      'Write months as 2024-03 and counts as digits, or name the columns: --columns month,focal,rival.';
     return {
       ok: false,
-      message: `There is ${lacking} among ${table.header.join(', ')}. Name the columns: --columns month,focal,rival.`,
+      message: `There is ${lacking} among ${table.header.join(', ')}. ${advice}`,
     };
   }
   return { ok: true, mapping: { month, focal, rival, decimalMark, dateOrder } };

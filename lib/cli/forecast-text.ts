@@ -3,7 +3,7 @@
  */
 import { plainText } from '../brief/text';
 import type { Brief, ForecastRow } from '../brief/types';
-import { describePlace, explainProblem } from '../series/explain';
+import { explainProblem } from '../series/explain';
 import { formatMonth } from '../series/month';
 import type { MonthlySeries, SeriesProblem } from '../series/types';
 import { renderTable, wrapText } from './text-layout';
@@ -48,7 +48,7 @@ export function renderOutlook(
   return `${blocks.join('\n\n')}\n`;
 }
 
-/** "Row 7, column ...: what happened. Why it matters. What to try." for each problem, most shown. */
+/** One line a problem: what happened, why it matters, what to try; the first ones only. */
 export function renderProblems(problems: readonly SeriesProblem[]): string {
   const shown = problems.slice(0, MAX_PROBLEMS_SHOWN).map((problem) => {
     const { what, why, tryThis } = explainProblem(problem);
@@ -56,11 +56,6 @@ export function renderProblems(problems: readonly SeriesProblem[]): string {
   });
   const left = problems.length - shown.length;
   return renderList(left > 0 ? [...shown, `${left} more; --json lists them.`] : shown);
-}
-
-/** The first problem's place, for messages of one line. */
-export function namePlace(problem: SeriesProblem): string {
-  return describePlace(problem);
 }
 
 function section(title: string, body: string): string {

@@ -58,8 +58,9 @@ async function writeError(
   if (problems.length > 1) process.stderr.write(`${renderProblems(problems)}\n`);
 }
 
-/** Resolves when the text is handed over, also into a slow pipe. */
+/** Resolves when the text is handed over, also into a slow pipe. A reader that stops early, such as `head`, is no fault. */
 function print(text: string): Promise<void> {
+  process.stdout.on('error', () => {});
   return new Promise((resolve) => {
     process.stdout.write(text, () => resolve());
   });

@@ -35,18 +35,20 @@ interface Column {
 
 function guessMonth(columns: Column[]): Column | undefined {
   const scored = columns
-    .map((column) => ({
-      column,
-      share: shareOfMonths(column.cells),
-      isNamed: MONTH_HEADER.test(column.name),
-    }))
+    .map((column) => ({ column, isNamed: MONTH_HEADER.test(column.name) }))
+    .map(({ column, isNamed }) => ({ column, isNamed, share: shareOfMonths(column.cells, isNamed) }))
     .filter(({ share }) => share >= MIN_SHARE);
   scored.sort((a, b) => Number(b.isNamed) - Number(a.isNamed) || b.share - a.share);
   return scored[0]?.column;
 }
 
-function shareOfMonths(cells: string[]): number {
-  return shareOf(readMonthColumn(cells), ({ kind }) => kind === 'month' || kind === 'ambiguous');
+/** Open cells with one reading, such as 03/24, are months only in a column that says so. */
+function shareOfMonths(cells: string[], isNamed: boolean): number {
+  return shareOf(readMonthColumn(cells), (reading) => {
+    return (
+      reading.kind === 'month' || (reading.kind === 'ambiguous' && (isNamed || reading.months.length > 1))
+    );
+  });
 }
 
 function shareOfCounts(cells: string[]): number {

@@ -12,6 +12,9 @@ const LAST_DAY = 31;
 /** Two-digit years below this are 20xx, from it on 19xx (common practice, POSIX strptime). */
 const SHORT_YEAR_PIVOT = 69;
 
+/** A number such as 31.5, which is no month of a two-digit year. */
+const DECIMAL = /^\d{1,2}\.\d{1,2}$/;
+
 /** In which order the parts of a text are taken. */
 export type MonthLayout =
   | 'year-month'
@@ -80,6 +83,7 @@ export function readMonthText(text: string): MonthText {
   if (/^\d{4}-?M\d{2}$/i.test(plain)) return readNumbers([plain.slice(0, 4), plain.slice(-2)]);
   if (/^\d{6}$/.test(plain)) return readNumbers([plain.slice(0, 4), plain.slice(4)]);
   if (/^\d{8}$/.test(plain)) return readNumbers([plain.slice(0, 4), plain.slice(4, 6), plain.slice(6)]);
+  if (DECIMAL.test(plain)) return nothing;
   if (/^\d{1,4}([-/. ])\d{1,4}(\1\d{1,4})?$/.test(plain)) return readNumbers(plain.split(/[-/. ]/));
   return readNamed(plain);
 }

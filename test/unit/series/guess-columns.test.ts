@@ -35,6 +35,7 @@ test.each([
     'Month,Ferrow,Tarn\n2024-01,10,20\n2024-02,11,21\nSource: panel,,',
     ['Month', 'Ferrow', 'Tarn'],
   ],
+  ['decimals that look like days', 'x,Month,A,B\n1/12,2024-01,1,2\n2/12,2024-02,3,4', ['Month', 'A', 'B']],
   ['no header', '2024-01,10,20\n2024-02,11,21', ['Column A', 'Column B', 'Column C']],
   ['two dates', 'Created,Month,A,B\n2025-01-05,2024-01,1,2\n2025-01-05,2024-02,3,4', ['Month', 'A', 'B']],
 ])('%s', (_, text, [month, focal, rival]) => {
@@ -48,5 +49,6 @@ test('what is not there is not guessed', () => {
     focal: 'A',
     rival: null,
   });
+  expect(readTable('exp,hours,A\n1,6.5,3\n1,31.5,4\n2,12.5,4').guess.month).toBeNull();
   expect(readTable('').guess).toEqual({ month: null, focal: null, rival: null });
 });
