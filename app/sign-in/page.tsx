@@ -10,7 +10,11 @@ import { readSafePath } from '../_lib/safe-path';
 
 export const metadata: Metadata = { title: 'Sign in' };
 
-export default async function SignInPage({ searchParams }: PageProps<'/sign-in'>) {
+export default async function SignInPage({
+  searchParams,
+}: {
+  searchParams: Promise<{ next?: string | string[] }>;
+}) {
   const next = readSafePath((await searchParams).next);
   if (await readViewer()) redirect(next);
   return (

@@ -5,15 +5,15 @@
  * The chart itself loads after the page; its place is reserved, so nothing moves when it comes.
  */
 import dynamic from 'next/dynamic';
-import { useState } from 'react';
+import { useMemo, useState } from 'react';
 import { useElementSize } from '@/app/_lib/use-element-size';
-import type { ForecastFigure as ForecastFigureData, ForecastView } from '@/lib/brief/types';
+import type { ForecastFigure as ForecastFigureData, ForecastRow, ForecastView } from '@/lib/brief/types';
 import { ViewSwitch } from '../controls/view-switch';
 import { FigureFrame } from './figure-frame';
 import styles from './forecast-figure.module.css';
 import { layOutForecast } from './forecast-layout';
 import { ForecastReadOut } from './forecast-read-out';
-import { MonthReader } from './month-reader';
+import { MonthReader, type MonthReading } from './month-reader';
 
 const ForecastPlot = dynamic(() => import('./forecast-plot').then((module) => module.ForecastPlot), {
   ssr: false,
@@ -50,6 +50,7 @@ interface ForecastCanvasProps {
 
 function ForecastCanvas({ view, index, isReading, onRead }: ForecastCanvasProps) {
   const [ref, size] = useElementSize<HTMLDivElement>();
+  const readings = useMemo(() => view.rows.map((row) => readRow(view, row)), [view]);
   const layout = size
     ? layOutForecast(
         size,
@@ -63,8 +64,25 @@ function ForecastCanvas({ view, index, isReading, onRead }: ForecastCanvasProps)
         {size && layout ? <ForecastPlot view={view} layout={layout} size={size} /> : null}
       </div>
       {layout ? (
-        <MonthReader view={view} plot={layout.plot} index={index} isReading={isReading} onRead={onRead} />
+        <MonthReader
+          readings={readings}
+          monthDomain={view.monthDomain}
+          domain={view.domain}
+          plot={layout.plot}
+          index={index}
+          isReading={isReading}
+          onRead={onRead}
+        />
       ) : null}
     </div>
   );
+}
+
+function readRow(view: ForecastView, row: ForecastRow): MonthReading {
+  const spelt = view.series.map(({ key, name }) => `${name} ${row.points[key]?.text || 'no count'}`);
+  const marks = view.series.flatMap(({ key, tone }) => {
+    const value = row.points[key]?.seen ?? row.points[key]?.mid ?? null;
+    return value === null ? [] : [{ key, tone, value }];
+  });
+  return { month: row.month, text: `${row.label}: ${spelt.join('; ')}`, marks };
 }

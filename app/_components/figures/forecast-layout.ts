@@ -13,6 +13,8 @@ const LETTER_WIDTH = 7.4;
 const LONGEST_NAME_WIDTH = 150;
 const NAME_GAP = 8;
 const TICK_LETTER_WIDTH = 7.2;
+/** Between a tick's label and its axis, with some air at the left. */
+const TICK_ROOM = 14;
 const LEAST_TICK_GAP = 14;
 
 export interface PlotBox {
@@ -37,7 +39,7 @@ export function layOutForecast(
   endNames: string[],
 ): ForecastLayout {
   const isNarrow = size.width < NARROW_BELOW;
-  const yAxisWidth = Math.ceil(longest(yLabels) * TICK_LETTER_WIDTH) + 10;
+  const yAxisWidth = Math.ceil(longest(yLabels) * TICK_LETTER_WIDTH) + TICK_ROOM;
   const nameWidth = Math.min(longest(endNames) * LETTER_WIDTH, LONGEST_NAME_WIDTH);
   const right = isNarrow ? 6 : Math.ceil(nameWidth) + NAME_GAP;
   const plot = {

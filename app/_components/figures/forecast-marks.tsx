@@ -1,11 +1,12 @@
 'use client';
 
 /** Custom layers of the forecast chart: the line where the forecast begins, and the firms' names at the line ends. */
-import { usePlotArea, useXAxisScale, useYAxisScale } from 'recharts';
+import { usePlotArea, useXAxisScale, useYAxisScale, ZIndexLayer } from 'recharts';
 import { textColour } from '@/app/_lib/tone';
 import type { ForecastSeries } from '@/lib/brief/types';
 import styles from './forecast-figure.module.css';
 import type { ForecastLayout } from './forecast-layout';
+import { ABOVE_MARKS } from './map-layout';
 
 /** From here on (share of the plot's width) the label stands left of its line. */
 const LABEL_LEFT_FROM = 0.6;
@@ -44,7 +45,7 @@ export function LineEndNames({ series, layout, lastMonth }: LineEndNamesProps) {
   const x = useXAxisScale()?.(lastMonth);
   const scaleY = useYAxisScale();
   if (x === undefined || !scaleY) return null;
-  return series.map((line) => {
+  const names = series.map((line) => {
     const y = scaleY(line.end.labelValue);
     if (y === undefined) return null;
     return (
@@ -61,4 +62,5 @@ export function LineEndNames({ series, layout, lastMonth }: LineEndNamesProps) {
       </text>
     );
   });
+  return <ZIndexLayer zIndex={ABOVE_MARKS}>{names}</ZIndexLayer>;
 }

@@ -8,6 +8,7 @@ import { useId, useMemo } from 'react';
 import { Area, CartesianGrid, ComposedChart, type DotItemDotProps, Line, XAxis, YAxis } from 'recharts';
 import { markColour } from '@/app/_lib/tone';
 import type { ForecastSeries, ForecastView } from '@/lib/brief/types';
+import { labelOf, TICK_STYLE } from './axis-style';
 import { type ForecastLayout, thinTicks } from './forecast-layout';
 import { ForecastFromLine, LineEndNames } from './forecast-marks';
 import { HatchPattern } from './hatch-pattern';
@@ -66,6 +67,7 @@ export function ForecastPlot({ view, layout, size }: ForecastPlotProps) {
         axisLine={false}
         tickLine={false}
         interval={0}
+        allowDataOverflow
       />
       {view.series.flatMap((series) => renderBands(series, `url(#${patternId}-${series.key})`))}
       <ForecastFromLine month={view.forecastFrom.month} label={view.forecastFrom.label} />
@@ -74,12 +76,6 @@ export function ForecastPlot({ view, layout, size }: ForecastPlotProps) {
       <LineEndNames series={view.series} layout={layout} lastMonth={view.monthDomain[1]} />
     </ComposedChart>
   );
-}
-
-const TICK_STYLE = { fontSize: 13, fill: 'var(--ink-2)' };
-
-function labelOf(ticks: { value: number; label: string }[]): (value: number) => string {
-  return (value) => ticks.find((tick) => tick.value === value)?.label ?? '';
 }
 
 type FlatRow = Record<string, number | [number, number] | null>;

@@ -15,7 +15,7 @@ export function ForecastReadOut({ view, index }: { view: ForecastView; index: nu
       {view.series.map((series) => (
         <div key={series.key} className={styles.readSeries}>
           <dt>
-            <SeriesSample {...series} />
+            <SeriesSample tone={series.tone} isDashed={series.isDashed} marker={series.marker} />
             {series.name}
           </dt>
           <dd>{row.points[series.key]?.text || 'no count'}</dd>

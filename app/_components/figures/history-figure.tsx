@@ -2,6 +2,7 @@
 
 /** The counts of a series as a chart with the firms' names beside their samples, and as a table of months. */
 import dynamic from 'next/dynamic';
+import { listMonths } from '@/app/_lib/list-months';
 import { LOCALE } from '@/app/_lib/locale';
 import { useElementSize } from '@/app/_lib/use-element-size';
 import { createMonthFormat } from '@/lib/brief/month-words';
@@ -53,7 +54,8 @@ function capitalise(text: string): string {
 function MonthTable({ series, focalName, rivalName }: Omit<HistoryFigureProps, 'unit'>) {
   const months = createMonthFormat(LOCALE);
   const counts = new Intl.NumberFormat(LOCALE, { maximumFractionDigits: 1 });
-  const spell = (count: number | null | undefined) => (count == null ? 'no count' : counts.format(count));
+  const rows = listMonths(series);
+  const spell = (count: number | null) => (count === null ? 'no count' : counts.format(count));
   return (
     // biome-ignore lint/a11y/noNoninteractiveTabindex: a frame that scrolls must be reachable by keyboard
     <section className={styles.scroller} aria-label="Counts by month" tabIndex={0}>
@@ -66,11 +68,11 @@ function MonthTable({ series, focalName, rivalName }: Omit<HistoryFigureProps, '
           </tr>
         </thead>
         <tbody>
-          {series.focal.map((count, index) => (
-            <tr key={series.firstMonth + index}>
-              <th scope="row">{months.short(series.firstMonth + index)}</th>
-              <td>{spell(count)}</td>
-              <td>{spell(series.rival[index])}</td>
+          {rows.map(({ month, focal, rival }) => (
+            <tr key={month}>
+              <th scope="row">{months.short(month)}</th>
+              <td>{spell(focal)}</td>
+              <td>{spell(rival)}</td>
             </tr>
           ))}
         </tbody>

@@ -2,16 +2,19 @@
 
 /** Two firms' counts as they were read, without a fit: the chart of a preview and of the data page. */
 import { CartesianGrid, ComposedChart, type DotItemDotProps, Line, XAxis, YAxis } from 'recharts';
+import { listMonths } from '@/app/_lib/list-months';
 import { LOCALE } from '@/app/_lib/locale';
+import { axisFromZero, monthTicks } from '@/lib/brief/axis-ticks';
+import { createMonthFormat } from '@/lib/brief/month-words';
 import { createNumberFormat } from '@/lib/brief/number-format';
 import type { MonthlySeries } from '@/lib/series/types';
+import { labelOf, TICK_STYLE } from './axis-style';
 import { thinTicks } from './forecast-layout';
 
-const MONTHS_PER_YEAR = 12;
 const Y_AXIS_WIDTH = 52;
 const RIGHT = 14;
-const TICK_STYLE = { fontSize: 13, fill: 'var(--ink-2)' };
 const numbers = createNumberFormat(LOCALE);
+const months = createMonthFormat(LOCALE);
 
 interface HistoryPlotProps {
   series: MonthlySeries;
@@ -19,13 +22,11 @@ interface HistoryPlotProps {
 }
 
 export function HistoryPlot({ series, size }: HistoryPlotProps) {
-  const rows = series.focal.map((focal, index) => ({
-    month: series.firstMonth + index,
-    focal,
-    rival: series.rival[index] ?? null,
-  }));
+  const rows = listMonths(series);
   const domain: [number, number] = [series.firstMonth, series.firstMonth + Math.max(rows.length - 1, 1)];
-  const ticks = thinTicks(listYears(domain), domain, size.width - Y_AXIS_WIDTH - RIGHT);
+  const ticks = thinTicks(monthTicks(...domain, months), domain, size.width - Y_AXIS_WIDTH - RIGHT);
+  const counts = [...series.focal, ...series.rival].filter((count) => count !== null);
+  const axis = axisFromZero(Math.max(0, ...counts), numbers.axis);
   return (
     <ComposedChart
       width={size.width}
@@ -40,7 +41,7 @@ export function HistoryPlot({ series, size }: HistoryPlotProps) {
         type="number"
         domain={domain}
         ticks={ticks.map((tick) => tick.value)}
-        tickFormatter={(month: number) => String(Math.floor(month / MONTHS_PER_YEAR))}
+        tickFormatter={labelOf(ticks)}
         tick={TICK_STYLE}
         axisLine={false}
         tickLine={{ stroke: 'var(--rule-strong)' }}
@@ -48,8 +49,10 @@ export function HistoryPlot({ series, size }: HistoryPlotProps) {
       />
       <YAxis
         width={Y_AXIS_WIDTH}
-        domain={[0, 'auto']}
-        tickFormatter={(value: number) => numbers.axis(value)}
+        domain={axis.domain}
+        ticks={axis.ticks.map((tick) => tick.value)}
+        tickFormatter={labelOf(axis.ticks)}
+        interval={0}
         tick={TICK_STYLE}
         axisLine={false}
         tickLine={false}
@@ -75,18 +78,6 @@ export function HistoryPlot({ series, size }: HistoryPlotProps) {
       />
     </ComposedChart>
   );
-}
-
-function listYears([first, last]: [number, number]) {
-  const ticks = [];
-  for (
-    let month = Math.ceil(first / MONTHS_PER_YEAR) * MONTHS_PER_YEAR;
-    month <= last;
-    month += MONTHS_PER_YEAR
-  ) {
-    ticks.push({ value: month, label: String(month / MONTHS_PER_YEAR) });
-  }
-  return ticks;
 }
 
 function renderRound({ cx, cy, index, value }: DotItemDotProps) {

@@ -3,6 +3,7 @@
 /** What the two maps share: their axes inside Recharts, the frame of the plot, the names of the axes. */
 import { usePlotArea, XAxis, YAxis } from 'recharts';
 import type { Tick } from '@/lib/brief/types';
+import { labelOf, TICK_STYLE } from './axis-style';
 import styles from './map.module.css';
 import { MAP_X_AXIS, type MapLayout } from './map-layout';
 
@@ -11,7 +12,8 @@ interface MapAxis {
   ticks: Tick[];
 }
 
-const TICK_STYLE = { fontSize: 13, fill: 'var(--ink-2)' };
+/** The labels end in an arrow that points along their axis; the upright one lies flat, so its arrow stands first and points up. */
+const ARROW = /\s*→$/;
 
 /** Axes as elements, not as a component: Recharts looks for them among its children. */
 export function renderMapAxes(x: MapAxis, y: MapAxis, layout: MapLayout, scale: 'linear' | 'log') {
@@ -49,10 +51,6 @@ export function renderMapAxes(x: MapAxis, y: MapAxis, layout: MapLayout, scale: 
   ];
 }
 
-function labelOf(ticks: Tick[]): (value: number) => string {
-  return (value) => ticks.find((tick) => tick.value === value)?.label ?? '';
-}
-
 /** The border of the plot and the axes' names: the upright one lies flat above the plot, where it can be read. */
 export function MapFrame({ xLabel, yLabel }: { xLabel: string; yLabel: string }) {
   const plot = usePlotArea();
@@ -61,7 +59,7 @@ export function MapFrame({ xLabel, yLabel }: { xLabel: string; yLabel: string })
     <g>
       <rect x={plot.x} y={plot.y} width={plot.width} height={plot.height} className={styles.frame} />
       <text x={plot.x} y={plot.y - 11} className={styles.axisName}>
-        ↑ {yLabel}
+        ↑ {yLabel.replace(ARROW, '')}
       </text>
       <text
         x={plot.x + plot.width}
@@ -69,7 +67,7 @@ export function MapFrame({ xLabel, yLabel }: { xLabel: string; yLabel: string })
         textAnchor="end"
         className={styles.axisName}
       >
-        {xLabel} →
+        {xLabel}
       </text>
     </g>
   );

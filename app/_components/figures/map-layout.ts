@@ -4,11 +4,15 @@
  */
 
 export const MAP_TOP = 30;
+/** Drawing order of layers over Recharts' own marks, the highest of which (scatters) lie at 600. */
+export const ABOVE_MARKS = 700;
 export const MAP_X_AXIS = 50;
 const TICK_LETTER_WIDTH = 7.2;
 const LETTER_WIDTH = 7.1;
+/** Between a tick's label and its axis, with some air at the left. */
+const TICK_ROOM = 14;
 /** Half of the widest label under the right end of the horizontal axis. */
-const RIGHT_ROOM = 18;
+const RIGHT_ROOM = 26;
 
 export interface MapLayout {
   margin: { top: number; right: number; bottom: number; left: number };
@@ -17,7 +21,8 @@ export interface MapLayout {
 }
 
 export function layOutMap(size: { width: number; height: number }, yLabels: string[]): MapLayout {
-  const yAxisWidth = Math.ceil(Math.max(...yLabels.map((label) => label.length)) * TICK_LETTER_WIDTH) + 10;
+  const yAxisWidth =
+    Math.ceil(Math.max(...yLabels.map((label) => label.length)) * TICK_LETTER_WIDTH) + TICK_ROOM;
   return {
     margin: { top: MAP_TOP, right: RIGHT_ROOM, bottom: 0, left: 0 },
     yAxisWidth,

@@ -6,30 +6,47 @@
  */
 import { type KeyboardEvent, type PointerEvent, useId } from 'react';
 import { markColour } from '@/app/_lib/tone';
-import type { ForecastView } from '@/lib/brief/types';
+import type { Tone } from '@/lib/brief/types';
 import { type PlotBox, placeOn } from './forecast-layout';
 import styles from './month-reader.module.css';
 
 const MONTHS_PER_PAGE = 12;
 
+/** One month as it is read: `text` in full, and the values to mark. */
+export interface MonthReading {
+  month: number;
+  text: string;
+  marks: { key: string; tone: Tone; value: number }[];
+}
+
 interface MonthReaderProps {
-  view: Pick<ForecastView, 'rows' | 'series' | 'domain' | 'monthDomain'>;
+  readings: MonthReading[];
+  monthDomain: [number, number];
+  domain: [number, number];
   plot: PlotBox;
   index: number;
   isReading: boolean;
   onRead: (index: number | null) => void;
 }
 
-export function MonthReader({ view, plot, index, isReading, onRead }: MonthReaderProps) {
+export function MonthReader({
+  readings,
+  monthDomain,
+  domain,
+  plot,
+  index,
+  isReading,
+  onRead,
+}: MonthReaderProps) {
   const hintId = useId();
-  const last = view.rows.length - 1;
-  const row = view.rows[index];
+  const last = readings.length - 1;
+  const reading = readings[index];
 
   function readPointer(event: PointerEvent<HTMLDivElement>) {
     const box = event.currentTarget.getBoundingClientRect();
     const fraction = (event.clientX - box.left) / box.width;
-    const month = view.monthDomain[0] + fraction * (view.monthDomain[1] - view.monthDomain[0]);
-    const nearest = Math.round(month - view.rows[0]!.month);
+    const month = monthDomain[0] + fraction * (monthDomain[1] - monthDomain[0]);
+    const nearest = Math.round(month - readings[0]!.month);
     onRead(Math.min(Math.max(nearest, 0), last));
   }
 
@@ -51,7 +68,7 @@ export function MonthReader({ view, plot, index, isReading, onRead }: MonthReade
       aria-valuemin={0}
       aria-valuemax={last}
       aria-valuenow={index}
-      aria-valuetext={row ? spellRow(view.series, row) : undefined}
+      aria-valuetext={reading?.text}
       aria-orientation="horizontal"
       onPointerMove={readPointer}
       onPointerDown={readPointer}
@@ -63,7 +80,9 @@ export function MonthReader({ view, plot, index, isReading, onRead }: MonthReade
       <span id={hintId} hidden>
         Arrow keys move by a month, page keys by a year, Escape leaves.
       </span>
-      {isReading && row ? <ReadingMarks view={view} plot={plot} row={row} /> : null}
+      {isReading && reading ? (
+        <ReadingMarks reading={reading} monthDomain={monthDomain} domain={domain} plot={plot} />
+      ) : null}
     </div>
   );
 }
@@ -93,36 +112,26 @@ function targetOfKey(key: string, index: number, last: number): number | null | 
   }
 }
 
-function spellRow(series: ForecastView['series'], row: ForecastView['rows'][number]): string {
-  const parts = series.map(({ key, name }) => `${name} ${row.points[key]?.text || 'no count'}`);
-  return `${row.label}: ${parts.join('; ')}`;
-}
+type ReadingMarksProps = Pick<MonthReaderProps, 'monthDomain' | 'domain' | 'plot'> & {
+  reading: MonthReading;
+};
 
-function ReadingMarks({
-  view,
-  plot,
-  row,
-}: Pick<MonthReaderProps, 'view' | 'plot'> & { row: ForecastView['rows'][number] }) {
-  const x = placeOn(view.monthDomain, 0, plot.width, row.month);
+function ReadingMarks({ reading, monthDomain, domain, plot }: ReadingMarksProps) {
+  const x = placeOn(monthDomain, 0, plot.width, reading.month);
   return (
     <svg width={plot.width} height={plot.height} className={styles.marks} aria-hidden="true">
       <line x1={x} x2={x} y1={0} y2={plot.height} className={styles.line} />
-      {view.series.map(({ key, tone }) => {
-        const value = row.points[key]?.seen ?? row.points[key]?.mid;
-        if (value === null || value === undefined) return null;
-        const y = placeOn(view.domain, plot.height, 0, value);
-        return (
-          <circle
-            key={key}
-            cx={x}
-            cy={y}
-            r={4.5}
-            fill={markColour(tone)}
-            stroke="var(--paper)"
-            strokeWidth={1.5}
-          />
-        );
-      })}
+      {reading.marks.map(({ key, tone, value }) => (
+        <circle
+          key={key}
+          cx={x}
+          cy={placeOn(domain, plot.height, 0, value)}
+          r={4.5}
+          fill={markColour(tone)}
+          stroke="var(--paper)"
+          strokeWidth={1.5}
+        />
+      ))}
     </svg>
   );
 }

@@ -36,7 +36,6 @@ function renderCell(cell: string, index: number) {
       {cell}
     </th>
   ) : (
-    // biome-ignore lint/suspicious/noArrayIndexKey: a cell is known by its column
     <td key={index}>{cell}</td>
   );
 }

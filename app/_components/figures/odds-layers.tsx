@@ -1,11 +1,11 @@
 'use client';
 
 /** The layers of the odds map over its axes: the four quarters, the two lines that part them, and their names. */
-import { usePlotArea, useXAxisScale, useYAxisScale } from 'recharts';
+import { usePlotArea, useXAxisScale, useYAxisScale, ZIndexLayer } from 'recharts';
 import { markColour, textColour } from '@/app/_lib/tone';
 import type { OddsMap, OddsQuarter } from '@/lib/brief/types';
 import styles from './map.module.css';
-import { wrapWords } from './map-layout';
+import { ABOVE_MARKS, wrapWords } from './map-layout';
 
 const PADDING = 9;
 const LINE_HEIGHT = 16;
@@ -40,13 +40,13 @@ export function OddsLines({ map }: { map: OddsMap }) {
   const y = useYAxisScale()?.(1);
   if (!frame || x === undefined || y === undefined) return null;
   return (
-    <g>
+    <ZIndexLayer zIndex={ABOVE_MARKS}>
       <line x1={x} x2={x} y1={frame.y} y2={frame.y + frame.height} className={styles.cross} />
       <line x1={frame.x} x2={frame.x + frame.width} y1={y} y2={y} className={styles.cross} />
       {map.quarters.map((quarter) => (
         <QuarterName key={quarter.outcome} quarter={quarter} map={map} />
       ))}
-    </g>
+    </ZIndexLayer>
   );
 }
 
@@ -56,7 +56,7 @@ function QuarterName({ quarter, map }: { quarter: OddsQuarter; map: OddsMap }) {
   if (!frame) return null;
   const isRight = quarter.x[1] >= map.domain.x[1];
   const isTop = quarter.y[1] >= map.domain.y[1];
-  const lines = wrapWords(quarter.label, frame.width / 2 - 2 * PADDING);
+  const lines = cutLabel(quarter.label, frame.width / 2 - 2 * PADDING);
   const x = isRight ? frame.x + frame.width - PADDING : frame.x + PADDING;
   const top = isTop
     ? frame.y + PADDING + BASELINE
@@ -74,4 +74,10 @@ function QuarterName({ quarter, map }: { quarter: OddsQuarter; map: OddsMap }) {
       ))}
     </text>
   );
+}
+
+/** "both stay · 88 %" on one line, or the name and then its chance. */
+function cutLabel(label: string, width: number): string[] {
+  const whole = wrapWords(label, width);
+  return whole.length === 1 ? whole : label.split(' · ').flatMap((part) => wrapWords(part, width));
 }

@@ -1,10 +1,12 @@
 'use client';
 
 /** The layers of the phase map over its axes. Points are [focal users, rival users]; Recharts' scales place them. */
-import { usePlotArea, useXAxisScale, useYAxisScale } from 'recharts';
+import { usePlotArea, useXAxisScale, useYAxisScale, ZIndexLayer } from 'recharts';
+
 import { markColour, textColour } from '@/app/_lib/tone';
 import type { MapDirection, MapEquilibrium, MapPoint, PhaseMap, PlacedLabel } from '@/lib/brief/types';
 import styles from './map.module.css';
+import { ABOVE_MARKS } from './map-layout';
 
 interface Frame {
   x: number;
@@ -29,7 +31,7 @@ export function PhaseLayers({ map, labels }: { map: PhaseMap; labels: PlacedLabe
   if (!frame || !scaleX || !scaleY) return null;
   const place: Place = ([focal, rival]) => ({ x: scaleX(focal) ?? 0, y: scaleY(rival) ?? 0 });
   return (
-    <g>
+    <ZIndexLayer zIndex={ABOVE_MARKS}>
       {map.directions.map((direction) => renderDirection(direction, place))}
       {map.growthStops.map((stop) => (
         <polyline
@@ -47,7 +49,7 @@ export function PhaseLayers({ map, labels }: { map: PhaseMap; labels: PlacedLabe
       <Paths map={map} place={place} />
       {map.equilibria.map((equilibrium) => renderEquilibrium(equilibrium, place))}
       {labels.map((label) => renderLabel(label, frame))}
-    </g>
+    </ZIndexLayer>
   );
 }
 

@@ -28,9 +28,7 @@ export function FitStanding({ page, canWrite }: FitStandingProps) {
           {standing.detail}
         </div>
       ) : (
-        <>
-          <Headline support={standing.detail}>{standing.what}</Headline>
-        </>
+        <Headline support={standing.detail}>{standing.what}</Headline>
       )}
       {standing.action ? <div className={styles.action}>{standing.action}</div> : null}
     </Question>

@@ -7,13 +7,18 @@ import type { ReactNode } from 'react';
 import styles from './page-frame.module.css';
 import { SignOutButton } from './sign-out-button';
 
+export interface PageViewer {
+  userName: string;
+  workspaceName: string;
+}
+
 interface PageFrameProps {
   /** Name of the document after the product's name, e.g. the market. */
   title?: ReactNode;
   /** Short facts at the right: revision, months, issue. */
   facts?: ReactNode;
   /** Who is signed in; null on pages that work signed out. */
-  viewer: { userName: string; workspaceName: string; role: 'owner' | 'analyst' | 'reader' } | null;
+  viewer: PageViewer | null;
   children: ReactNode;
 }
 
@@ -47,7 +52,7 @@ export function PageFrame({ title, facts, viewer, children }: PageFrameProps) {
   );
 }
 
-function AccountNavigation({ viewer }: { viewer: NonNullable<PageFrameProps['viewer']> }) {
+function AccountNavigation({ viewer }: { viewer: PageViewer }) {
   return (
     <nav aria-label="Account" className={styles.account} data-screen-only>
       <span>

@@ -6,6 +6,7 @@ import { SetupForm } from '@/app/_components/account/setup-form';
 import { PageFrame } from '@/app/_components/frame/page-frame';
 import { Question } from '@/app/_components/frame/question';
 import { Headline } from '@/app/_components/text/headline';
+import { Notice } from '@/app/_components/text/notice';
 import { checkSetupLink } from '@/lib/services/accept-setup-link';
 import { explainCode } from '@/lib/services/explain';
 
@@ -13,10 +14,18 @@ export const metadata: Metadata = { title: 'Set up', referrer: 'no-referrer' };
 
 const ROLE_WORDS = { owner: 'an owner', analyst: 'an analyst', reader: 'a reader' } as const;
 
-export default async function SetupPage({ params }: PageProps<'/setup/[token]'>) {
+export default async function SetupPage({ params }: { params: Promise<{ token: string }> }) {
   const { token } = await params;
   const link = await checkSetupLink(token, await headers());
-  if (!link.ok) return <UnusableLink explanation={explainCode(link.code)} />;
+  if (!link.ok) {
+    return (
+      <Notice explanation={explainCode(link.code)}>
+        <p>
+          If your account is made already, <Link href="/sign-in">sign in</Link>.
+        </p>
+      </Notice>
+    );
+  }
   return (
     <PageFrame title={link.value.workspaceName} viewer={null}>
       <Question
@@ -29,25 +38,6 @@ export default async function SetupPage({ params }: PageProps<'/setup/[token]'>)
           Make your account in {link.value.workspaceName}.
         </Headline>
         <SetupForm token={token} />
-      </Question>
-    </PageFrame>
-  );
-}
-
-function UnusableLink({ explanation }: { explanation: { what: string; why: string; tryThis: string } }) {
-  return (
-    <PageFrame viewer={null}>
-      <Question id="what" question="What happened?" isFirst>
-        <Headline
-          support={
-            <p>
-              {explanation.why} {explanation.tryThis} If your account is made already,{' '}
-              <Link href="/sign-in">sign in</Link>.
-            </p>
-          }
-        >
-          {explanation.what}
-        </Headline>
       </Question>
     </PageFrame>
   );

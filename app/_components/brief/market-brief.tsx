@@ -1,0 +1,64 @@
+/** The brief: five questions, read top to bottom, with the state of the fit above them when there is something to say. */
+import Link from 'next/link';
+import { slimFacts } from '@/app/_lib/slim-facts';
+import { buildBrief } from '@/lib/brief/build-brief';
+import type { BriefFacts } from '@/lib/brief/facts';
+import type { MarketPage } from '@/lib/services/read-market';
+import { canWrite as canWriteMarkets, type Viewer } from '@/lib/services/viewer';
+import { ChangeSection } from '../change/change-section';
+import { readPushMarket } from '../change/push-market';
+import { PushProvider } from '../change/push-state';
+import { FitStanding } from '../fit/fit-standing';
+import { PageFrame } from '../frame/page-frame';
+import { IssueSection } from '../issue/issue-section';
+import { TrustSection } from './trust-section';
+import { WhereSection } from './where-section';
+import { WhySection } from './why-section';
+
+interface MarketBriefProps {
+  viewer: Viewer;
+  page: MarketPage;
+  facts: BriefFacts;
+}
+
+export function MarketBrief({ viewer, page, facts }: MarketBriefProps) {
+  const brief = buildBrief(facts, { hasScenario: true });
+  const canWrite = canWriteMarkets(viewer);
+  return (
+    <PageFrame
+      title={brief.market.name}
+      facts={<DataFacts page={page} dataLine={brief.dataLine} />}
+      viewer={viewer}
+    >
+      <FitStanding page={page} canWrite={canWrite} />
+      <WhereSection where={brief.where} />
+      <WhySection why={brief.why} />
+      <PushProvider market={readPushMarket(facts)}>
+        {page.outlook ? (
+          <ChangeSection
+            change={brief.change}
+            facts={slimFacts(facts)}
+            marketId={page.market.id}
+            fitId={page.outlook.fitId}
+            scenarios={page.scenarios.map(({ id, name, pushes }) => ({ id, name, pushes }))}
+            canWrite={canWrite}
+          />
+        ) : null}
+        <TrustSection trust={brief.trust} cautions={brief.cautions} />
+        <IssueSection page={page} canWrite={canWrite} />
+      </PushProvider>
+    </PageFrame>
+  );
+}
+
+function DataFacts({ page, dataLine }: { page: MarketPage; dataLine: string }) {
+  const issued =
+    page.issued.length === 0
+      ? 'issued by nobody yet'
+      : `issued ${page.issued.length} ${page.issued.length === 1 ? 'time' : 'times'}`;
+  return (
+    <>
+      <Link href={`/markets/${page.market.id}/data`}>{dataLine}</Link>&nbsp;· {issued}
+    </>
+  );
+}

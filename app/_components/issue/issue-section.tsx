@@ -1,0 +1,34 @@
+/** Who should see it? Issue the forecast, list what was issued, make and withdraw links. */
+import type { MarketPage } from '@/lib/services/read-market';
+import { Question } from '../frame/question';
+import { IssueForm } from './issue-form';
+import { IssuedList } from './issued-list';
+
+interface IssueSectionProps {
+  page: MarketPage;
+  canWrite: boolean;
+}
+
+export function IssueSection({ page, canWrite }: IssueSectionProps) {
+  const canIssue = canWrite && page.outlook !== null && page.outlook.staleReasons.length === 0;
+  return (
+    <Question id="issue" question="Who should see it?" note={<IssueNote />}>
+      {canIssue ? <IssueForm marketId={page.market.id} /> : null}
+      {canWrite && !canIssue && page.outlook ? (
+        <p>Only an outlook that is up to date can be issued: fit again first.</p>
+      ) : null}
+      <IssuedList marketId={page.market.id} issued={page.issued} canWrite={canWrite} />
+    </Question>
+  );
+}
+
+function IssueNote() {
+  return (
+    <>
+      <p>
+        Issuing freezes the numbers with your name and today’s date. Later data or edits do not change them.
+      </p>
+      <p>A link shows an issued forecast to whoever has it, until it expires or is withdrawn.</p>
+    </>
+  );
+}
