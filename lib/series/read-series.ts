@@ -209,7 +209,10 @@ function assemble(dated: DatedRow[], counts: Counts, names: Names, problems: Ser
   const byMonth = new Map(dated.map((row, index) => [row.month, index]));
   const rowOf = (month: Month) => (byMonth.has(month) ? dated[byMonth.get(month)!].row : null);
   const known = dated.filter((_, index) => counts.focal[index] !== null || counts.rival[index] !== null);
-  if (known.length === 0) return { series: emptyReading(dated, problems), rowOf };
+  if (known.length === 0) {
+    problems.push(makeError('too-short-to-fit', { value: '0' }));
+    return { series: null, rowOf };
+  }
 
   const months = known.map(({ month }) => month);
   const firstMonth = months.reduce((a, b) => Math.min(a, b));
