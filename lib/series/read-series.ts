@@ -234,14 +234,6 @@ function assemble(dated: DatedRow[], counts: Counts, names: Names, problems: Ser
   return { series, rowOf };
 }
 
-/** Nothing could be read: say so once for the whole file. */
-function emptyReading(dated: DatedRow[], problems: SeriesProblem[]): null {
-  problems.push(
-    makeError('too-short-to-fit', { value: '0', other: { row: null, value: String(dated.length) } }),
-  );
-  return null;
-}
-
 /** Zeros after the first positive count become gaps, in place. */
 function clearInnerZeros(
   counts: (number | null)[],
