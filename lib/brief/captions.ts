@@ -1,7 +1,9 @@
 /** Captions of the figures, written from the results: what the figure shows in this market. */
+
+import { decideOutcome } from '../forecast/odds';
 import type { MapOutcome, MapSystem } from './map-system';
 import { spellOdds } from './odds-strip';
-import { decideOutcome, subjectOutcome } from './outcomes';
+import { subjectOutcome } from './outcomes';
 import { capitalise, joinSentences, possessive, sentence } from './text';
 import type { PhaseMap, Sentence } from './types';
 import { spellShare } from './verdict-support';

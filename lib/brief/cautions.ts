@@ -1,5 +1,6 @@
 /** Cautions, shown where they apply. Plain, short, and never a reason to hide a number. */
-import { decideOutcome } from './outcomes';
+import { decideOutcome } from '../forecast/odds';
+
 import type { Caution } from './types';
 import type { Words } from './words';
 

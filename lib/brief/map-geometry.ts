@@ -70,6 +70,8 @@ export function distanceToPolyline(p: MapPoint, line: MapPoint[]): number {
 
 /** Length of the segment a-b inside the box. */
 export function lengthInside(a: MapPoint, b: MapPoint, box: Box): number {
+  if (Math.max(a[0], b[0]) < box.x0 || Math.min(a[0], b[0]) > box.x1) return 0;
+  if (Math.max(a[1], b[1]) < box.y0 || Math.min(a[1], b[1]) > box.y1) return 0;
   const part = clipSegment(a, b, box);
   return part ? Math.hypot(part[1][0] - part[0][0], part[1][1] - part[0][1]) : 0;
 }

@@ -11,6 +11,8 @@ const LETTER_WIDTH = 0.55;
 const LINE_HEIGHT = 1.25;
 /** Room between a label and what it names, pixels. */
 const GAP = 6;
+/** Points of a path nearer than this, pixels, read as one. */
+const TOLD_APART = 4;
 /** Half the size of a mark, pixels. */
 const MARK_RADIUS = 6;
 
@@ -75,21 +77,25 @@ function buildScene(map: PhaseMap, frame: LabelFrame): Scene {
   for (const stop of map.growthStops) lines.set(`stop-${stop.firm}`, stop.points.map(toPixel));
   if (map.separatrix) lines.set('separatrix', map.separatrix.map(toPixel));
   map.pathSoFar.forEach((piece, i) => {
-    lines.set(
-      `so-far-${i}`,
-      piece.map((at) => toPixel(at.point)),
-    );
+    lines.set(`so-far-${i}`, thinLine(piece.map((at) => toPixel(at.point))));
   });
-  lines.set(
-    'ahead',
-    map.pathAhead.map((at) => toPixel(at.point)),
-  );
+  lines.set('ahead', thinLine(map.pathAhead.map((at) => toPixel(at.point))));
   return {
     frame,
     lines,
     marks: map.equilibria.map((one) => toPixel(one.point)),
     dots: map.cloud.map((one) => toPixel(one.point)),
   };
+}
+
+/** Leaves out points that lie too close to the one before to be told from it; the last point stays. */
+function thinLine(line: MapPoint[]): MapPoint[] {
+  const kept: MapPoint[] = [];
+  line.forEach((point, i) => {
+    const before = kept.at(-1);
+    if (!before || i === line.length - 1 || distance(before, point) >= TOLD_APART) kept.push(point);
+  });
+  return kept;
 }
 
 function listCandidates(label: PlacedLabel, map: PhaseMap, scene: Scene): Candidate[] {
@@ -200,8 +206,13 @@ function isAmbiguous(label: PlacedLabel, at: Candidate, scene: Scene): boolean {
   const point: MapPoint = [at.x, at.y];
   const ownDistance = distanceToPolyline(point, own);
   return [...scene.lines].some(
-    ([id, line]) => id !== label.id && distanceToPolyline(point, line) < ownDistance,
+    ([id, line]) => id !== label.id && !isPath(id) && distanceToPolyline(point, line) < ownDistance,
   );
+}
+
+/** Paths have marks, not names. */
+function isPath(id: string): boolean {
+  return id === 'ahead' || id.startsWith('so-far-');
 }
 
 function distance(a: MapPoint, b: MapPoint): number {

@@ -4,8 +4,8 @@
  */
 import { type Outcome as ClassifiedOutcome, classifyOutcome } from '../dynamics/outcome';
 import type { CompetitionSystem, State } from '../dynamics/system';
+import { decideOutcome } from '../forecast/odds';
 import type { FitReport, Outcome } from '../forecast/report';
-import { decideOutcome } from './outcomes';
 
 export type MapOutcome = Outcome | 'boundary';
 

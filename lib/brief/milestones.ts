@@ -5,7 +5,7 @@
 import type { Milestone } from '../forecast/report';
 import { LIKELY_ABOVE, UNLIKELY_BELOW, wordProbability } from './probability-words';
 import { possessive, run, sentence } from './text';
-import type { MilestoneRow } from './types';
+import type { MilestoneRow, Sentence } from './types';
 import { otherFirm, type Words } from './words';
 
 export function writeMilestones(words: Words): MilestoneRow[] {
@@ -28,7 +28,7 @@ function describeOvertaking(words: Words): MilestoneRow {
 }
 
 /** "Marrowby will likely overtake Quillfern around 2027 (Aug 2026 to Jun 2029; 82 % within 10 years)." */
-export function overtakingSentence(words: Words): ReturnType<typeof sentence> {
+export function overtakingSentence(words: Words): Sentence {
   const { overtaking } = words.facts.report.outlook;
   const behind = run(words.name(overtaking.overtaker), overtaking.overtaker);
   const ahead = run(words.name(otherFirm(overtaking.overtaker)), otherFirm(overtaking.overtaker));
@@ -68,8 +68,18 @@ function describeNearDestination(words: Words): MilestoneRow {
     label: 'Within 5\u00a0% of the destination',
     value,
     chance,
-    sentence: sentence(`The market comes within 5\u00a0% of where it is heading ${value}; ${chance}.`),
+    sentence: nearSentence(words, value, chance),
   };
+}
+
+function nearSentence(words: Words, value: string, chance: string): Sentence {
+  const { nearDestination } = words.facts.report.outlook;
+  const isExpected = nearDestination.monthsAhead !== null && nearDestination.chance > LIKELY_ABOVE;
+  if (isExpected)
+    return sentence(`The market comes within 5\u00a0% of where it is heading ${value}; ${chance}.`);
+  return sentence(
+    `Coming within 5\u00a0% of where the market is heading ${value.replace(/^no sign/, 'shows no sign')}; ${chance}.`,
+  );
 }
 
 function describeHalfLife(words: Words): MilestoneRow | null {

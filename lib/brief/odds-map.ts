@@ -2,11 +2,13 @@
  * The odds map: alpha across and beta up on log axes. The lines alpha = 1 and beta = 1 part the four outcomes; each dot is a draw.
  * Coefficients are told in percent: the part of the other's room that a full firm takes.
  */
+
+import { decideOutcome } from '../forecast/odds';
 import { OUTCOMES, type Outcome } from '../forecast/report';
 import { logTicks } from './axis-ticks';
 import { captionOddsMap } from './captions';
 import { spellOdds } from './odds-strip';
-import { decideOutcome, labelOutcome, toneOfOutcome } from './outcomes';
+import { labelOutcome, toneOfOutcome } from './outcomes';
 import { possessive } from './text';
 import type { OddsMap, OddsMapPoint, OddsQuarter } from './types';
 import type { Words } from './words';

@@ -1,6 +1,5 @@
 /** The four outcomes: which one is decided, who wins, what each is called and coloured. */
-import { type Odds, OUTCOMES, type Outcome } from '../forecast/report';
-import { LIKELY_ABOVE } from './probability-words';
+import { type Odds, OUTCOMES, type Outcome, type Outlook } from '../forecast/report';
 import type { Tone } from './types';
 import { type FirmRole, otherFirm, type Words } from './words';
 
@@ -13,11 +12,6 @@ const TONES: Record<Outcome, Tone> = {
 
 export function toneOfOutcome(outcome: Outcome): Tone {
   return TONES[outcome];
-}
-
-/** The outcome whose odds pass "likely", else null: the data do not decide yet. */
-export function decideOutcome(odds: Odds): Outcome | null {
-  return OUTCOMES.find((outcome) => odds[outcome] > LIKELY_ABOVE) ?? null;
 }
 
 /** Outcomes from the best odds to the worst; equal ones in the order of OUTCOMES. */
@@ -50,16 +44,23 @@ export function subjectOutcome(words: Words, outcome: Outcome): string {
   return outcome === 'coexistence' ? 'both firms staying' : 'the head start deciding';
 }
 
-/** The outcome that coefficients alpha and beta stand for; a coefficient of exactly 1 counts as above. */
-export function outcomeOfCoefficients(alpha: number, beta: number): Outcome {
-  if (alpha < 1) return beta < 1 ? 'coexistence' : 'exclusionByFocal';
-  return beta < 1 ? 'exclusionByRival' : 'headStartDecides';
-}
-
 /** Chances over draws that the rival takes all of the focal firm's room (alpha > 1), and the reverse (beta > 1). */
 export function chancesOfTakingAll(odds: Odds): { alpha: number; beta: number } {
   return {
     alpha: Math.min(1, odds.exclusionByRival + odds.headStartDecides),
     beta: Math.min(1, odds.exclusionByFocal + odds.headStartDecides),
+  };
+}
+
+/** Who is left in the end, the head start played out; null when no draws tell who is ahead. */
+export function chancesOfBeingAlone({
+  odds,
+  headStartFocalAhead,
+}: Outlook): { focal: number; rival: number } | null {
+  if (headStartFocalAhead === null && odds.headStartDecides > 0) return null;
+  const ahead = headStartFocalAhead ?? 0;
+  return {
+    focal: Math.min(1, odds.exclusionByFocal + odds.headStartDecides * ahead),
+    rival: Math.min(1, odds.exclusionByRival + odds.headStartDecides * (1 - ahead)),
   };
 }

@@ -9,6 +9,7 @@
 import { type Equilibrium, findEquilibria } from '../dynamics/equilibria';
 import { traceSeparatrix } from '../dynamics/separatrix';
 import type { CompetitionSystem } from '../dynamics/system';
+import { decideOutcome } from '../forecast/odds';
 import { axisFromZero, ticksUpTo } from './axis-ticks';
 import { captionPhaseMap } from './captions';
 import { buildDirections } from './direction-field';
@@ -16,7 +17,7 @@ import { type Box, clipPolyline, clipSegment, isInside } from './map-geometry';
 import { placeMapLabels } from './map-labels';
 import { readPathSoFar, tracePathAhead } from './map-paths';
 import { chooseMapSystem, type MapSystem } from './map-system';
-import { decideOutcome, toneOfOutcome } from './outcomes';
+import { toneOfOutcome } from './outcomes';
 import type {
   EquilibriumKind,
   FigureTable,

@@ -192,6 +192,7 @@ function reasonSentence(words: Words, { effect, odds }: ScenarioComparison): Sen
 
 /** Who pushes, for headings: "Marrowby’s push", "2 pushes by Quillfern and Marrowby". */
 export function namePushes(words: Words, pushes: readonly Push[]): string {
+  if (pushes.length === 0) return 'No push';
   const firms = [...new Set(pushes.map(firmOfPush))];
   if (pushes.length === 1) return `${possessive(words.name(firms[0]!))} push`;
   const names =

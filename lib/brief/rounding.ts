@@ -24,7 +24,7 @@ const STEP_OF_WIDTH = 0.25;
 /** Digits shown when no interval says how many are supported. */
 export const DIGITS_WITHOUT_INTERVAL = 3;
 /** Most digits shown. */
-const MAX_DIGITS = 4;
+const MAX_DIGITS = 3;
 /** Most decimals that are spelt; smaller numbers read as 0. */
 const MAX_DECIMALS = 9;
 const MINUS = '\u2212';

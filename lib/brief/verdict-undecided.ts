@@ -1,18 +1,21 @@
 /** The verdict when no outcome passes "likely": what leads, what is not settled, what can be said all the same. */
+
+import { outcomeOf } from '../forecast/odds';
 import type { Outcome } from '../forecast/report';
 import { spellOdds } from './odds-strip';
 import {
+  chancesOfBeingAlone,
   chancesOfTakingAll,
   labelOutcome,
-  outcomeOfCoefficients,
   rankOutcomes,
   subjectOutcome,
 } from './outcomes';
+import { LIKELY_ABOVE, likelyVerb } from './probability-words';
 import { spellRoomRange } from './room-words';
 import { capitalise, joinSentences, listWords, possessive, run, sentence } from './text';
 import type { Sentence, Verdict } from './types';
 import { horizonShare, overtakingIfOpen } from './verdict-support';
-import type { Words } from './words';
+import type { FirmRole, Words } from './words';
 
 /** A coefficient whose chance of passing 1 lies between this and 1 minus this is open; below it in both, some outcome would pass 66 %. */
 const OPEN_ABOVE = 0.17;
@@ -33,6 +36,7 @@ export function writeUndecided(words: Words): Verdict {
     headline: joinSentences([sentence('The data do not decide yet.'), leadingSentence(words)]),
     support: [
       ...(isRough ? [rough] : []),
+      ...aloneSentence(words),
       openSentence(words),
       ...borderSentence(words),
       ...hardlyMovedSentence(words),
@@ -81,12 +85,28 @@ function openSentence(words: Words): Sentence {
   );
 }
 
+/** The outcomes may be undecided between two ways to the same end. */
+function aloneSentence(words: Words): Sentence[] {
+  const alone = chancesOfBeingAlone(words.facts.report.outlook);
+  if (!alone) return [];
+  const firm: FirmRole = alone.focal >= alone.rival ? 'focal' : 'rival';
+  const chance = alone[firm];
+  if (!(chance > LIKELY_ABOVE)) return [];
+  return [
+    sentence(
+      `By its strength or by its head start, ${words.name(firm)} ${likelyVerb(chance)} end up `,
+      run('alone', firm),
+      ` all the same (${words.numbers.chance(chance)}).`,
+    ),
+  ];
+}
+
 function borderSentence(words: Words): Sentence[] {
   const { alpha, beta } = words.facts.report.point;
   const isOn = (value: number) => Math.abs(value - 1) <= BORDER_WITHIN;
   if (!isOn(alpha) && !isOn(beta)) return [];
-  const below = outcomeOfCoefficients(isOn(alpha) ? 0.5 : alpha, isOn(beta) ? 0.5 : beta);
-  const above = outcomeOfCoefficients(isOn(alpha) ? 2 : alpha, isOn(beta) ? 2 : beta);
+  const below = outcomeOf(isOn(alpha) ? 0.5 : alpha, isOn(beta) ? 0.5 : beta);
+  const above = outcomeOf(isOn(alpha) ? 2 : alpha, isOn(beta) ? 2 : beta);
   return [
     sentence(
       'The best single fit lies ',

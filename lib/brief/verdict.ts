@@ -2,9 +2,11 @@
  * The verdict: where the market is heading, in one or two sentences that claim no more than the odds allow. An outcome is named only
  * when its odds pass "likely"; else the data do not decide yet, and the verdict says what leads and what is not settled.
  */
+
+import { decideOutcome } from '../forecast/odds';
 import type { Outcome } from '../forecast/report';
 import { spellOdds } from './odds-strip';
-import { decideOutcome, labelOutcome, winnerOf } from './outcomes';
+import { labelOutcome, winnerOf } from './outcomes';
 import { LIKELY_ABOVE, likelyVerb, wordProbability } from './probability-words';
 import { capitalise, possessive, run, sentence } from './text';
 import type { Sentence, Verdict } from './types';

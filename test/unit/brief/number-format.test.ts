@@ -10,7 +10,7 @@ describe('createNumberFormat', () => {
   it('rounds users to what the interval supports', () => {
     expect(format.users(308_412, { q05: 280_111, q95: 340_222 })).toBe('310,000');
     expect(format.usersInterval({ q05: 280_111, q95: 340_222 })).toBe('280,000 to 340,000');
-    expect(format.users(308_412, { q05: 308_000, q95: 309_000 })).toBe('308,400');
+    expect(format.users(308_412, { q05: 308_000, q95: 309_000 })).toBe('308,000');
     expect(format.users(308_412)).toBe('308,000');
   });
 
@@ -42,8 +42,8 @@ describe('createNumberFormat', () => {
   });
 
   it('signs differences in points with a true minus and never signs zero', () => {
-    expect(plain(format.points(-0.04, { q05: -0.06, q95: -0.02 }))).toBe('\u22124.0 points');
-    expect(plain(format.points(-0.04, { q05: -0.09, q95: -0.02 }))).toBe('\u22124 points');
+    expect(plain(format.points(-0.04, { q05: -0.06, q95: -0.02 }))).toBe('\u22124 points');
+    expect(plain(format.points(-0.04, { q05: -0.045, q95: -0.035 }))).toBe('\u22124.0 points');
     expect(plain(format.points(0.01))).toBe('+1 point');
     expect(plain(format.points(-0.00001))).toBe('about 0 points');
     expect(plain(format.points(-0))).toBe('0 points');
