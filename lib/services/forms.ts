@@ -4,6 +4,7 @@
  */
 import { z } from 'zod';
 import { pushesSchema } from '../scenario/push-schema';
+import type { SeriesMapping } from '../series/types';
 
 export const MIN_PASSWORD_LENGTH = 10;
 /** Longer ones only cost hashing time. */
@@ -41,8 +42,14 @@ export type MemberLinkForm = z.infer<typeof memberLinkFormSchema>;
 export const revisionFormSchema = z.object({
   fileName: z.string().trim().max(MAX_FILE_NAME_LENGTH).nullable(),
   text: z.string().max(MAX_TABLE_LENGTH),
-  /** Headers of the columns to read. */
-  mapping: z.object({ month: columnHeader, focal: columnHeader, rival: columnHeader }),
+  /** Headers of the columns to read, and how to read a table that could be read two ways. */
+  mapping: z.object({
+    month: columnHeader,
+    focal: columnHeader,
+    rival: columnHeader,
+    decimalMark: z.enum(['point', 'comma']).optional(),
+    dateOrder: z.enum(['day-first', 'month-first']).optional(),
+  }) satisfies z.ZodType<SeriesMapping>,
   sourceNote: z.string().trim().max(MAX_NOTE_LENGTH).nullable(),
 });
 export type RevisionForm = z.infer<typeof revisionFormSchema>;

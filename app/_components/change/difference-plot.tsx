@@ -43,6 +43,7 @@ export function DifferencePlot({ view, size }: DifferencePlotProps) {
         height={DIFFERENCE_AXES.x}
         axisLine={false}
         tickLine={{ stroke: 'var(--rule-strong)' }}
+        tickMargin={5}
         interval={0}
       />
       <YAxis

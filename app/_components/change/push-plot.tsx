@@ -56,6 +56,7 @@ export function PushPlot({ rows, series, isShare, monthDomain, monthTicks, size 
         tick={TICK_STYLE}
         axisLine={false}
         tickLine={{ stroke: 'var(--rule-strong)' }}
+        tickMargin={5}
         interval={0}
       />
       <YAxis

@@ -41,7 +41,7 @@ export function PushTrial({ facts, marketId, fitId, scenarios, canWrite }: PushT
           )}
         </div>
       </div>
-      {brief ? <PushFigures push={brief} /> : null}
+      <div className={styles.figuresPlace}>{brief ? <PushFigures push={brief} /> : null}</div>
       <SaveScenario marketId={marketId} scenarios={scenarios} canWrite={canWrite} />
     </>
   );

@@ -55,6 +55,7 @@ export function ForecastPlot({ view, layout, size }: ForecastPlotProps) {
         tick={TICK_STYLE}
         axisLine={false}
         tickLine={{ stroke: 'var(--rule-strong)' }}
+        tickMargin={5}
         interval={0}
       />
       <YAxis

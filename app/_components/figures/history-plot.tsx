@@ -45,6 +45,7 @@ export function HistoryPlot({ series, size }: HistoryPlotProps) {
         tick={TICK_STYLE}
         axisLine={false}
         tickLine={{ stroke: 'var(--rule-strong)' }}
+        tickMargin={5}
         interval={0}
       />
       <YAxis

@@ -28,6 +28,7 @@ export function renderMapAxes(x: MapAxis, y: MapAxis, layout: MapLayout, scale: 
       tickFormatter={labelOf(x.ticks)}
       tick={TICK_STYLE}
       tickLine={{ stroke: 'var(--rule-strong)' }}
+      tickMargin={5}
       axisLine={false}
       height={MAP_X_AXIS}
       interval={0}

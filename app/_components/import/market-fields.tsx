@@ -9,8 +9,9 @@ import styles from './market-fields.module.css';
 export interface MarketDetails {
   name: string;
   unit: string;
-  focalName: string;
-  rivalName: string;
+  /** null: as the column is called. */
+  focalName: string | null;
+  rivalName: string | null;
   /** sd of ln users, as text of the list below. */
   focalError: string;
   rivalError: string;
@@ -19,8 +20,8 @@ export interface MarketDetails {
 export const UNTOUCHED_DETAILS: MarketDetails = {
   name: '',
   unit: 'monthly active users',
-  focalName: '',
-  rivalName: '',
+  focalName: null,
+  rivalName: null,
   focalError: '0',
   rivalError: '0.1',
 };
@@ -37,7 +38,7 @@ const ERRORS = [
 
 interface MarketFieldsProps {
   details: MarketDetails;
-  /** Names that stand until others are typed: the columns' headers. */
+  /** Names that stand until others are typed. */
   columnNames: { focal: string; rival: string };
   problems: FieldSentences;
   onChange: (details: MarketDetails) => void;
@@ -63,31 +64,35 @@ export function MarketFields({ details, columnNames, problems, onChange }: Marke
       />
       <TextField
         label="Focal firm"
-        value={details.focalName}
+        value={details.focalName ?? columnNames.focal}
         onChange={change('focalName')}
         problem={problems.focalName}
-        placeholder={columnNames.focal}
       />
       <TextField
         label="Rival"
-        value={details.rivalName}
+        value={details.rivalName ?? columnNames.rival}
         onChange={change('rivalName')}
         problem={problems.rivalName}
-        placeholder={columnNames.rival}
       />
       <ChoiceField
         label="The focal firm’s counts are"
-        options={ERRORS}
+        options={listErrors(details.focalError)}
         value={details.focalError}
         onChange={change('focalError')}
       />
       <ChoiceField
         label="The rival’s counts are"
-        options={ERRORS}
+        options={listErrors(details.rivalError)}
         value={details.rivalError}
         onChange={change('rivalError')}
         help="Estimates from a panel are often within 10 % (common practice). The bands widen by it."
       />
     </div>
   );
+}
+
+/** The choices, with the stored one among them where it is none of ours. */
+function listErrors(stored: string): { value: string; label: string }[] {
+  if (ERRORS.some((choice) => choice.value === stored)) return ERRORS;
+  return [{ value: stored, label: `within about ${Math.round(Number(stored) * 1000) / 10} %` }, ...ERRORS];
 }

@@ -24,8 +24,8 @@ export function NewMarketFlow() {
   const [explanation, setExplanation] = useState<Explanation | null>(null);
   const [isPending, startTransition] = useTransition();
 
-  const focalName = details.focalName.trim() || series?.focalName || '';
-  const rivalName = details.rivalName.trim() || series?.rivalName || '';
+  const focalName = details.focalName ?? series?.focalName ?? '';
+  const rivalName = details.rivalName ?? series?.rivalName ?? '';
 
   function store() {
     if (!mapping) return;

@@ -27,9 +27,9 @@ function MarketRow({ market, thisMonth }: { market: MarketSummary; thisMonth: nu
   return (
     <li className={styles.row}>
       <div>
-        <h3 className={styles.name}>
+        <h2 className={styles.name}>
           <Link href={`/markets/${market.id}`}>{market.name}</Link>
-        </h3>
+        </h2>
         <p className={styles.firms}>
           {market.focalName} and {market.rivalName}
           {market.isDemo ? ', a demonstration' : ''}

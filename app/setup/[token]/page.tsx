@@ -34,8 +34,14 @@ export default async function SetupPage({ params }: { params: Promise<{ token: s
         note={<p>This link works once. Keep it to yourself until then.</p>}
         isFirst
       >
-        <Headline support={<p>You join as {ROLE_WORDS[link.value.role]}.</p>}>
-          Make your account in {link.value.workspaceName}.
+        <Headline
+          support={
+            <p>
+              You join {link.value.workspaceName} as {ROLE_WORDS[link.value.role]}.
+            </p>
+          }
+        >
+          Make your account.
         </Headline>
         <SetupForm token={token} />
       </Question>

@@ -4,6 +4,7 @@ import Link from 'next/link';
 import { HistoryFigure } from '@/app/_components/figures/history-figure';
 import { PageFrame } from '@/app/_components/frame/page-frame';
 import { Question } from '@/app/_components/frame/question';
+import { EditMarketForm } from '@/app/_components/import/edit-market-form';
 import { NewRevisionFlow } from '@/app/_components/import/new-revision-flow';
 import { Headline } from '@/app/_components/text/headline';
 import { formatDay } from '@/app/_lib/locale';
@@ -40,10 +41,29 @@ export default async function DataPage({ params }: { params: Promise<{ id: strin
         </p>
       </Question>
       {canWrite(viewer) ? (
-        <NewRevisionFlow
-          market={{ id, unit: market.unit, focalName: market.focalName, rivalName: market.rivalName }}
-          nextNumber={revision.number + 1}
-        />
+        <>
+          <NewRevisionFlow
+            market={{ id, unit: market.unit, focalName: market.focalName, rivalName: market.rivalName }}
+            nextNumber={revision.number + 1}
+          />
+          <Question
+            id="market"
+            question="What is this market?"
+            note={<p>Forecasts that were issued keep the names they had.</p>}
+          >
+            <EditMarketForm
+              marketId={id}
+              market={{
+                name: market.name,
+                unit: market.unit,
+                focalName: market.focalName,
+                rivalName: market.rivalName,
+                focalError: market.focalError,
+                rivalError: market.rivalError,
+              }}
+            />
+          </Question>
+        </>
       ) : null}
     </PageFrame>
   );
