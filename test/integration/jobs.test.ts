@@ -158,15 +158,16 @@ describeOnDatabases('jobs', (readUrl) => {
     expect(await run({ slices: 1 })).toBe('done');
   });
 
-  it('a worker that was given up for dead can no longer write', async () => {
-    let taken: Promise<unknown> = Promise.resolve();
+  it('a worker that was given up for dead can no longer write, even while the next one still works', async () => {
+    let next: Promise<unknown> = Promise.resolve();
     const onSlice = (slice: number) => {
-      if (slice === 2)
-        taken = sweepFits({ silentSeconds: -1, maxAttempts: MAX_ATTEMPTS }).then(() => run({ slices: 1 }));
+      if (slice !== 2) return;
+      const takeBack = sweepFits({ silentSeconds: -1, maxAttempts: MAX_ATTEMPTS });
+      next = takeBack.then(() => run({ slices: 300, sliceMilliseconds: 5 }));
     };
-    expect(await run({ slices: 400, sliceMilliseconds: 5, onSlice })).toBe('not-mine');
-    expect(await taken).toBe('done');
-    expect(await readRow()).toMatchObject({ state: 'done', attempts: 2 });
+    expect(await run({ slices: 150, sliceMilliseconds: 5, onSlice })).toBe('not-mine');
+    expect(await readRow()).toMatchObject({ state: 'running', attempts: 2, result: null });
+    expect(await next).toBe('done');
   });
 
   it.each([

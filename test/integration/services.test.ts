@@ -284,6 +284,9 @@ describeOnDatabases('services', () => {
     expect((await readPage()).scenarios).toMatchObject([
       { id: scenarioId, name: 'Summer campaign', pushes: [{ size: 1 }] },
     ]);
+    const other = await uploadMarket(viewer);
+    const elsewhere = await saveScenario(viewer, other.marketId, { scenarioId, name: 'x', pushes: [PUSH] });
+    expect(elsewhere).toEqual({ ok: false, code: 'not-found' });
     const tooLarge = { name: 'x', pushes: [{ ...PUSH, size: 50 }] };
     expect(await saveScenario(viewer, marketId, tooLarge)).toMatchObject({
       ok: false,
