@@ -18,7 +18,7 @@ import { EXIT_CODES, type ExitId } from './exit-codes';
 
 const month = z.string().regex(/^\d{4}-\d{2}$/);
 
-export const problemJsonSchema = z.object({
+const problemJsonSchema = z.object({
   code: z.string(),
   /** error: the cell, row or file is not used. warning: used, or kept as a gap. */
   severity: z.enum(['error', 'warning']),
