@@ -3,6 +3,7 @@ import { type ChildProcess, spawn } from 'node:child_process';
 import { once } from 'node:events';
 import { setTimeout } from 'node:timers/promises';
 import { afterAll, afterEach, beforeEach, expect, it } from 'vitest';
+import { ENGINE_VERSION } from '@/lib/estimate/engine-version';
 import type { OutlookStep } from '@/lib/forecast/outlook-run';
 import { closeSender, enqueueFit } from '@/lib/jobs/enqueue-fit';
 import { type FitJobTools, runFitJob, STORED_DRAWS } from '@/lib/jobs/fit-job';
@@ -19,10 +20,13 @@ import { readDoneFit, readDraws } from '@/lib/store/fits';
 import { describeOnDatabases } from './database';
 import { createFakeRun, type FakeOptions, sampleResult } from './fake-run';
 import { makeViewer } from './people';
-import { uploadMarket } from './sample-market';
+import { SAMPLE_SERIES, uploadMarket } from './sample-market';
 
 /** A kill shows only after the silence, the next sweep and the next look into the queue; the rest is a slow machine. */
 const PICKED_UP_WITHIN_MS = (SILENT_SECONDS + 20) * 1000;
+
+const WORKER = 'lib/jobs/worker.ts';
+const SLOW_WORKER = 'test/integration/slow-worker.ts';
 
 getLogger().level = 'silent';
 
@@ -55,9 +59,9 @@ describeOnDatabases('jobs', (readUrl) => {
   }
 
   /** A worker as a process of its own, ready to work. */
-  async function startProcess(slices: number): Promise<ChildProcess> {
-    const env = { ...process.env, DATABASE_URL: readUrl(), FAKE_SLICES: String(slices), LOG_LEVEL: 'info' };
-    const args = ['--conditions=react-server', '--import', 'tsx', 'test/integration/slow-worker.ts'];
+  async function startProcess(program: string, variables: Record<string, string> = {}): Promise<ChildProcess> {
+    const env = { ...process.env, ...variables, DATABASE_URL: readUrl(), LOG_LEVEL: 'info' };
+    const args = ['--conditions=react-server', '--import', 'tsx', program];
     const child = spawn(process.execPath, args, { env, stdio: ['ignore', 'inherit', 'pipe'] });
     processes.push(child);
     let log = '';
@@ -247,8 +251,18 @@ describeOnDatabases('jobs', (readUrl) => {
     expect(again.ok && again.value.fitId).not.toBe(fitId);
   });
 
+  it("the app's own worker process fits a market with the engine", async () => {
+    await startProcess(WORKER);
+    await waitForState('done', 60_000);
+    const done = await readDoneFit({ workspaceId: viewer.workspaceId, fitId });
+    expect(done?.report).toMatchObject({ engineVersion: ENGINE_VERSION, months: SAMPLE_SERIES.focal.length });
+    const draws = await readDraws({ workspaceId: viewer.workspaceId, fitId });
+    expect(draws?.count).toBe(STORED_DRAWS);
+    expect(draws?.values.every(Number.isFinite)).toBe(true);
+  });
+
   it('a fit whose worker process is killed is picked up again and ends once', async () => {
-    const child = await startProcess(10_000);
+    const child = await startProcess(SLOW_WORKER, { FAKE_SLICES: '10000' });
     await waitUntil(async () => (await readRow()).progress !== null);
     child.kill('SIGKILL');
     await once(child, 'exit');
@@ -270,7 +284,7 @@ describeOnDatabases('jobs', (readUrl) => {
   });
 
   it('a worker process that is told to end puts its fit back and ends well', async () => {
-    const child = await startProcess(10_000);
+    const child = await startProcess(SLOW_WORKER, { FAKE_SLICES: '10000' });
     await waitUntil(async () => (await readRow()).progress !== null);
     child.kill('SIGTERM');
     const [code] = await once(child, 'exit');
