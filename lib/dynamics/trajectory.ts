@@ -1,38 +1,18 @@
 /**
- * The hot path of every fit: the competitive growth system on the monthly grid, with derivatives in both directions.
- *
- * Scaled state x = N1/K1, y = N2/K2 (K leaves the right-hand side):
- *   x' = r1 x (1 - x - alpha y),   y' = r2 y (1 - y - beta x)              (Murray, Mathematical Biology I, 3.5)
- * Classical Runge-Kutta of order 4 (Kutta 1901); each month is cut into as many equal steps as its fastest rate asks for, so that
- * rate x step <= MAX_RATE_STEP. The derivatives are those of the discrete map itself: exact gradients of what is computed.
- *   forward  S' = J S + df/dp, variational equations, all eight log parameters      (fillSensitivities)
- *   reverse  lambda' = -J^T lambda along the stored stages (Griewank & Walther 2008)  (pullBack)
+ * The path of a market on the monthly grid in log users, with derivatives in both directions: the hot path of every fit.
  *
  * Parameters, in this order everywhere: ln r1, ln r2, ln K1, ln K2, ln alpha, ln beta, ln N1(start), ln N2(start);
- * N_i(start) is the level in the month in which firm i enters. Time unit: month. Nothing is allocated after creation.
+ * N_i(start) is the level in the month in which firm i enters; before it the firm has no users. The months are those of
+ * `month-flow.ts`, in scaled state x = N1/K1, y = N2/K2: ln N = ln K + ln x, and ln x(start) = ln N(start) - ln K.
  */
+import { createMonthFlow, TANGENT_COLUMNS } from './month-flow';
 
 export const PARAMETER_COUNT = 8;
-
-/** Largest (rate x step): the local error of a step is then about (0.2)^5 / 120 = 3e-6 of the level, mostly far less. */
-export const MAX_RATE_STEP = 0.2;
-
-/** More steps than this in one month: parameters far outside anything a market shows; the path is refused. */
-export const MAX_STEPS_PER_MONTH = 200;
-
-/** Substeps the tape has room for at first; it grows when a path asks for more. */
-const FIRST_TAPE_STEPS_PER_MONTH = 4;
-
-/** Doubles per taped step: the four stage states (x, y). */
-const TAPE_WIDTH = 8;
-
-/** Columns of the scaled sensitivities: ln r1, ln r2, ln alpha, ln beta, ln x(start), ln y(start). */
-const SCALED_COLUMNS = 6;
 
 export interface TrajectoryGrid {
   /** Months on the grid; output index 0 .. months - 1. */
   months: number;
-  /** Month index in which each firm enters; before it the firm has no users. The smaller one must be 0. */
+  /** Month index in which each firm enters. The smaller one must be 0. */
   entry1: number;
   entry2: number;
 }
@@ -65,246 +45,77 @@ export interface Trajectory {
  */
 export function createTrajectory(grid: TrajectoryGrid): Trajectory {
   const { months, entry1, entry2 } = grid;
-  if (!(Number.isInteger(months) && months >= 1))
-    throw new RangeError(`months must be a positive integer, got ${months}`);
-  if (!(Math.min(entry1, entry2) === 0))
-    throw new RangeError(`one firm must enter in month 0, got ${entry1} and ${entry2}`);
-
+  checkGrid(grid);
+  const flow = createMonthFlow(months);
+  const { state, tangent, adjoint } = flow;
   const logLevel1 = new Float64Array(months);
   const logLevel2 = new Float64Array(months);
   const levelX = new Float64Array(months);
   const levelY = new Float64Array(months);
-  const stepsOfMonth = new Int32Array(months);
-  let tape = new Float64Array(months * FIRST_TAPE_STEPS_PER_MONTH * TAPE_WIDTH);
-  const tangent = new Float64Array(2 * SCALED_COLUMNS);
-  const stages = new Float64Array(4 * 8);
-
-  let r1 = 0;
-  let r2 = 0;
-  let alpha = 0;
-  let beta = 0;
-
-  const readParameters = (theta: ArrayLike<number>) => {
-    r1 = Math.exp(theta[0]);
-    r2 = Math.exp(theta[1]);
-    alpha = Math.exp(theta[4]);
-    beta = Math.exp(theta[5]);
-  };
 
   const run = (theta: ArrayLike<number>): boolean => {
-    readParameters(theta);
-    const startX = Math.exp(theta[6] - theta[2]);
-    const startY = Math.exp(theta[7] - theta[3]);
-    let x = 0;
-    let y = 0;
-    let at = 0;
+    flow.setParameters(Math.exp(theta[0]), Math.exp(theta[1]), Math.exp(theta[4]), Math.exp(theta[5]));
+    state[0] = 0;
+    state[1] = 0;
     for (let t = 0; t < months; t++) {
-      if (t === entry1) x = startX;
-      if (t === entry2) y = startY;
-      levelX[t] = x;
-      levelY[t] = y;
-      if (!isUsable(x, t >= entry1) || !isUsable(y, t >= entry2)) return false;
-      logLevel1[t] = theta[2] + Math.log(x);
-      logLevel2[t] = theta[3] + Math.log(y);
-      if (t === months - 1) break;
-
-      const steps = countSteps(r1, r2, alpha, beta, x, y);
-      if (steps === 0) return false;
-      stepsOfMonth[t] = steps;
-      if (tape.length < at + steps * TAPE_WIDTH) tape = grow(tape, at + steps * TAPE_WIDTH);
-      const h = 1 / steps;
-      const half = 0.5 * h;
-      const sixth = h / 6;
-      for (let s = 0; s < steps; s++) {
-        const ax = r1 * x * (1 - x - alpha * y);
-        const ay = r2 * y * (1 - y - beta * x);
-        const x2 = x + half * ax;
-        const y2 = y + half * ay;
-        const bx = r1 * x2 * (1 - x2 - alpha * y2);
-        const by = r2 * y2 * (1 - y2 - beta * x2);
-        const x3 = x + half * bx;
-        const y3 = y + half * by;
-        const cx = r1 * x3 * (1 - x3 - alpha * y3);
-        const cy = r2 * y3 * (1 - y3 - beta * x3);
-        const x4 = x + h * cx;
-        const y4 = y + h * cy;
-        const dx = r1 * x4 * (1 - x4 - alpha * y4);
-        const dy = r2 * y4 * (1 - y4 - beta * x4);
-        tape[at] = x;
-        tape[at + 1] = y;
-        tape[at + 2] = x2;
-        tape[at + 3] = y2;
-        tape[at + 4] = x3;
-        tape[at + 5] = y3;
-        tape[at + 6] = x4;
-        tape[at + 7] = y4;
-        at += TAPE_WIDTH;
-        x += sixth * (ax + 2 * (bx + cx) + dx);
-        y += sixth * (ay + 2 * (by + cy) + dy);
-      }
+      if (t === entry1) state[0] = Math.exp(theta[6] - theta[2]);
+      if (t === entry2) state[1] = Math.exp(theta[7] - theta[3]);
+      if (!isUsable(state[0], t >= entry1) || !isUsable(state[1], t >= entry2)) return false;
+      levelX[t] = state[0];
+      levelY[t] = state[1];
+      logLevel1[t] = theta[2] + Math.log(state[0]);
+      logLevel2[t] = theta[3] + Math.log(state[1]);
+      if (t < months - 1 && !flow.advance(t)) return false;
     }
     return true;
   };
 
   const pullBack = (weight1: Float64Array, weight2: Float64Array, gradient: Float64Array): void => {
-    const r1Alpha = r1 * alpha;
-    const r2Beta = r2 * beta;
-    let gr1 = 0;
-    let gr2 = 0;
-    let gAlpha = 0;
-    let gBeta = 0;
-    let gStartX = 0;
-    let gStartY = 0;
-    let gK1 = 0;
-    let gK2 = 0;
-    let lx = 0;
-    let ly = 0;
-    let at = 0;
-    for (let t = 0; t < months - 1; t++) at += stepsOfMonth[t] * TAPE_WIDTH;
-
+    flow.clearGradient();
+    adjoint.fill(0);
+    let start1 = 0;
+    let start2 = 0;
+    let sum1 = 0;
+    let sum2 = 0;
     for (let t = months - 1; t >= 0; t--) {
-      if (t < months - 1) {
-        const steps = stepsOfMonth[t];
-        const h = 1 / steps;
-        const half = 0.5 * h;
-        const sixth = h / 6;
-        const third = h / 3;
-        for (let s = 0; s < steps; s++) {
-          at -= TAPE_WIDTH;
-          let sumX = lx;
-          let sumY = ly;
-          let kx = sixth * lx;
-          let ky = sixth * ly;
-          for (let stage = 3; stage >= 0; stage--) {
-            const x = tape[at + 2 * stage];
-            const y = tape[at + 2 * stage + 1];
-            const kxx = kx * x;
-            const kyy = ky * y;
-            const roomX = 1 - x - alpha * y;
-            const roomY = 1 - y - beta * x;
-            gr1 += kxx * roomX;
-            gr2 += kyy * roomY;
-            gAlpha -= kxx * y;
-            gBeta -= kyy * x;
-            const vx = kx * r1 * (roomX - x) - r2Beta * kyy;
-            const vy = ky * r2 * (roomY - y) - r1Alpha * kxx;
-            sumX += vx;
-            sumY += vy;
-            if (stage > 0) {
-              const weight = stage === 1 ? sixth : third;
-              const reach = stage === 3 ? h : half;
-              kx = weight * lx + reach * vx;
-              ky = weight * ly + reach * vy;
-            }
-          }
-          lx = sumX;
-          ly = sumY;
-        }
-      }
+      if (t < months - 1) flow.pullBack(t);
       if (t >= entry1) {
-        lx += weight1[t] / levelX[t];
-        gK1 += weight1[t];
+        adjoint[0] += weight1[t] / levelX[t];
+        sum1 += weight1[t];
       }
       if (t >= entry2) {
-        ly += weight2[t] / levelY[t];
-        gK2 += weight2[t];
+        adjoint[1] += weight2[t] / levelY[t];
+        sum2 += weight2[t];
       }
+      // before its entry a firm's level is 0 whatever the parameters are
       if (t === entry1) {
-        gStartX = lx * levelX[t];
-        lx = 0;
+        start1 = adjoint[0] * levelX[t];
+        adjoint[0] = 0;
       }
       if (t === entry2) {
-        gStartY = ly * levelY[t];
-        ly = 0;
+        start2 = adjoint[1] * levelY[t];
+        adjoint[1] = 0;
       }
     }
-    gradient[0] += gr1 * r1;
-    gradient[1] += gr2 * r2;
-    gradient[2] += gK1 - gStartX;
-    gradient[3] += gK2 - gStartY;
-    gradient[4] += gAlpha * r1Alpha;
-    gradient[5] += gBeta * r2Beta;
-    gradient[6] += gStartX;
-    gradient[7] += gStartY;
-  };
-
-  /** One step of the variational equations for every column, given the stage states on the tape. */
-  const stepTangent = (at: number, h: number) => {
-    const half = 0.5 * h;
-    const sixth = h / 6;
-    for (let stage = 0; stage < 4; stage++) {
-      const x = tape[at + 2 * stage];
-      const y = tape[at + 2 * stage + 1];
-      const roomX = 1 - x - alpha * y;
-      const roomY = 1 - y - beta * x;
-      const base = 8 * stage;
-      stages[base] = r1 * (roomX - x);
-      stages[base + 1] = -r1 * alpha * x;
-      stages[base + 2] = -r2 * beta * y;
-      stages[base + 3] = r2 * (roomY - y);
-      stages[base + 4] = r1 * x * roomX;
-      stages[base + 5] = r2 * y * roomY;
-      stages[base + 6] = -r1 * alpha * x * y;
-      stages[base + 7] = -r2 * beta * x * y;
-    }
-    const a11 = stages[0];
-    const a12 = stages[1];
-    const a21 = stages[2];
-    const a22 = stages[3];
-    const b11 = stages[8];
-    const b12 = stages[9];
-    const b21 = stages[10];
-    const b22 = stages[11];
-    const c11 = stages[16];
-    const c12 = stages[17];
-    const c21 = stages[18];
-    const c22 = stages[19];
-    const d11 = stages[24];
-    const d12 = stages[25];
-    const d21 = stages[26];
-    const d22 = stages[27];
-    for (let column = 0; column < SCALED_COLUMNS; column++) {
-      const sx = tangent[2 * column];
-      const sy = tangent[2 * column + 1];
-      // columns 0 and 2 force firm 1's equation, 1 and 3 firm 2's, the start columns neither
-      const isForced = column < 4;
-      const slot = 4 + column;
-      const onX = isForced && (column & 1) === 0;
-      const onY = isForced && (column & 1) === 1;
-      const ax = a11 * sx + a12 * sy + (onX ? stages[slot] : 0);
-      const ay = a21 * sx + a22 * sy + (onY ? stages[slot] : 0);
-      const sx2 = sx + half * ax;
-      const sy2 = sy + half * ay;
-      const bx = b11 * sx2 + b12 * sy2 + (onX ? stages[8 + slot] : 0);
-      const by = b21 * sx2 + b22 * sy2 + (onY ? stages[8 + slot] : 0);
-      const sx3 = sx + half * bx;
-      const sy3 = sy + half * by;
-      const cx = c11 * sx3 + c12 * sy3 + (onX ? stages[16 + slot] : 0);
-      const cy = c21 * sx3 + c22 * sy3 + (onY ? stages[16 + slot] : 0);
-      const sx4 = sx + h * cx;
-      const sy4 = sy + h * cy;
-      const dx = d11 * sx4 + d12 * sy4 + (onX ? stages[24 + slot] : 0);
-      const dy = d21 * sx4 + d22 * sy4 + (onY ? stages[24 + slot] : 0);
-      tangent[2 * column] = sx + sixth * (ax + 2 * (bx + cx) + dx);
-      tangent[2 * column + 1] = sy + sixth * (ay + 2 * (by + cy) + dy);
-    }
+    gradient[0] += flow.gradient[0];
+    gradient[1] += flow.gradient[1];
+    gradient[2] += sum1 - start1;
+    gradient[3] += sum2 - start2;
+    gradient[4] += flow.gradient[2];
+    gradient[5] += flow.gradient[3];
+    gradient[6] += start1;
+    gradient[7] += start2;
   };
 
   const fillSensitivities = (theta: ArrayLike<number>, out: Float64Array): boolean => {
     if (!run(theta)) return false;
     tangent.fill(0);
-    let at = 0;
     for (let t = 0; t < months; t++) {
       if (t === entry1) enter(tangent, 0, levelX[t]);
       if (t === entry2) enter(tangent, 1, levelY[t]);
       writeLogSensitivities(tangent, 0, t >= entry1 ? 1 / levelX[t] : 0, out, t * PARAMETER_COUNT);
       writeLogSensitivities(tangent, 1, t >= entry2 ? 1 / levelY[t] : 0, out, (months + t) * PARAMETER_COUNT);
-      if (t === months - 1) break;
-      const steps = stepsOfMonth[t];
-      for (let s = 0; s < steps; s++) {
-        stepTangent(at, 1 / steps);
-        at += TAPE_WIDTH;
-      }
+      if (t < months - 1) flow.pushForward(t, 0);
     }
     return true;
   };
@@ -312,35 +123,27 @@ export function createTrajectory(grid: TrajectoryGrid): Trajectory {
   return { grid, logLevel1, logLevel2, run, pullBack, fillSensitivities };
 }
 
+function checkGrid({ months, entry1, entry2 }: TrajectoryGrid): void {
+  if (!(Number.isInteger(months) && months >= 1)) {
+    throw new RangeError(`months must be a positive integer, got ${months}`);
+  }
+  if (Math.min(entry1, entry2) !== 0) {
+    throw new RangeError(`one firm must enter in month 0, got ${entry1} and ${entry2}`);
+  }
+}
+
 /** A firm's scaled level may be 0 only before its entry; NaN and overflow fail. */
 function isUsable(level: number, hasEntered: boolean): boolean {
-  return hasEntered ? level > 0 && level < Infinity : level === 0;
-}
-
-/**
- * Steps for one month from the fastest local rate of either firm (its own growth and the diagonal of the Jacobian);
- * 0 when that is too fast or not a number.
- */
-function countSteps(r1: number, r2: number, alpha: number, beta: number, x: number, y: number): number {
-  const rate1 = r1 * Math.max(1, 2 * x + alpha * y - 1);
-  const rate2 = r2 * Math.max(1, 2 * y + beta * x - 1);
-  const steps = Math.ceil(Math.max(rate1, rate2) / MAX_RATE_STEP);
-  return steps <= MAX_STEPS_PER_MONTH ? Math.max(steps, 1) : 0;
-}
-
-function grow(tape: Float64Array, needed: number): Float64Array<ArrayBuffer> {
-  const larger = new Float64Array(2 * needed);
-  larger.set(tape);
-  return larger;
+  return hasEntered ? level > 0 && level < Number.POSITIVE_INFINITY : level === 0;
 }
 
 /** At its entry a firm's level depends on its own start alone. */
 function enter(tangent: Float64Array, row: number, level: number): void {
-  for (let column = 0; column < SCALED_COLUMNS; column++) tangent[2 * column + row] = 0;
+  for (let column = 0; column < TANGENT_COLUMNS; column++) tangent[2 * column + row] = 0;
   tangent[2 * (4 + row) + row] = level;
 }
 
-/** d ln N / d theta from the scaled tangents: ln N_i = ln K_i + ln x_i and ln x_i(start) = ln N_i(start) - ln K_i. */
+/** d ln N / d theta of one firm from the scaled tangents. */
 function writeLogSensitivities(
   tangent: Float64Array,
   row: number,

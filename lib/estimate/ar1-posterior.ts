@@ -34,6 +34,10 @@ export const AR1_COLUMNS = [
 /** Smallest error of ln users that is believed, whatever the data say: counts are never known better than to 0.3 %. */
 export const SMALLEST_ERROR = 0.003;
 
+const ABOVE_FLOOR = 1.2;
+/** A chain does not start at no persistence at all, where the logit runs away. */
+const SMALLEST_FIRST_PERSISTENCE = 0.05;
+
 const SIZE = PARAMETERS.length;
 const PERSISTENCE = SIZE + 2;
 const DIMENSION = PERSISTENCE + 2;
@@ -97,6 +101,29 @@ export function createAr1Posterior(
     return true;
   };
 
+  const placeErrors: Posterior['placeErrors'] = (theta, guesses) => {
+    const q = new Float64Array(DIMENSION);
+    q.set(theta);
+    guesses.forEach((guess, i) => {
+      q[SIZE + i] = logSizeBeyondFloor(guess.size, floors[i]);
+      const phi = Math.max(guess.persistence, SMALLEST_FIRST_PERSISTENCE);
+      q[PERSISTENCE + i] = Math.log(phi / (1 - phi));
+    });
+    return q;
+  };
+
+  /** Expected information of a stationary autoregression (Hamilton 1994, section 5.2), for ln size and logit phi. */
+  const errorInformation = (q: Float64Array): Float64Array => {
+    const information = new Float64Array(DIMENSION - SIZE);
+    firms.forEach((firm, i) => {
+      const count = firm.months.length;
+      const phi = 1 / (1 + Math.exp(-q[PERSISTENCE + i]));
+      information[i] = 2 * count + errorSize.sdLog ** -2;
+      information[2 + i] = (count * phi * phi * (1 + phi * phi)) / (1 + phi) ** 2 + persistence.sdLogit ** -2;
+    });
+    return information;
+  };
+
   return {
     dimension: DIMENSION,
     observations,
@@ -106,8 +133,16 @@ export function createAr1Posterior(
       return evaluations;
     },
     logDensity,
+    placeErrors,
+    errorInformation,
     fillDraw,
   };
+}
+
+/** ln size such that floor^2 + size^2 is the guess squared; a guess at the floor starts a little above it. */
+export function logSizeBeyondFloor(guess: number, floor: number): number {
+  const above = Math.max(guess, ABOVE_FLOOR * floor);
+  return Math.log(above * above - floor * floor) / 2;
 }
 
 /** The error in the last month of the grid: known when that month is observed, else drawn given the last one that is. */

@@ -5,7 +5,7 @@ export const DEFAULT_FIT_OPTIONS: Readonly<FitOptions> = {
   seed: 1,
   horizonMonths: 24,
   measurementFloor: { focal: 0, rival: 0 },
-  errorModel: 'ar1',
+  errorModel: 'process-noise',
 };
 
 /** Starts from the Latin hypercube, besides the two regressions. */

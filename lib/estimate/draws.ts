@@ -2,14 +2,17 @@
  * Posterior draws as one table of numbers: built by the sampler, thinned for storage, read by column name.
  */
 import { AR1_COLUMNS } from './ar1-posterior';
+import { PROCESS_COLUMNS } from './process-posterior';
 import type { DrawSet, ErrorModel } from './types';
 
 /**
  * Columns per error model. Natural units: r per month, k, n and n..Start in users (n: level in the last month of the series),
- * alpha, beta and persistence without unit, size as sd of ln users, residual as ln count minus ln level in the last month.
+ * alpha, beta and persistence without unit, size as sd of ln users, residual as ln count minus ln level in the last month, noise as sd of
+ * ln users per root month.
  */
-export const DRAW_COLUMNS: Readonly<Record<Extract<ErrorModel, 'ar1'>, readonly string[]>> = {
+export const DRAW_COLUMNS: Readonly<Record<ErrorModel, readonly string[]>> = {
   ar1: AR1_COLUMNS,
+  'process-noise': PROCESS_COLUMNS,
 };
 
 /**

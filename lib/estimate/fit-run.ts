@@ -11,6 +11,7 @@ import { PARAMETERS } from './parameters';
 import { distinctEnds, fitStart, type Mode, polishMode, SAME_VALUE, type StartResult } from './point-fit';
 import type { Posterior } from './posterior';
 import { buildPriors, type Priors } from './priors';
+import { createProcessPosterior } from './process-posterior';
 import { runSampler, type SamplerResult, type SamplerStart } from './sampler';
 import { createStarts } from './starts';
 import type { DrawSet, FitInput, FitProgress, FitStatus } from './types';
@@ -106,8 +107,9 @@ export function* runFit(input: FitInput): Generator<FitProgress, FitEnd> {
   modes.sort((a, b) => a.value - b.value);
   const alone = polishMode(observations, priors, floors, modes[0].theta, 'no-competition');
 
-  const posterior = createAr1Posterior(observations, priors, options.measurementFloor);
-  const samplerStarts = chooseSamplerStarts(posterior, alone ? [...modes, alone] : modes, floors);
+  const createPosterior = options.errorModel === 'ar1' ? createAr1Posterior : createProcessPosterior;
+  const posterior = createPosterior(observations, priors, options.measurementFloor);
+  const samplerStarts = chooseSamplerStarts(posterior, alone ? [...modes, alone] : modes);
   if (samplerStarts.length === 0) return { failure: { status: 'failed', starts: rows } };
   const sampling = runSampler(posterior, samplerStarts, options.seed, options.horizonMonths);
   for (;;) {
@@ -147,19 +149,9 @@ function markBest(results: readonly StartResult[]): Fit['starts'] {
 }
 
 /** Modes with a share of the posterior worth a chain, best first. */
-function chooseSamplerStarts(
-  posterior: Posterior,
-  modes: readonly Mode[],
-  floors: readonly [number, number],
-): SamplerStart[] {
+function chooseSamplerStarts(posterior: Posterior, modes: readonly Mode[]): SamplerStart[] {
   const starts = modes.flatMap((mode) => {
-    const q = Float64Array.from({ length: posterior.dimension });
-    q.set(mode.theta);
-    mode.errors.forEach((error, i) => {
-      q[8 + i] = Math.log(Math.max(error.size, 1.2 * floors[i]) ** 2 - floors[i] ** 2) / 2;
-      const persistence = Math.max(error.persistence, 0.05);
-      q[10 + i] = Math.log(persistence / (1 - persistence));
-    });
+    const q = posterior.placeErrors(mode.theta, mode.errors);
     const density = posterior.logDensity(q, null);
     const covariance = approximateCovariance(mode, q, posterior);
     return density > Number.NEGATIVE_INFINITY && covariance ? [{ q, covariance, density }] : [];
@@ -168,11 +160,10 @@ function chooseSamplerStarts(
   return starts.filter((start) => start.density > best - MODE_DEPTH).sort((a, b) => b.density - a.density);
 }
 
-/** Gauss-Newton covariance of the log parameters; expected information of the error parameters, prior included. */
+/** Gauss-Newton covariance of the log parameters, prior included, beside that of the error parameters. */
 function approximateCovariance(mode: Mode, q: Float64Array, posterior: Posterior): Float64Array | null {
   const n = posterior.dimension;
   const p = PARAMETERS.length;
-  const { observations, priors } = posterior;
   const information = new Float64Array(n * n);
   const rows = mode.jacobian.length / p;
   for (let row = 0; row < rows; row++) {
@@ -181,12 +172,8 @@ function approximateCovariance(mode: Mode, q: Float64Array, posterior: Posterior
         information[i * n + j] += mode.jacobian[row * p + i] * mode.jacobian[row * p + j];
     }
   }
-  observations.firms.forEach((firm, i) => {
-    const count = firm.months.length;
-    const phi = 1 / (1 + Math.exp(-q[10 + i]));
-    information[(8 + i) * (n + 1)] = 2 * count + priors.errorSize.sdLog ** -2;
-    information[(10 + i) * (n + 1)] =
-      (count * phi * phi * (1 + phi * phi)) / (1 + phi) ** 2 + priors.persistence.sdLogit ** -2;
+  posterior.errorInformation(q).forEach((value, j) => {
+    information[(p + j) * (n + 1)] = value;
   });
   const lower = choleskyOrNull(information, n);
   return lower && invertFromCholesky(lower, n);

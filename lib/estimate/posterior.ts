@@ -4,6 +4,7 @@
  */
 import type { RandomStream } from '../numeric/random';
 import type { Observations } from './observations';
+import type { ErrorGuess } from './penalised-problem';
 import type { Priors } from './priors';
 
 export interface Posterior {
@@ -19,6 +20,10 @@ export interface Posterior {
    * @returns -Infinity where the path cannot be followed; never NaN
    */
   logDensity(q: Float64Array, gradient: Float64Array | null): number;
+  /** A point from log parameters and a guess of each firm's errors. */
+  placeErrors(theta: Float64Array, errors: readonly [ErrorGuess, ErrorGuess]): Float64Array;
+  /** Rough information (inverse variance, prior included) of each coordinate beyond the log parameters, at q. */
+  errorInformation(q: Float64Array): Float64Array;
   /**
    * Natural-unit values of a draw at q, `columns.length` of them from `offset` on, with the unobserved state at the last month drawn
    * where the error model has one.

@@ -20,6 +20,8 @@ export interface Priors {
   noCompetition: LogNormalPrior & { weight: number };
   /** sd of the error of ln users, beyond the smallest error allowed. */
   errorSize: LogNormalPrior;
+  /** sd of the process noise, ln users per root month. */
+  processNoise: LogNormalPrior;
   /** Month-to-month correlation of the errors, on the logit scale. */
   persistence: { meanLogit: number; sdLogit: number };
 }
@@ -31,6 +33,7 @@ const COMPETITION: LogNormalPrior = { meanLog: 0, sdLog: 0.8 };
 const NO_COMPETITION = { weight: 0.2, meanLog: Math.log(0.1), sdLog: 1 };
 const START_SD = 1;
 const ERROR_SIZE: LogNormalPrior = { meanLog: Math.log(0.04), sdLog: 1 };
+const PROCESS_NOISE: LogNormalPrior = { meanLog: Math.log(0.01), sdLog: 1 };
 const PERSISTENCE = { meanLogit: -0.5, sdLogit: 1.2 };
 
 export function buildPriors(observations: Observations): Priors {
@@ -52,6 +55,7 @@ export function buildPriors(observations: Observations): Priors {
     },
     noCompetition: NO_COMPETITION,
     errorSize: ERROR_SIZE,
+    processNoise: PROCESS_NOISE,
     persistence: PERSISTENCE,
   };
 }

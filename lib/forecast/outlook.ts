@@ -41,7 +41,7 @@ export function computeOutlook({ fit, seed, horizonMonths, lastMonth }: OutlookI
   const draws = thinDraws(fit.draws, OUTLOOK_DRAWS);
   const table = readDrawTable(draws);
   const ends = findDrawEnds(table);
-  const levels = simulateLevels(table, horizonMonths);
+  const levels = simulateLevels(draws, horizonMonths, seed);
   const observations = simulateObservations(draws, levels, seed, REPLICATES);
   // the odds alone cost nothing per draw: take them all
   const odds = computeOdds(readColumn(fit.draws, 'alpha'), readColumn(fit.draws, 'beta'));
@@ -83,13 +83,17 @@ function buildCloud(table: DrawTable, ends: DrawEnds): Cloud {
   });
 }
 
+/** Errors that do not persist. */
+const NONE = { q05: 0, q50: 0, q95: 0 };
+
 /** Error parameters over draws. */
 export function computeErrors(draws: DrawSet): FitReport['errors'] {
   const interval = (column: string) => intervalOf(readColumn(draws, column));
+  const hasPersistence = draws.errorModel === 'ar1';
   return {
     focal: interval('size1'),
     rival: interval('size2'),
-    persistenceFocal: interval('persistence1'),
-    persistenceRival: interval('persistence2'),
+    persistenceFocal: hasPersistence ? interval('persistence1') : NONE,
+    persistenceRival: hasPersistence ? interval('persistence2') : NONE,
   };
 }
