@@ -3,29 +3,27 @@
  * destination are worked out once; `compare` follows every draw under the pushes with the same code and the same random numbers, so a push
  * of size 0 gives the baseline to the last digit.
  */
-import { findEquilibria } from '../dynamics/equilibria';
 import { ForcedIntegrator } from '../dynamics/forced-trajectory';
 import { createForcing, type Forcing } from '../dynamics/forcing';
-import { halfLifeOfReturn } from '../dynamics/half-life';
 import { applyLastingPushes } from '../dynamics/lasting-push';
 import type { Push } from '../dynamics/push';
 import type { CompetitionSystem, State } from '../dynamics/system';
 import type { DrawSet } from '../estimate/types';
 import { shareOf } from '../forecast/bands';
 import { intervalOf } from '../forecast/interval';
-import { outcomeOf } from '../forecast/odds';
 import type { Bands, Interval, Odds } from '../forecast/report';
-import type {
-  Checkpoint,
-  Destinations,
-  ScenarioBands,
-  ScenarioComparison,
-  ScenarioEffect,
-} from './comparison';
+import type { Checkpoint, ScenarioBands, ScenarioComparison, ScenarioEffect } from './comparison';
 import { findReason, findReturnMonth, findWorstMonth, isLastingPush, nameDestinationEffect } from './effect';
 import { BandMaker } from './scenario-bands';
-import { drawErrorFactors, REPLICATES, readScenarioDraws, type ScenarioDraws } from './scenario-draws';
+import {
+  drawErrorFactors,
+  drawShockFactors,
+  REPLICATES,
+  readScenarioDraws,
+  type ScenarioDraws,
+} from './scenario-draws';
 import { type Destination, describeSettling, findDestination, type SettlingPushes } from './settle';
+import { measureReturn, tallyDestinations, tallyOdds } from './tally';
 
 export interface ScenarioOptions {
   /** How far the bands reach, months after the last observed one. */
@@ -67,6 +65,7 @@ class PreparedDraws implements PreparedScenario {
   readonly draws: number;
   private readonly months: number;
   private readonly ready: ScenarioDraws;
+  private readonly shocks: Float64Array | null;
   private readonly baseline: Levels;
   private readonly pushed: Levels;
   private readonly difference: Levels;
@@ -87,6 +86,7 @@ class PreparedDraws implements PreparedScenario {
     this.draws = draws.count;
     this.months = Math.max(horizonMonths, LOOK_AHEAD_MONTHS);
     this.ready = readScenarioDraws(draws);
+    this.shocks = drawShockFactors(draws, this.months, seed);
     this.baseline = createLevels(this.months * draws.count);
     this.pushed = createLevels(this.months * draws.count);
     this.difference = createLevels(this.months * draws.count);
@@ -105,8 +105,8 @@ class PreparedDraws implements PreparedScenario {
       this.baseline,
       describeSettling([], unforced),
     );
-    this.oddsBefore = countOdds(this.ready.systems);
-    this.returnHalfLife = this.measureReturn();
+    this.oddsBefore = tallyOdds(this.ready.systems);
+    this.returnHalfLife = measureReturn(this.ready.systems, this.destinations);
   }
 
   compare(pushes: readonly Push[]): ScenarioComparison {
@@ -126,8 +126,8 @@ class PreparedDraws implements PreparedScenario {
       checkpoints: CHECKPOINTS.filter((month) => month <= this.horizonMonths).map((month) =>
         this.checkpoint(month),
       ),
-      odds: { before: this.oddsBefore, after: countOdds(lasting) },
-      destinations: { before: countDestinations(this.destinations), after: countDestinations(after) },
+      odds: { before: this.oddsBefore, after: tallyOdds(lasting) },
+      destinations: { before: tallyDestinations(this.destinations), after: tallyDestinations(after) },
       effect: this.describeEffect(pushes, after, difference.share),
     };
   }
@@ -135,17 +135,22 @@ class PreparedDraws implements PreparedScenario {
   /** Follows every draw. A draw that cannot be followed on stays where it is, with and without pushes. */
   private fillLevels(forcing: Forcing, out: Levels): void {
     const { count, systems, starts } = this.ready;
+    const { shocks } = this;
     for (let i = 0; i < count; i++) {
       const path = new ForcedIntegrator(systems[i]!, starts[i]!, forcing);
       let [n1, n2] = starts[i]!;
       let isFollowed = true;
       for (let h = 0; h < this.months; h++) {
+        const at = h * count + i;
         isFollowed = isFollowed && path.advanceFrom(h) === 'complete';
         if (isFollowed) {
+          if (shocks) {
+            path.users1 *= shocks[2 * at]!;
+            path.users2 *= shocks[2 * at + 1]!;
+          }
           n1 = path.users1;
           n2 = path.users2;
         }
-        const at = h * count + i;
         out.focal[at] = n1;
         out.rival[at] = n2;
         out.share[at] = shareOf(n1, n2);
@@ -195,17 +200,21 @@ class PreparedDraws implements PreparedScenario {
     };
   }
 
-  /** From the last month followed on: most draws have chosen their side by then. */
+  /**
+   * From the last month followed on, as most draws have chosen their side by then; with process noise from the start, since a
+   * destination is that of the system without shocks.
+   */
   private findDestinations(
     lasting: CompetitionSystem[],
     levels: Levels,
     settling: SettlingPushes,
   ): Destination[] {
-    const { count, systems } = this.ready;
+    const { count, systems, starts } = this.ready;
     const last = (this.months - 1) * count;
     return lasting.map((system, i) => {
       const state: State = [levels.focal[last + i]!, levels.rival[last + i]!];
-      return findDestination(systems[i]!, system, { month: this.months, state }, settling);
+      const from = this.shocks ? { month: 0, state: starts[i]! } : { month: this.months, state };
+      return findDestination(systems[i]!, system, from, settling);
     });
   }
 
@@ -250,19 +259,6 @@ class PreparedDraws implements PreparedScenario {
       returnHalfLifeMonths: this.returnHalfLife,
     };
   }
-
-  /** Half-life of return at the destination without pushes, over the draws that have one. */
-  private measureReturn(): Interval | null {
-    const halfLives = this.ready.systems.flatMap((system, i) => {
-      const { survivors } = this.destinations[i]!;
-      const place =
-        survivors === 'shared' ? 'shared' : survivors === 'focalAlone' ? 'firstAlone' : 'secondAlone';
-      const rest = findEquilibria(system).find((one) => one.place === place);
-      const halfLife = rest ? halfLifeOfReturn(rest) : null;
-      return halfLife === null ? [] : [halfLife];
-    });
-    return halfLives.length > 0 ? intervalOf(halfLives) : null;
-  }
 }
 
 function createLevels(length: number): Levels {
@@ -275,17 +271,4 @@ function createLevels(length: number): Levels {
 
 function bandsOf(levels: Levels, band: (values: Float64Array) => Bands): ScenarioBands {
   return { focal: band(levels.focal), rival: band(levels.rival), share: band(levels.share) };
-}
-
-function countOdds(systems: { alpha: number; beta: number }[]): Odds {
-  const odds: Odds = { coexistence: 0, exclusionByFocal: 0, exclusionByRival: 0, headStartDecides: 0 };
-  for (const { alpha, beta } of systems) odds[outcomeOf(alpha, beta)]++;
-  for (const outcome of Object.keys(odds) as (keyof Odds)[]) odds[outcome] /= systems.length;
-  return odds;
-}
-
-function countDestinations(found: Destination[]): Destinations {
-  const chance = (survivors: Destination['survivors']) =>
-    found.filter((one) => one.survivors === survivors).length / found.length;
-  return { shared: chance('shared'), focalAlone: chance('focalAlone'), rivalAlone: chance('rivalAlone') };
 }

@@ -4,12 +4,14 @@
  *
  *   count(h) = level(h) exp(e(h)),   e(h) = phi e(h-1) + s sqrt(1 - phi^2) z(h),   e(0) the error in the last observed month
  *
+ * With process noise the level itself is shaken once a month, by exp(noise z), and e(h) = s z(h) has no memory.
  * Each draw has REPLICATES errors in antithetic pairs (z and -z), so that the quantiles of counts are smooth.
  */
 import type { CompetitionSystem, State } from '../dynamics/system';
 import { readColumn } from '../estimate/draws';
 import type { DrawSet } from '../estimate/types';
 import { readDrawTable } from '../forecast/draw-table';
+import { drawShocks } from '../forecast/simulate';
 import { createStream } from '../numeric/random';
 
 /** Errors per draw; even. */
@@ -48,8 +50,9 @@ export function readScenarioDraws(draws: DrawSet): ScenarioDraws {
  */
 export function drawErrorFactors(draws: DrawSet, firm: 1 | 2, months: number, seed: number): Float64Array {
   const size = readColumn(draws, `size${firm}`);
-  const persistence = readColumn(draws, `persistence${firm}`);
-  const residual = readColumn(draws, `residual${firm}`);
+  const hasMemory = draws.errorModel === 'ar1';
+  const persistence = hasMemory ? readColumn(draws, `persistence${firm}`) : new Float64Array(draws.count);
+  const residual = hasMemory ? readColumn(draws, `residual${firm}`) : new Float64Array(draws.count);
   const stream = createStream(seed, ERROR_STREAM + firm - 1);
   const factors = new Float64Array(months * draws.count * REPLICATES);
   for (let i = 0; i < draws.count; i++) {
@@ -68,4 +71,15 @@ export function drawErrorFactors(draws: DrawSet, firm: 1 | 2, months: number, se
     }
   }
   return factors;
+}
+
+/**
+ * Factors by which the level is shaken at the end of each month, firm 1 then firm 2: month h (1 .. months) of draw i is at
+ * 2 ((h - 1) count + i). Null when the error model has no process noise.
+ */
+export function drawShockFactors(draws: DrawSet, months: number, seed: number): Float64Array | null {
+  const shocks = drawShocks(draws, months, seed);
+  if (!shocks) return null;
+  const noise = [readColumn(draws, 'noise1'), readColumn(draws, 'noise2')] as const;
+  return shocks.map((z, at) => Math.exp(noise[at & 1]![(at >> 1) % draws.count]! * z));
 }
