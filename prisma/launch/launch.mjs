@@ -48,17 +48,18 @@ export async function launch(root, args) {
 
 async function start(settings, running, stopping) {
   const { root, port, dataFolder, isVerbose } = settings;
+  const fail = (sentence) => stopping.abort(new LaunchProblem(sentence));
   makeDataFolder(dataFolder);
   if (settings.databaseUrl === null)
     running.push(await takeDataLock(dataFolder, { address: settings.address }));
   await checkPortIsFree(port);
-  await prepareFiles(settings, stopping.signal);
-
-  const fail = (sentence) => stopping.abort(new LaunchProblem(sentence));
+  ensureInstalled(root, () => say('Installing packages …'));
   const database = await startDatabase(settings, (error) =>
     fail(`The embedded database failed (${error.message}), so everything was stopped: start again.`),
   );
   running.push(database.stop);
+  await makeFromSources(settings, stopping.signal);
+
   const env = childEnvironment(settings, database.url);
   const script = (path, what) =>
     runToEnd({ args: [...RUN_TYPESCRIPT, path], what, root, env, signal: stopping.signal });
@@ -90,8 +91,8 @@ function makeDataFolder(folder) {
   }
 }
 
-async function prepareFiles({ root, distFolder, isDev }, signal) {
-  ensureInstalled(root, () => say('Installing packages …'));
+/** Neither needs the database, and a build must not depend on where it is made. */
+async function makeFromSources({ root, distFolder, isDev }, signal) {
   const env = { ...process.env, NEXT_TELEMETRY_DISABLED: '1', PRISMA_HIDE_UPDATE_MESSAGE: '1' };
   const runNode = async (args, what) => {
     await runToEnd({ args, what, root, env, signal });
