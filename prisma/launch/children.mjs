@@ -6,6 +6,7 @@ import { spawn } from 'node:child_process';
 import { createInterface } from 'node:readline';
 import { fileURLToPath } from 'node:url';
 import { LaunchProblem } from './problem.mjs';
+import { makeReadable } from './readable-line.mjs';
 
 /** Milliseconds that a child has to end by itself before it is killed. */
 const PATIENCE_MS = 12_000;
@@ -40,7 +41,9 @@ export function startChild({ name, args, root, env, isVerbose }) {
     detached: true,
     stdio: ['ignore', 'pipe', 'pipe', 'ipc'],
   });
-  const show = (line) => process.stderr.write(`${name.padEnd(NAME_WIDTH)} | ${line}\n`);
+  const show = (line) => {
+    process.stderr.write(`${name.padEnd(NAME_WIDTH)} | ${isVerbose ? line : makeReadable(line)}\n`);
+  };
   createInterface({ input: child.stdout }).on('line', isVerbose ? show : () => {});
   createInterface({ input: child.stderr }).on('line', show);
   const ended = waitForEnd(child);
