@@ -22,7 +22,7 @@ export const TRY_LIMITS = {
   forecastLink: { points: 60, duration: 15 * MINUTE },
 } as const;
 
-export type TryKind = keyof typeof TRY_LIMITS;
+type TryKind = keyof typeof TRY_LIMITS;
 
 export interface Try {
   kind: TryKind;

@@ -52,7 +52,7 @@ const EXPLANATIONS = {
   'wrong-credentials': {
     what: 'You are not signed in.',
     why: 'E-mail address and password do not belong together.',
-    tryThis: 'Check both and try again. An owner of your workspace can send you a new set-up link.',
+    tryThis: 'Check both, small and capital letters included, and try again.',
   },
   'too-many-tries': {
     what: 'Too many tries.',

@@ -14,10 +14,10 @@ export const MAX_NOTE_LENGTH = 500;
 /** RFC 5321: 254 characters fit in a mail path. */
 const MAX_EMAIL_LENGTH = 254;
 /** Characters; some 100,000 rows, where a century of months is 1,200. */
-export const MAX_TABLE_LENGTH = 4_000_000;
+const MAX_TABLE_LENGTH = 4_000_000;
 const MAX_FILE_NAME_LENGTH = 255;
 /** Measurement error of a firm's counts, sd of ln users: 1 is "anything from a third to three times". */
-export const MAX_MEASUREMENT_ERROR = 1;
+const MAX_MEASUREMENT_ERROR = 1;
 /** Ten years: a link that should outlive that has no expiry. */
 const MAX_LINK_DAYS = 3653;
 

@@ -22,7 +22,7 @@ export interface MarketSummary {
   fit: FitSummary | null;
 }
 
-export interface FitSummary {
+interface FitSummary {
   id: string;
   state: FitState;
   odds: Odds | null;

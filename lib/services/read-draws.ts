@@ -7,7 +7,7 @@ import type { NotFound } from './parse-form';
 import type { Viewer } from './viewer';
 
 /** Draws that a page works on: a slider must answer within a frame or two, and 400 draws put a median within 2.5 points. */
-export const BROWSER_DRAWS = 400;
+const BROWSER_DRAWS = 400;
 const MAX_DRAWS = 2000;
 
 /** @param count how many draws at most, an integer from 1 to 2,000 */

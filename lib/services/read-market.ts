@@ -30,7 +30,7 @@ export interface MarketPage {
   scenarios: Scenario[];
 }
 
-export interface FitStanding {
+interface FitStanding {
   id: string;
   state: FitState;
   progress: FitProgress | null;

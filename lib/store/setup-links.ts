@@ -1,4 +1,5 @@
 /** One-time links that let their holder sign up into a workspace. The token itself is never stored, only its hash. */
+import { type AuditInput, insertAuditEntry } from './audit';
 import { getPrisma } from './client';
 import { createId } from './ids';
 import type { Role } from './members';
@@ -18,9 +19,17 @@ interface NewSetupLink {
   expiresAt: Date;
 }
 
-export async function createSetupLink(args: NewSetupLink): Promise<{ linkId: string }> {
-  const row = await getPrisma().setupLink.create({ data: { id: createId(), ...args }, select: { id: true } });
-  return { linkId: row.id };
+export async function createSetupLink(
+  args: NewSetupLink & { audit?: Omit<AuditInput, 'subjectType' | 'subjectId'> },
+): Promise<{ linkId: string }> {
+  const { audit, ...columns } = args;
+  return getPrisma().$transaction(async (db) => {
+    const { id } = await db.setupLink.create({ data: { id: createId(), ...columns }, select: { id: true } });
+    if (audit) {
+      await insertAuditEntry(db, args.workspaceId, { ...audit, subjectType: 'setup-link', subjectId: id });
+    }
+    return { linkId: id };
+  });
 }
 
 /** Makes a link and removes the unused earlier ones of the same role: the last one given out is the one that works. */

@@ -1,0 +1,16 @@
+import { expect, it } from 'vitest';
+import { explainCode, explainFailure, explainStaleReason } from '@/lib/services/explain';
+
+it('every failure has sentences of its own, also one that this version does not know', () => {
+  const codes = ['too-short', 'no-usable-data', 'failed', 'engine-error', 'gave-up', 'of-the-future', null];
+  const sentences = codes.map((code) => explainFailure(code).what);
+  expect(new Set(sentences).size).toBe(codes.length - 1);
+  for (const code of codes) {
+    for (const sentence of Object.values(explainFailure(code))) expect(sentence).toMatch(/^[A-Z].+\.$/);
+  }
+});
+
+it('codes and reasons are said in whole sentences', () => {
+  for (const sentence of Object.values(explainCode('not-available'))) expect(sentence).toMatch(/^[A-Z].+\.$/);
+  expect(explainStaleReason('newer-revision')).toMatch(/^[A-Z].+\.$/);
+});
