@@ -11,12 +11,14 @@ import { startDatabase } from './database.mjs';
 import { ensureInstalled } from './install.mjs';
 import { keepWorkerRunning } from './keep-worker-running.mjs';
 import { LaunchProblem } from './problem.mjs';
-import { readSettings } from './settings.mjs';
+import { readSettings, VERBOSE } from './settings.mjs';
 import { checkPortIsFree, waitForWeb } from './web-port.mjs';
 
 const SIGNS_TO_STOP = ['SIGINT', 'SIGTERM', 'SIGHUP'];
 /** TypeScript scripts run as they stand; "react-server" lets them import what only servers may. */
 const RUN_TYPESCRIPT = ['--conditions=react-server', '--import', 'tsx'];
+/** Why everything is stopped, when a person or the system asked for it. */
+const TOLD_TO_STOP = new Error('told to stop');
 const NEXT = 'node_modules/next/dist/bin/next';
 
 /**
@@ -26,24 +28,48 @@ const NEXT = 'node_modules/next/dist/bin/next';
  */
 export async function launch(root, args) {
   const stopping = new AbortController();
-  for (const sign of SIGNS_TO_STOP) process.on(sign, () => stopping.abort());
+  for (const sign of SIGNS_TO_STOP) process.on(sign, () => stopping.abort(TOLD_TO_STOP));
   /** What to stop, in the order it was started. */
   const running = [];
   try {
     const settings = readSettings(root, args);
     await start(settings, running, stopping);
     await untilAborted(stopping.signal);
-    if (stopping.signal.reason instanceof LaunchProblem) throw stopping.signal.reason;
-    say('Stopping …');
-    return 0;
+    stopping.signal.throwIfAborted();
   } catch (error) {
-    if (error instanceof LaunchProblem) process.stderr.write(`${error.message}\n`);
-    else if (!stopping.signal.aborted) throw error;
-    return error instanceof LaunchProblem ? 1 : 0;
+    // Whatever was waited for when the stop came fails in its own way; the reason of the stop is what counts.
+    const cause = stopping.signal.aborted ? stopping.signal.reason : error;
+    if (cause !== TOLD_TO_STOP) {
+      complain(cause);
+      return 1;
+    }
+    say('Stopping …');
   } finally {
     stopping.abort();
-    for (const stop of running.reverse()) await stop();
+    await stopAll(running);
   }
+  return 0;
+}
+
+/** The last that was started is stopped first; one that cannot be stopped does not keep the others running. */
+async function stopAll(running) {
+  for (const stop of running.reverse()) {
+    try {
+      await stop();
+    } catch (error) {
+      complain(error);
+    }
+  }
+}
+
+/** A person gets a sentence. Other errors are faults of the launcher; what helps to find them is shown on request. */
+function complain(error) {
+  const isFault = !(error instanceof LaunchProblem);
+  const isVerbose = process.argv.includes(VERBOSE);
+  const sentence = isFault
+    ? `Elbowroom could not go on: ${isVerbose ? error.stack : error.message}`
+    : error.message;
+  process.stderr.write(`${sentence}\n`);
 }
 
 async function start(settings, running, stopping) {
@@ -75,8 +101,11 @@ async function start(settings, running, stopping) {
   web.ended.then((end) =>
     fail(`The web server ended by itself (${end}), so everything was stopped: start again.`),
   );
-  await waitForWeb(port, stopping.signal);
-  sayReady(settings, (await script('lib/cli/print-owner-link.ts', 'Making the set-up link')).trim());
+  const [ownerLink] = await Promise.all([
+    script('lib/cli/print-owner-link.ts', 'Making the set-up link'),
+    waitForWeb(port, stopping.signal),
+  ]);
+  sayReady(settings, ownerLink.trim());
 }
 
 /** Made readable by this account alone: it holds the database, its socket and the secret of the sessions. */

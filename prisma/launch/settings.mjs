@@ -3,6 +3,8 @@ import { existsSync } from 'node:fs';
 import { join, resolve } from 'node:path';
 import { LaunchProblem } from './problem.mjs';
 
+export const VERBOSE = '--verbose';
+const DEV = '--dev';
 const DEFAULT_PORT = 3000;
 const DEFAULT_DATA_FOLDER = '.data';
 const DEFAULT_DIST_FOLDER = '.next';
@@ -27,15 +29,15 @@ const HIGHEST_PORT = 65_535;
  * @throws {LaunchProblem} naming the setting that cannot be used
  */
 export function readSettings(root, args) {
-  const unknown = args.find((arg) => arg !== '--dev' && arg !== '--verbose');
-  if (unknown) throw new LaunchProblem(`Unknown option ${unknown}: the options are --dev and --verbose.`);
+  const unknown = args.find((arg) => arg !== DEV && arg !== VERBOSE);
+  if (unknown) throw new LaunchProblem(`Unknown option ${unknown}: the options are ${DEV} and ${VERBOSE}.`);
   const file = join(root, '.env');
   if (existsSync(file)) process.loadEnvFile(file);
   const port = readPort();
   return {
     root,
-    isDev: args.includes('--dev'),
-    isVerbose: args.includes('--verbose'),
+    isDev: args.includes(DEV),
+    isVerbose: args.includes(VERBOSE),
     port,
     address: read('APP_URL') ?? `http://localhost:${port}`,
     dataFolder: resolve(root, read('DATA_DIR') ?? DEFAULT_DATA_FOLDER),

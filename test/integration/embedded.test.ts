@@ -1,10 +1,15 @@
 /** The embedded database shared by many clients: no mixed answers, no stuck transaction, nothing lost. */
+import { spawn } from 'node:child_process';
+import { once } from 'node:events';
 import { mkdtempSync, rmSync, statSync } from 'node:fs';
 import { tmpdir } from 'node:os';
 import { dirname, join } from 'node:path';
+import { fileURLToPath } from 'node:url';
 import pg from 'pg';
 import { afterAll, beforeAll, expect, it } from 'vitest';
 import { startEmbedded } from '@/prisma/embedded/start-embedded.mjs';
+
+const PROCESS = fileURLToPath(new URL('./embedded-process.mjs', import.meta.url));
 
 type Embedded = Awaited<ReturnType<typeof startEmbedded>>;
 
@@ -90,6 +95,34 @@ it('keeps what was stored through a stop and a start', async () => {
   const after = await connect();
   expect((await after.query('SELECT a FROM t')).rows).toEqual([{ a: Math.PI }]);
   await after.end();
+});
+
+it('loses no row that was acknowledged when its process is killed', async () => {
+  await embedded.stop();
+  const child = spawn(process.execPath, [PROCESS, join(folder, 'database'), join(folder, 'socket')], {
+    stdio: ['ignore', 'pipe', 'inherit'],
+  });
+  const exited = once(child, 'exit');
+  await once(child.stdout, 'data');
+  const client = await connect();
+  await client.query('CREATE TABLE acknowledged (a int)');
+  let rows = 0;
+  setTimeout(() => child.kill('SIGKILL'), 400);
+  try {
+    for (;;) {
+      await client.query('INSERT INTO acknowledged VALUES ($1)', [rows]);
+      rows += 1;
+    }
+  } catch {
+    // The process is gone, and with it the connection.
+  }
+  await exited;
+  embedded = await start();
+  const after = await connect();
+  const { rows: found } = await after.query('SELECT count(*)::int AS n FROM acknowledged');
+  await after.end();
+  expect(rows).toBeGreaterThan(0);
+  expect(found[0].n).toBeGreaterThanOrEqual(rows);
 });
 
 it('lets only this account near its socket, and takes a short folder when the path would be too long', async () => {

@@ -14,12 +14,15 @@ import { createServer, type Server } from 'node:net';
 import { tmpdir } from 'node:os';
 import { join } from 'node:path';
 import { afterEach, beforeEach, describe, expect, it } from 'vitest';
+import { DATABASE_KINDS } from './database';
 import { findFreePort, type LauncherProcess, startLauncher } from './launcher-process';
 
 /** Includes a build when there is none yet. */
 const START_TIMEOUT = 400_000;
 /** What a start without a build takes at most on a busy machine; the launcher itself waits 120 s for the web server. */
 const STOP_TIMEOUT = 30_000;
+
+const SERVER = DATABASE_KINDS.find((kind) => kind.isServer)!;
 
 let folder: string;
 let port: number;
@@ -208,6 +211,24 @@ describe.runIf(existsSync('/proc/self/environ'))('a start that succeeds', () => 
       );
       expect(code).toBe(1);
       expect(findChildren()).toEqual([]);
+    },
+    START_TIMEOUT,
+  );
+
+  it.skipIf(SERVER.missing !== null)(
+    `uses the server of DATABASE_URL instead${SERVER.missing === null ? '' : ` (skipped: ${SERVER.missing})`}`,
+    async () => {
+      const server = await SERVER.startEmpty();
+      try {
+        const { launcher, link } = await startUntilReady({ DATABASE_URL: server.url });
+        expect((await fetch(link)).status).toBe(200);
+        launcher.signal('SIGTERM');
+        expect(await launcher.ended).toMatchObject({ code: 0, stderr: '' });
+        expect(existsSync(join(folder, 'data', 'database'))).toBe(false);
+        expect(findChildren()).toEqual([]);
+      } finally {
+        await server.stop();
+      }
     },
     START_TIMEOUT,
   );
