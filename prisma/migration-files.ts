@@ -8,7 +8,7 @@ import type {
   SchemasContainer,
 } from '@prisma/schema-engine-wasm/schema_engine_bg';
 
-export const MIGRATIONS_FOLDER = fileURLToPath(new URL('./migrations', import.meta.url));
+const MIGRATIONS_FOLDER = fileURLToPath(new URL('./migrations', import.meta.url));
 const SCHEMA_FILE = fileURLToPath(new URL('./schema.prisma', import.meta.url));
 const LOCK_FILE = 'migration_lock.toml';
 const SCRIPT_FILE = 'migration.sql';

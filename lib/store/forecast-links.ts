@@ -1,10 +1,10 @@
 /** Forecast links: who holds the token may read one issued forecast. The token itself is never stored, only its hash. */
 import type { Prisma } from '../../prisma/generated/client';
-import { type IssuedForecast, issuedForecastSchema } from '../issue/format';
+import type { IssuedForecast } from '../issue/format';
 import { type AuditInput, insertAuditEntry } from './audit';
 import { getPrisma } from './client';
 import { createId } from './ids';
-import { readJson } from './json-columns';
+import { readIssuedContent } from './issued-content';
 
 export interface ForecastLink {
   id: string;
@@ -102,5 +102,5 @@ export async function openForecastLink(args: {
   });
   if (!opened) return null;
   const { id, content } = opened.issuedForecast;
-  return readJson(issuedForecastSchema, content, 'issued_forecast.content', id);
+  return readIssuedContent(content, id);
 }

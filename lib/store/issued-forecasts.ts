@@ -5,7 +5,7 @@ import { type AuditInput, insertAuditEntry } from './audit';
 import { getPrisma } from './client';
 import { FORECAST_LINK_COLUMNS, type ForecastLink } from './forecast-links';
 import { createId } from './ids';
-import { readJson } from './json-columns';
+import { readIssuedContent } from './issued-content';
 
 export interface StoredForecast {
   id: string;
@@ -68,9 +68,7 @@ export async function readIssuedForecast(args: {
     where: { id: args.issuedId, workspaceId: args.workspaceId },
     select: { id: true, marketId: true, issuedAt: true, issuedByName: true, content: true },
   });
-  return (
-    row && { ...row, content: readJson(issuedForecastSchema, row.content, 'issued_forecast.content', row.id) }
-  );
+  return row && { ...row, content: readIssuedContent(row.content, row.id) };
 }
 
 /** Newest first, each with its links. */

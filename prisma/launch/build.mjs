@@ -37,10 +37,14 @@ export async function ensureClient(root, runNode) {
  * @param {() => void} onBuild called before a build starts
  */
 export async function ensureBuilt(root, distFolder, runNode, onBuild) {
-  const stamp = join(root, distFolder, STAMP);
-  const hash = hashSources(root, WEB_SOURCES);
-  if (existsSync(join(root, distFolder, 'BUILD_ID')) && hasStamp(stamp, hash)) return;
+  const isBuilt = existsSync(join(root, distFolder, 'BUILD_ID'));
+  if (isBuilt && hasStamp(join(root, distFolder, STAMP), hashSources(root, WEB_SOURCES))) return;
   onBuild();
   await runNode(['node_modules/next/dist/bin/next', 'build'], 'Building the web app');
-  writeFileSync(stamp, hash);
+  stampBuild(root, distFolder);
+}
+
+/** Notes that the build was made from the sources as they are now. */
+export function stampBuild(root, distFolder) {
+  writeFileSync(join(root, distFolder, STAMP), hashSources(root, WEB_SOURCES));
 }
