@@ -2,7 +2,6 @@
 import type { Metadata, Viewport } from 'next';
 import { headers } from 'next/headers';
 import type { ReactNode } from 'react';
-import { Locale } from './_components/frame/locale';
 import { literata, literataExtended, publicSans, publicSansExtended } from './fonts';
 import './globals.css';
 
@@ -29,9 +28,7 @@ export default async function RootLayout({ children }: { children: ReactNode }) 
       <head>
         <meta property="csp-nonce" nonce={nonce} content={nonce} />
       </head>
-      <body>
-        <Locale>{children}</Locale>
-      </body>
+      <body>{children}</body>
     </html>
   );
 }

@@ -3,7 +3,7 @@
 import { revalidatePath } from 'next/cache';
 import { createForecastLink } from '@/lib/services/create-forecast-link';
 import { type Explanation, explainCode } from '@/lib/services/explain';
-import { forecastLinkDaysSchema } from '../_forms/forecast-link-days';
+import { forecastLinkDaysSchema } from '../_forms/forecast-link-schema';
 import { publicUrl } from '../_lib/public-url';
 import { requireViewer } from '../_lib/require-viewer';
 

@@ -71,11 +71,11 @@ function SizeField({ isDisabled }: { isDisabled: boolean }) {
   ) : (
     <RangeField
       label="Growth is higher by"
-      value={draft.lift}
-      {...RANGES.lift}
-      format={{ style: 'percent' }}
+      suffix="%"
+      value={Math.round(100 * draft.lift)}
+      {...RANGES.liftPercent}
       isDisabled={isDisabled}
-      onChange={(lift) => change({ lift })}
+      onChange={(percent) => change({ lift: percent / 100 })}
     />
   );
 }

@@ -24,7 +24,7 @@ export interface PushDraft {
 export const RANGES = {
   startMonth: { min: 0, max: 24, step: 1 },
   lengthMonths: { min: 1, max: 36, step: 1 },
-  lift: { min: 0, max: 1, step: 0.01 },
+  liftPercent: { min: 0, max: 100, step: 1 },
   carryOverHalfLifeMonths: { min: 0, max: 12, step: 0.5 },
 } as const;
 

@@ -13,8 +13,8 @@ import { SeriesSample } from '../figures/series-sample';
 import styles from './change.module.css';
 import { placeDifferencePlot } from './difference-plot-box';
 
-const PushPlot = dynamic(() => import('./push-plot').then((module) => module.PushPlot), { ssr: false });
-const DifferencePlot = dynamic(() => import('./difference-plot').then((module) => module.DifferencePlot), {
+const PushPlot = dynamic(() => import('../figures/plots').then((module) => module.PushPlot), { ssr: false });
+const DifferencePlot = dynamic(() => import('../figures/plots').then((module) => module.DifferencePlot), {
   ssr: false,
 });
 
@@ -47,7 +47,7 @@ function PushFigure({ push, view, isShare }: PushFigureProps) {
   const [ref, size] = useElementSize<HTMLDivElement>();
   const rows = isShare ? push.share : push.users;
   return (
-    <FigureFrame caption={PUSHED_CAPTION} table={push.checkpoints}>
+    <FigureFrame caption={PUSHED_CAPTION} table={push.checkpoints} isLive>
       <h3 className={styles.figureName}>With the push</h3>
       <SeriesNames series={view.series} />
       <div className={styles.canvas} ref={ref}>
@@ -105,7 +105,7 @@ function DifferenceFigure({ view, push }: { view: DifferenceView; push: PushBrie
   const last = readings.length - 1;
   const index = Math.min(reading ?? last, last);
   return (
-    <FigureFrame caption={push.caption} table={view.table}>
+    <FigureFrame caption={push.caption} table={view.table} isLive>
       <h3 className={styles.figureName}>The difference it makes</h3>
       <p className={styles.names}>{readings[index]?.text}</p>
       <div className={styles.canvas} ref={ref}>

@@ -5,6 +5,7 @@ import { useMemo } from 'react';
 import type { BriefFacts } from '@/lib/brief/facts';
 import { buildPushBrief } from '@/lib/brief/push-brief';
 import { Button } from '../controls/button';
+import { NumberLocale } from '../controls/number-locale';
 import styles from './change.module.css';
 import { PushAnswer } from './push-answer';
 import { PushControls } from './push-controls';
@@ -32,7 +33,9 @@ export function PushTrial({ facts, marketId, fitId, scenarios, canWrite }: PushT
   return (
     <>
       <div className={styles.layout}>
-        <PushControls isDisabled={!brief} />
+        <NumberLocale>
+          <PushControls isDisabled={!brief} />
+        </NumberLocale>
         <div className={styles.answer}>
           {brief ? (
             <PushAnswer push={brief} />

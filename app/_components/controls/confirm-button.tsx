@@ -1,11 +1,8 @@
 'use client';
 
-/** A button for what cannot be undone: it asks first, in a dialog that keeps the keyboard inside. */
-import type { ReactNode } from 'react';
-import { Button as PressButton } from 'react-aria-components/Button';
-import { Dialog, DialogTrigger, Heading } from 'react-aria-components/Dialog';
-import { Modal, ModalOverlay } from 'react-aria-components/Modal';
-import { buttonClass } from './button-class';
+/** A button for what cannot be undone: it asks first, in the browser's own modal dialog, which keeps the keyboard inside. */
+import { type ReactNode, useId, useRef } from 'react';
+import { Button } from './button';
 import styles from './confirm-button.module.css';
 
 interface ConfirmButtonProps {
@@ -26,39 +23,38 @@ export function ConfirmButton({
   confirmLabel,
   onConfirm,
 }: ConfirmButtonProps) {
+  const id = useId();
+  const dialog = useRef<HTMLDialogElement>(null);
+  const close = () => dialog.current?.close();
   return (
-    <DialogTrigger>
-      <PressButton className={buttonClass('text')} aria-label={label}>
+    <>
+      <Button kind="text" aria-label={label} onClick={() => dialog.current?.showModal()}>
         {children}
-      </PressButton>
-      <ModalOverlay className={styles.overlay!} isDismissable>
-        <Modal className={styles.modal!}>
-          <Dialog role="alertdialog" className={styles.dialog}>
-            {({ close }) => (
-              <>
-                <Heading slot="title" className={styles.question!}>
-                  {question}
-                </Heading>
-                <p>{consequence}</p>
-                <div className={styles.choices}>
-                  <PressButton
-                    className={buttonClass('main')}
-                    onPress={() => {
-                      close();
-                      onConfirm();
-                    }}
-                  >
-                    {confirmLabel}
-                  </PressButton>
-                  <PressButton className={buttonClass('plain')} onPress={close}>
-                    Keep it
-                  </PressButton>
-                </div>
-              </>
-            )}
-          </Dialog>
-        </Modal>
-      </ModalOverlay>
-    </DialogTrigger>
+      </Button>
+      <dialog
+        ref={dialog}
+        role="alertdialog"
+        className={styles.dialog}
+        aria-labelledby={`${id}-question`}
+        aria-describedby={`${id}-consequence`}
+      >
+        <h3 id={`${id}-question`} className={styles.question}>
+          {question}
+        </h3>
+        <p id={`${id}-consequence`}>{consequence}</p>
+        <div className={styles.choices}>
+          <Button
+            kind="main"
+            onClick={() => {
+              close();
+              onConfirm();
+            }}
+          >
+            {confirmLabel}
+          </Button>
+          <Button onClick={close}>Keep it</Button>
+        </div>
+      </dialog>
+    </>
   );
 }

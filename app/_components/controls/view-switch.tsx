@@ -1,7 +1,7 @@
 'use client';
 
-/** A choice of one among a few views, set as words in a row; the chosen word is underlined. */
-import { Radio, RadioGroup } from 'react-aria-components/RadioGroup';
+/** A choice of one among a few views, set as words in a row; the chosen word is underlined. The browser's own radio buttons. */
+import { useId } from 'react';
 import styles from './view-switch.module.css';
 
 interface ViewSwitchProps<Id extends string> {
@@ -13,19 +13,22 @@ interface ViewSwitchProps<Id extends string> {
 }
 
 export function ViewSwitch<Id extends string>({ label, views, value, onChange }: ViewSwitchProps<Id>) {
+  const name = useId();
   return (
-    <RadioGroup
-      aria-label={label}
-      orientation="horizontal"
-      value={value}
-      onChange={(id) => onChange(id as Id)}
-      className={styles.group!}
-    >
+    <div role="radiogroup" aria-label={label} className={styles.group}>
       {views.map((view) => (
-        <Radio key={view.id} value={view.id} className={styles.choice!}>
-          {view.label}
-        </Radio>
+        <label key={view.id} className={styles.choice}>
+          <input
+            type="radio"
+            className={styles.input}
+            name={name}
+            value={view.id}
+            checked={view.id === value}
+            onChange={() => onChange(view.id)}
+          />
+          <span className={styles.word}>{view.label}</span>
+        </label>
       ))}
-    </RadioGroup>
+    </div>
   );
 }

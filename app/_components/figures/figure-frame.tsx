@@ -11,17 +11,19 @@ import { NumbersTable } from './numbers-table';
 interface FigureFrameProps {
   caption: Sentence;
   table: FigureTable;
+  /** The figure follows a slider. */
+  isLive?: boolean;
   children: ReactNode;
 }
 
-export function FigureFrame({ caption, table, children }: FigureFrameProps) {
+export function FigureFrame({ caption, table, isLive = false, children }: FigureFrameProps) {
   return (
     <figure className={styles.figure}>
       {children}
       <figcaption className={styles.caption}>
         <SentenceText sentence={caption} />
       </figcaption>
-      <NumbersTable table={table} />
+      <NumbersTable table={table} isLive={isLive} />
     </figure>
   );
 }

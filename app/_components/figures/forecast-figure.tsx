@@ -15,7 +15,7 @@ import { layOutForecast } from './forecast-layout';
 import { ForecastReadOut } from './forecast-read-out';
 import { MonthReader, type MonthReading } from './month-reader';
 
-const ForecastPlot = dynamic(() => import('./forecast-plot').then((module) => module.ForecastPlot), {
+const ForecastPlot = dynamic(() => import('./plots').then((module) => module.ForecastPlot), {
   ssr: false,
 });
 

@@ -10,8 +10,8 @@ import { FigureFrame } from './figure-frame';
 import styles from './map.module.css';
 import { layOutMap, type MapLayout } from './map-layout';
 
-const PhasePlot = dynamic(() => import('./phase-plot').then((module) => module.PhasePlot), { ssr: false });
-const OddsPlot = dynamic(() => import('./odds-plot').then((module) => module.OddsPlot), { ssr: false });
+const PhasePlot = dynamic(() => import('./plots').then((module) => module.PhasePlot), { ssr: false });
+const OddsPlot = dynamic(() => import('./plots').then((module) => module.OddsPlot), { ssr: false });
 
 const LABEL_SIZE = 14;
 

@@ -1,32 +1,56 @@
-/** The numbers of a figure, folded away under it. Wide tables scroll inside their own frame, reachable by keyboard. */
+'use client';
+
+/**
+ * The numbers of a figure, folded away under it. Wide tables scroll inside their own frame, reachable by keyboard.
+ * A live table, one that follows a slider, is only made while it is open.
+ */
+import { useState } from 'react';
 import type { FigureTable } from '@/lib/brief/types';
 import styles from './numbers-table.module.css';
 
-export function NumbersTable({ table }: { table: FigureTable }) {
+interface NumbersTableProps {
+  table: FigureTable;
+  isLive?: boolean;
+}
+
+export function NumbersTable({ table, isLive = false }: NumbersTableProps) {
+  const [isOpen, setIsOpen] = useState(false);
   return (
-    <details className={styles.disclosure} data-screen-only>
+    <details
+      className={styles.disclosure}
+      data-screen-only
+      onToggle={(event) => setIsOpen(event.currentTarget.open)}
+    >
       <summary>Table of numbers</summary>
-      {/* biome-ignore lint/a11y/noNoninteractiveTabindex: a frame that scrolls must be reachable by keyboard */}
-      <section className={styles.scroller} aria-label={table.title} tabIndex={0}>
-        <table className={styles.table}>
-          <caption>{table.title}</caption>
-          <thead>
-            <tr>
-              {table.columns.map((column) => (
-                <th key={column} scope="col">
-                  {column}
-                </th>
-              ))}
-            </tr>
-          </thead>
-          <tbody>
-            {table.rows.map((cells) => (
-              <tr key={cells.join('|')}>{cells.map(renderCell)}</tr>
-            ))}
-          </tbody>
-        </table>
-      </section>
+      {isOpen || !isLive ? (
+        // biome-ignore lint/a11y/noNoninteractiveTabindex: a frame that scrolls must be reachable by keyboard
+        <section className={styles.scroller} aria-label={table.title} tabIndex={0}>
+          <Numbers table={table} />
+        </section>
+      ) : null}
     </details>
+  );
+}
+
+function Numbers({ table }: { table: FigureTable }) {
+  return (
+    <table className={styles.table}>
+      <caption>{table.title}</caption>
+      <thead>
+        <tr>
+          {table.columns.map((column) => (
+            <th key={column} scope="col">
+              {column}
+            </th>
+          ))}
+        </tr>
+      </thead>
+      <tbody>
+        {table.rows.map((cells) => (
+          <tr key={cells.join('|')}>{cells.map(renderCell)}</tr>
+        ))}
+      </tbody>
+    </table>
   );
 }
 
