@@ -2,6 +2,7 @@
  * Stand-ins for the engine: runs with a chosen number of slices, whose end is one of the samples. They let a test stop,
  * cancel or kill a worker at a known place, which the speed of the real engine would not.
  */
+import { DEFAULT_FIT_OPTIONS } from '@/lib/estimate/defaults';
 import { ENGINE_VERSION } from '@/lib/estimate/engine-version';
 import type { DrawSet, FitInput, FitProgress } from '@/lib/estimate/types';
 import type { OutlookRun, OutlookStep } from '@/lib/forecast/outlook-run';
@@ -18,10 +19,26 @@ export interface FakeOptions {
   end?: () => OutlookStep;
 }
 
-/** The sample's result as this version of the engine would have made it. */
+/** Month-to-month shocks of the level, sd of ln users; the sample itself has none. */
+const NOISE = 0.02;
+
+/** The sample's result as this version of the engine would have made it, under the error model that the app asks for. */
 export function sampleResult(): { report: FitReport; draws: DrawSet } {
   const { facts, draws } = makeSample('coexistence');
-  return { report: { ...facts.report, engineVersion: ENGINE_VERSION }, draws };
+  const { errorModel } = DEFAULT_FIT_OPTIONS;
+  return {
+    report: { ...facts.report, engineVersion: ENGINE_VERSION, errorModel },
+    draws: { ...addColumns(draws, ['noise1', 'noise2'], NOISE), errorModel },
+  };
+}
+
+function addColumns(draws: DrawSet, names: string[], value: number): DrawSet {
+  const width = draws.columns.length;
+  const rows = Array.from({ length: draws.count }, (_, i) => [
+    ...draws.values.slice(i * width, (i + 1) * width),
+    ...names.map(() => value),
+  ]);
+  return { ...draws, columns: [...draws.columns, ...names], values: rows.flat() };
 }
 
 export function createFakeRun({

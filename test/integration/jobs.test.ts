@@ -59,7 +59,10 @@ describeOnDatabases('jobs', (readUrl) => {
   }
 
   /** A worker as a process of its own, ready to work. */
-  async function startProcess(program: string, variables: Record<string, string> = {}): Promise<ChildProcess> {
+  async function startProcess(
+    program: string,
+    variables: Record<string, string> = {},
+  ): Promise<ChildProcess> {
     const env = { ...process.env, ...variables, DATABASE_URL: readUrl(), LOG_LEVEL: 'info' };
     const args = ['--conditions=react-server', '--import', 'tsx', program];
     const child = spawn(process.execPath, args, { env, stdio: ['ignore', 'inherit', 'pipe'] });
