@@ -37,11 +37,13 @@ export async function ensureClient(root, runNode) {
  * @param {() => void} onBuild called before a build starts
  */
 export async function ensureBuilt(root, distFolder, runNode, onBuild) {
-  const isBuilt = existsSync(join(root, distFolder, 'BUILD_ID'));
-  if (isBuilt && hasStamp(join(root, distFolder, STAMP), hashSources(root, WEB_SOURCES))) return;
+  // Taken before the build: a source that changes while it runs must make the next start build again.
+  const hash = hashSources(root, WEB_SOURCES);
+  const stamp = join(root, distFolder, STAMP);
+  if (existsSync(join(root, distFolder, 'BUILD_ID')) && hasStamp(stamp, hash)) return;
   onBuild();
   await runNode(['node_modules/next/dist/bin/next', 'build'], 'Building the web app');
-  stampBuild(root, distFolder);
+  writeFileSync(stamp, hash);
 }
 
 /** Notes that the build was made from the sources as they are now. */
