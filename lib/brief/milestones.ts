@@ -2,7 +2,7 @@
  * Milestones: when something comes, with its 90 % interval given that it comes, and the chance that it never does.
  * "Never" means: not within the window that was searched.
  */
-import type { Milestone } from '../forecast/report';
+import type { Interval, Milestone } from '../forecast/report';
 import { LIKELY_ABOVE, UNLIKELY_BELOW, wordProbability } from './probability-words';
 import { possessive, run, sentence } from './text';
 import type { MilestoneRow, Sentence } from './types';
@@ -73,12 +73,13 @@ function describeNearDestination(words: Words): MilestoneRow {
 }
 
 function nearSentence(words: Words, value: string, chance: string): Sentence {
-  const { nearDestination } = words.facts.report.outlook;
-  const isExpected = nearDestination.monthsAhead !== null && nearDestination.chance > LIKELY_ABOVE;
-  if (isExpected)
-    return sentence(`The market comes within 5\u00a0% of where it is heading ${value}; ${chance}.`);
+  const { chance: probability, monthsAhead } = words.facts.report.outlook.nearDestination;
+  const where = 'within 5\u00a0% of where it is heading';
+  if (probability > LIKELY_ABOVE && monthsAhead)
+    return sentence(`The market comes ${where} ${value}; ${chance}.`);
+  if (!monthsAhead) return sentence(`The market shows no sign of coming ${where}; ${chance}.`);
   return sentence(
-    `Coming within 5\u00a0% of where the market is heading ${value.replace(/^no sign/, 'shows no sign')}; ${chance}.`,
+    `The market may never come ${where}; if it does, ${spellWhen(words, monthsAhead)}; ${chance}.`,
   );
 }
 
@@ -96,13 +97,17 @@ function describeHalfLife(words: Words): MilestoneRow | null {
   };
 }
 
-/** "around March 2027 (Aug 2026 to Jun 2029)", with "may never come" as far as the chance says so. */
-function spellTime(words: Words, milestone: Milestone): string {
-  const { monthsAhead, chance } = milestone;
+/** When it comes, with "may never come" as far as the chance says so. */
+function spellTime(words: Words, { monthsAhead, chance }: Milestone): string {
   if (!monthsAhead) return chance < 0.01 ? 'no sign of it' : 'may never come';
-  const when = `${words.months.when(monthsAhead, words.lastMonth)} (${words.months.interval(monthsAhead, words.lastMonth)})`;
-  if (chance > LIKELY_ABOVE) return when;
-  return `may never come; if it does, ${when}`;
+  const when = spellWhen(words, monthsAhead);
+  return chance > LIKELY_ABOVE ? when : `may never come; if it does, ${when}`;
+}
+
+/** "around March 2027 (Aug 2026 to Jun 2029)". */
+function spellWhen(words: Words, monthsAhead: Interval): string {
+  const { months, lastMonth } = words;
+  return `${months.when(monthsAhead, lastMonth)} (${months.interval(monthsAhead, lastMonth)})`;
 }
 
 /** "82 % within 10 years". */

@@ -22,6 +22,8 @@ export interface NumberFormat {
   usersInterval(width: Width): string;
   /** Signed users: "−4,200". */
   usersDifference(value: number, width?: Width): string;
+  /** "−9,000 to −800". */
+  usersDifferenceInterval(width: Width): string;
   /** A chance over draws, or a forecast share: "88 %", "<1 %" down to 0, ">99 %" up to 1. */
   chance(probability: number): string;
   /** "44 to 61 %", "<1 to 12 %". */
@@ -40,6 +42,8 @@ export interface NumberFormat {
   /** A plain number. */
   number(value: number, width?: Width): string;
   numberInterval(width: Width): string;
+  /** A number with as many decimals as asked for, for quantities judged by one of them. */
+  decimals(value: number, count: number): string;
   /** Short axis label: "400k", "1.2M". */
   axis(value: number): string;
 }
@@ -67,6 +71,10 @@ function usersFormat({ spell }: StepSpeller) {
   const exponent = (value: number, width?: Width) => Math.max(0, stepExponent(value, width));
   const spellUsers = (value: number, step: number) =>
     value > 0 && value < 0.5 ? `<${spell(1, 0)}` : spell(value, step, 0);
+  const spellDifference = (value: number, width?: Width) => {
+    if (value !== 0 && Math.abs(value) < 0.5) return 'about 0';
+    return withSign(spell(value, exponent(value, width), 0));
+  };
   return {
     users: (value: number, width?: Width) => spellUsers(value, exponent(value, width)),
     usersInterval: (width: Width) => {
@@ -74,9 +82,10 @@ function usersFormat({ spell }: StepSpeller) {
       const [low, high] = [spellUsers(width.q05, step), spellUsers(width.q95, step)];
       return low === high ? low : `${low} to ${high}`;
     },
-    usersDifference: (value: number, width?: Width) => {
-      if (value !== 0 && Math.abs(value) < 0.5) return 'about 0';
-      return withSign(spell(value, exponent(value, width), 0));
+    usersDifference: spellDifference,
+    usersDifferenceInterval: (width: Width) => {
+      const [low, high] = [spellDifference(width.q05, width), spellDifference(width.q95, width)];
+      return low === high ? low : `${low} to ${high}`;
     },
   };
 }
@@ -122,7 +131,7 @@ function pointsFormat({ spell, spellRange }: StepSpeller) {
       const percent = scaleWidth(width, 100);
       const step = exponent(0, percent);
       const isNothing = [percent.q05, percent.q95].every((end) => isZero(spell(end, step, POINTS_FINEST)));
-      if (isNothing) return `about 0${UNIT_SPACE}points`;
+      if (isNothing) return `${width.q05 === 0 && width.q95 === 0 ? '' : 'about '}0${UNIT_SPACE}points`;
       return `${spellRange(percent.q05, percent.q95, step, POINTS_FINEST, withSign)}${UNIT_SPACE}points`;
     },
   };
@@ -133,6 +142,7 @@ function plainFormat({ spell, spellRange }: StepSpeller) {
     width ? stepExponent(value, width) : shortestExponent(value, DIGITS_WITHOUT_INTERVAL);
   const percentExponent = (value: number, width?: Width) => Math.min(1, exponent(value, width));
   return {
+    decimals: (value: number, count: number) => spell(value, -count, -count),
     percent: (fraction: number, width?: Width) =>
       `${spell(fraction * 100, percentExponent(fraction * 100, width && scaleWidth(width, 100)))}${UNIT_SPACE}%`,
     percentInterval: (width: Width) => {

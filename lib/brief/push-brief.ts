@@ -19,6 +19,9 @@ import type {
 } from './types';
 import { createWords, DEFAULT_LOCALE, intervalAt, type Words } from './words';
 
+/** Least half-height of a difference figure, as part of the whole. */
+const LEAST_REACH = 0.01;
+
 export function buildPushBrief(
   comparison: ScenarioComparison,
   facts: BriefFacts,
@@ -97,7 +100,10 @@ function buildDifference(
     return { ...labelMonth(words, h), points };
   });
   const ends = keys.flatMap((key) => [...comparison.difference[key].q05, ...comparison.difference[key].q95]);
-  const axis = axisAroundZero(Math.min(...ends), Math.max(...ends), (value) => spellTick(words, keys, value));
+  const least = leastReach(comparison, keys);
+  const axis = axisAroundZero(Math.min(-least, ...ends), Math.max(least, ...ends), (value) =>
+    spellTick(words, keys, value),
+  );
   const monthDomain: [number, number] = [words.lastMonth, words.lastMonth + comparison.horizonMonths];
   return {
     series: keys.map((key) => ({
@@ -113,6 +119,12 @@ function buildDifference(
     monthTicks: monthTicks(...monthDomain, words.months),
     table: tabulateDifference(words, keys, rows),
   };
+}
+
+/** The axis shows at least a point of share, or a hundredth of the users, either way: a trifle must not look like a landslide. */
+function leastReach({ baseline }: ScenarioComparison, keys: ForecastSeriesKey[]): number {
+  if (keys.includes('share')) return LEAST_REACH;
+  return LEAST_REACH * Math.max(...keys.flatMap((key) => baseline[key].q50));
 }
 
 /** No push has done anything in the last observed month: the difference starts from 0. */
@@ -166,7 +178,7 @@ function tabulateCheckpoints(words: Words, comparison: ScenarioComparison): Figu
   const spell = (key: (typeof keys)[number], at: { q05: number; q50: number; q95: number }) =>
     key === 'share'
       ? `${words.numbers.points(at.q50, at)} (${words.numbers.pointsInterval(at)})`
-      : `${words.numbers.usersDifference(at.q50, at)} (${words.numbers.usersDifference(at.q05, at)} to ${words.numbers.usersDifference(at.q95, at)})`;
+      : `${words.numbers.usersDifference(at.q50, at)} (${words.numbers.usersDifferenceInterval(at)})`;
   return {
     title: 'Difference to no push',
     columns: ['Month', words.focal, words.rival, `${possessive(words.focal)} share`],

@@ -6,14 +6,15 @@ import { sentence, strong } from './text';
 import type { SamplerHealth } from './types';
 import type { Words } from './words';
 
+/** R-hat is judged in its third decimal. */
+const RHAT_DECIMALS = 3;
+
 export function describeSampler(words: Words): SamplerHealth {
   const { diagnostics, seed, engineVersion } = words.facts.report;
   const { numbers } = words;
   const isSound = diagnostics.status === 'converged';
   const agreement =
-    diagnostics.rHat === null
-      ? 'not measured'
-      : numbers.number(Number(diagnostics.rHat.toFixed(3)), RHAT_DIGITS);
+    diagnostics.rHat === null ? 'not measured' : numbers.decimals(diagnostics.rHat, RHAT_DECIMALS);
   const ess = diagnostics.ess === null ? 'not measured' : numbers.users(Math.floor(diagnostics.ess));
   const line = isSound
     ? sentence(
@@ -44,6 +45,3 @@ export function describeSampler(words: Words): SamplerHealth {
     ],
   };
 }
-
-/** R-hat is told to three decimals. */
-const RHAT_DIGITS = { q05: 0, q95: 0.009 };

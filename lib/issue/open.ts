@@ -42,8 +42,7 @@ export function openIssued(
   };
 }
 
-/** The day in the time zone it was written in, which is UTC for stored forecasts. */
+/** The day in UTC, so that every reader sees the same. */
 function spellDay(iso: string, locale: string): string {
-  const day = new Date(`${iso.slice(0, 10)}T00:00:00Z`);
-  return new Intl.DateTimeFormat(locale, { dateStyle: 'long', timeZone: 'UTC' }).format(day);
+  return new Intl.DateTimeFormat(locale, { dateStyle: 'long', timeZone: 'UTC' }).format(new Date(iso));
 }
