@@ -2,7 +2,7 @@
  * Adaptive integration of y' = f(t, y): Dormand & Prince 5(4) with local extrapolation, dense output of order 4, and a step size
  * controller with memory (Hairer, Norsett & Wanner, Solving Ordinary Differential Equations I, sections II.4 to II.6).
  *
- *   error of a step = sqrt(mean_i (e_i / (absolute + relative max(|y_i|, |y1_i|)))^2), accepted when <= 1
+ *   error of a step = max_i |e_i| / (absolute_i + relative max(|y_i|, |y1_i|)), accepted when <= 1
  *   h_new = h clamp(0.9 error^-(1/5 - 0.03) error_before^0.04, 0.2, 10)
  *
  * How it went is a returned status, never an exception; a non-finite trial shrinks the step. Runs backwards when tEnd < t0. Nothing is
@@ -98,6 +98,7 @@ class IntegrationRun {
   private readonly n: number;
   private readonly y: Float64Array;
   private readonly y1: Float64Array;
+  private readonly error: Float64Array;
   /** Stage slopes, one Float64Array each. */
   private readonly k: Float64Array[];
   private readonly absolute: Float64Array;
@@ -122,6 +123,7 @@ class IntegrationRun {
     this.t = t0;
     this.y = Float64Array.from(y0);
     this.y1 = new Float64Array(this.n);
+    this.error = new Float64Array(this.n);
     this.k = Array.from({ length: STAGES }, () => new Float64Array(this.n));
     this.absolute = spread(settings.absoluteTolerance, this.n);
     this.direction = tEnd >= t0 ? 1 : -1;
@@ -167,27 +169,27 @@ class IntegrationRun {
   private trial(h: number): number {
     const { k, y, y1, n, t } = this;
     for (let s = 1; s < STAGES; s++) {
-      for (let i = 0; i < n; i++) {
-        let sum = 0;
-        for (let j = 0; j < s; j++) sum += A[s * STAGES + j] * k[j][i];
-        y1[i] = y[i] + h * sum;
-      }
+      y1.fill(0);
+      for (let j = 0; j < s; j++) addScaled(y1, A[s * STAGES + j], k[j]);
+      for (let i = 0; i < n; i++) y1[i] = y[i] + h * y1[i];
       this.evaluate(t + C[s] * h, y1, k[s]);
     }
     return this.scaledError(h);
   }
 
   private scaledError(h: number): number {
-    const { k, y, y1, n } = this;
-    let squares = 0;
+    const { k, y, y1, error, n } = this;
+    error.fill(0);
+    for (let s = 0; s < STAGES; s++) addScaled(error, ERROR[s], k[s]);
+    let largest = 0;
     for (let i = 0; i < n; i++) {
-      let error = 0;
-      for (let s = 0; s < STAGES; s++) error += ERROR[s] * k[s][i];
       // A component that is exactly 0 and stays there may have no tolerance at all.
-      if (error === 0) continue;
-      squares += ((h * error) / this.tolerance(i, Math.max(Math.abs(y[i]), Math.abs(y1[i])))) ** 2;
+      if (error[i] === 0) continue;
+      const scaled = Math.abs(h * error[i]) / this.tolerance(i, Math.max(Math.abs(y[i]), Math.abs(y1[i])));
+      if (!(scaled >= 0)) return Number.NaN;
+      if (scaled > largest) largest = scaled;
     }
-    return Math.sqrt(squares / n);
+    return largest;
   }
 
   private accept(h: number, error: number, isLast: boolean): void {
@@ -234,11 +236,12 @@ class IntegrationRun {
   }
 
   private scaledNorm(values: Float64Array): number {
-    let squares = 0;
+    let largest = 0;
     for (let i = 0; i < this.n; i++) {
-      if (values[i] !== 0) squares += (values[i] / this.tolerance(i, Math.abs(this.y[i]))) ** 2;
+      const size = Math.abs(values[i]);
+      if (size > 0) largest = Math.max(largest, size / this.tolerance(i, Math.abs(this.y[i])));
     }
-    return Math.sqrt(squares / this.n);
+    return largest;
   }
 
   private tolerance(i: number, size: number): number {
@@ -249,6 +252,11 @@ class IntegrationRun {
     this.evaluations++;
     this.rhs(t, y, out);
   }
+}
+
+/** to += factor from */
+function addScaled(to: Float64Array, factor: number, from: Float64Array): void {
+  for (let i = 0; i < to.length; i++) to[i] += factor * from[i];
 }
 
 function spread(value: number | ArrayLike<number>, n: number): Float64Array {

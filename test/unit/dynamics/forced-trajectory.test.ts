@@ -1,5 +1,5 @@
 import fc from 'fast-check';
-import { describe, expect, it } from 'vitest';
+import { describe, expect, it, vi } from 'vitest';
 import {
   FORCED_RELATIVE_TOLERANCE,
   ForcedIntegrator,
@@ -200,6 +200,17 @@ describe('fillForcedTrajectory', () => {
       fillForcedTrajectory({ ...SYSTEM, r1 }, START, forcing, MONTHS, out);
     }
     expect(out).toEqual(pathOf(SYSTEM, START, [PUSH]));
+  });
+
+  it('takes hardly more than one step a month in an ordinary market: the others leave the shared table', () => {
+    const forcing = createForcing([PUSH]);
+    const otherSteps = vi.spyOn(forcing, 'fillStageEffects');
+    fillForcedTrajectory(SYSTEM, START, forcing, MONTHS, new Float64Array(2 * (MONTHS + 1)));
+    expect(otherSteps.mock.calls.length).toBeLessThan(MONTHS / 6);
+    // A growth of 100 % a month is not ordinary.
+    otherSteps.mockClear();
+    fillForcedTrajectory({ ...SYSTEM, r2: 1 }, START, forcing, MONTHS, new Float64Array(2 * (MONTHS + 1)));
+    expect(otherSteps.mock.calls.length).toBeGreaterThan(MONTHS / 6);
   });
 
   it.each([

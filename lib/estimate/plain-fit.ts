@@ -1,0 +1,152 @@
+/**
+ * The plain least-squares fit: eight parameters, no prior, errors independent on the log scale or on the scale of the counts.
+ *
+ * It is worked in the crowding form N_i (r_i - b_ii N_i - b_ij N_j), b >= 0, and says what that form can say. A firm that only falls or
+ * only grows in the window has b_ii = 0 as well as any small b_ii: its saturation level does not exist, and with it goes one of
+ *
+ *   alpha = r2 b12/(r1 b22),   beta = r1 b21/(r2 b11).
+ *
+ * The formula would give infinity there and a classifier would read a race; the answer is 'notIdentified'.
+ * Which of the two error scales is right, the data seldom tell, and the outcome may hang on it (Pascual & Kareiva 1996, Ecology 77:337):
+ * fit both.
+ */
+import { classifyOutcome, type Outcome } from '../dynamics/outcome';
+import { type CrowdingForm, fromCrowdingForm } from '../dynamics/system';
+import { fitNonNegative, type NonNegativeFit } from '../numeric/non-negative-fit';
+import type { Termination } from '../numeric/termination';
+import {
+  createPlainProblem,
+  type ErrorScale,
+  FIRST_CROWDING,
+  PLAIN_PARAMETER_COUNT,
+  type PlainProblem,
+  type PlainSeries,
+} from './plain-problem';
+import { createPlainStarts } from './plain-starts';
+
+export type PlainParameterId = 'r1' | 'r2' | 'n1Start' | 'n2Start' | 'b11' | 'b12' | 'b21' | 'b22';
+
+const IDS: readonly PlainParameterId[] = ['r1', 'r2', 'n1Start', 'n2Start', 'b11', 'b12', 'b21', 'b22'];
+
+export interface PlainFitOptions {
+  errorScale: ErrorScale;
+  starts: number;
+  seed: number;
+}
+
+export const DEFAULT_PLAIN_FIT_OPTIONS: Readonly<PlainFitOptions> = {
+  errorScale: 'log',
+  starts: 12,
+  seed: 1,
+};
+
+export interface PlainFit {
+  /** Why the polish of the best start stopped. */
+  status: Termination;
+  /** Sum of squared residuals, and their number. */
+  rss: number;
+  observations: number;
+  /** Estimates: rates per unit of time, b per user and unit of time, start levels in users. */
+  estimates: Record<PlainParameterId, number>;
+  /** Gauss-Newton standard errors with RSS/(n - free parameters); null for all when not available, and for one at its bound. */
+  standardErrors: Record<PlainParameterId, number | null>;
+  /** Coefficients at their bound 0. */
+  atZero: PlainParameterId[];
+  /** null where the data do not bend the firm's growth: see `MAX_SATURATION_RATIO`. */
+  k1: number | null;
+  k2: number | null;
+  alpha: number | null;
+  beta: number | null;
+  outcome: Outcome | 'notIdentified';
+  /** One row per start after the first pass: its RSS (null when nothing finite was found) and why it stopped. */
+  starts: { rss: number | null; status: Termination }[];
+  /** Starts that came within `SAME_VALUE` of the best. */
+  startsAtBest: number;
+}
+
+/** A saturation level this many times the largest count is none: the counts cannot bend towards it. */
+export const MAX_SATURATION_RATIO = 1000;
+/** Relative difference of RSS below which two starts found the same. */
+export const SAME_VALUE = 1e-4;
+/** First pass: the value to about 1e-6 of itself, enough to tell which starts go on. */
+const FIRST_PASS = { noise: 'estimated', gradientTolerance: 1e-3, maxIterations: 40 } as const;
+/** Second pass: integration at 1e-10 leaves a rounding of about this in the gradient. */
+const SECOND_PASS = { noise: 'estimated', gradientTolerance: 1e-7, bursts: 0 } as const;
+
+/**
+ * Fits from several starts and polishes the best.
+ * @throws RangeError when times do not rise, a firm has no positive count, or there are fewer counts than parameters
+ */
+export function fitPlain(series: PlainSeries, options: Partial<PlainFitOptions> = {}): PlainFit {
+  const { errorScale, starts, seed } = { ...DEFAULT_PLAIN_FIT_OPTIONS, ...options };
+  const problem = createPlainProblem(series, errorScale);
+  if (!(problem.residualCount >= PLAIN_PARAMETER_COUNT)) {
+    throw new RangeError(
+      `fitPlain: ${PLAIN_PARAMETER_COUNT} counts are needed, got ${problem.residualCount}`,
+    );
+  }
+  const isBounded = IDS.map((_, j) => j >= FIRST_CROWDING);
+  const ends = createPlainStarts(series, problem.scales, starts, seed).map((start) =>
+    fitNonNegative(problem, start, isBounded, FIRST_PASS),
+  );
+  const first = ends.reduce((a, b) => (b.fit.cost < a.fit.cost ? b : a));
+  const best = fitNonNegative(problem, first.theta, isBounded, SECOND_PASS);
+  return describe(best, ends, problem);
+}
+
+function describe(best: NonNegativeFit, ends: NonNegativeFit[], problem: PlainProblem): PlainFit {
+  const units = unitsOf(problem.scales);
+  const natural = best.theta.map((value, j) => (j < FIRST_CROWDING ? Math.exp(value) : value) * units[j]);
+  const estimates = Object.fromEntries(IDS.map((id, j) => [id, natural[j]])) as PlainFit['estimates'];
+  const rssOf = (end: NonNegativeFit) => (Number.isFinite(end.fit.cost) ? 2 * end.fit.cost : null);
+  return {
+    status: best.fit.status,
+    rss: 2 * best.fit.cost,
+    observations: problem.residualCount,
+    estimates,
+    standardErrors: standardErrorsOf(best, natural, units),
+    atZero: best.atZero.map((j) => IDS[j]),
+    ...readMarket(estimates, problem.scales),
+    starts: ends.map((end) => ({ rss: rssOf(end), status: end.fit.status })),
+    startsAtBest: ends.filter((end) => end.fit.cost <= (1 + SAME_VALUE) * best.fit.cost).length,
+  };
+}
+
+/** Factor from the scaled to the natural value of each parameter. */
+function unitsOf([s1, s2]: readonly [number, number]): number[] {
+  return [1, 1, s1, s2, 1 / s1, 1 / s2, 1 / s1, 1 / s2];
+}
+
+/** By the delta method: the first four are fitted as logarithms, se(v) = v se(ln v). */
+function standardErrorsOf(
+  best: NonNegativeFit,
+  natural: Float64Array,
+  units: number[],
+): PlainFit['standardErrors'] {
+  const { covariance } = best.fit;
+  const size = best.free.length;
+  const errorOf = (j: number): number | null => {
+    const i = best.free.indexOf(j);
+    if (!covariance || i < 0) return null;
+    return Math.sqrt(covariance[i * size + i]) * (j < FIRST_CROWDING ? natural[j] : units[j]);
+  };
+  return Object.fromEntries(IDS.map((id, j) => [id, errorOf(j)])) as PlainFit['standardErrors'];
+}
+
+/** Saturation levels, competition coefficients and outcome, each only as far as it exists. */
+function readMarket(
+  form: CrowdingForm,
+  scales: readonly [number, number],
+): Pick<PlainFit, 'k1' | 'k2' | 'alpha' | 'beta' | 'outcome'> {
+  const { r1, r2, b11, b12, b21, b22 } = form;
+  const isBent1 = b11 * scales[0] * MAX_SATURATION_RATIO > r1;
+  const isBent2 = b22 * scales[1] * MAX_SATURATION_RATIO > r2;
+  const system = isBent1 && isBent2 ? fromCrowdingForm(form) : null;
+  return {
+    k1: isBent1 ? r1 / b11 : null,
+    k2: isBent2 ? r2 / b22 : null,
+    alpha: isBent2 ? (r2 * b12) / (r1 * b22) : null,
+    beta: isBent1 ? (r1 * b21) / (r2 * b11) : null,
+    outcome: system ? classifyOutcome(system) : 'notIdentified',
+  };
+}
