@@ -8,14 +8,15 @@ import type { Tick } from '@/lib/brief/types';
 const NARROW_BELOW = 560;
 const TOP = 26;
 const AXIS_HEIGHT = 30;
-/** Average advance of a Public Sans letter at the label size; labels get this much room each. */
-const LETTER_WIDTH = 7.4;
+/** Room for a letter of a name at a line end: Public Sans, semibold, 14 px, wide letters included. */
+const LETTER_WIDTH = 8.6;
 const LONGEST_NAME_WIDTH = 150;
 const NAME_GAP = 8;
 const TICK_LETTER_WIDTH = 7.2;
 /** Between a tick's label and its axis, with some air at the left. */
 const TICK_ROOM = 14;
 const LEAST_TICK_GAP = 14;
+const LEAST_LOG_GAP = 4;
 
 export interface PlotBox {
   x: number;
@@ -63,6 +64,18 @@ export function thinTicks(ticks: Tick[], domain: [number, number], width: number
   const spacing = (ticks[1]!.value - ticks[0]!.value) * pixelsPerUnit;
   const every = Math.max(1, Math.ceil(room / spacing));
   return ticks.filter((_, index) => index % every === 0);
+}
+
+/** The same on a log axis: as many as fit, 1 (100 %) always among them. Ticks at 0 or below have no place there. */
+export function thinLogTicks(ticks: Tick[], domain: [number, number], width: number): Tick[] {
+  const [low, high] = domain.map(Math.log) as [number, number];
+  const place = (tick: Tick) => ((Math.log(tick.value) - low) / (high - low)) * width;
+  const room = longest(ticks.map((tick) => tick.label)) * TICK_LETTER_WIDTH + LEAST_LOG_GAP;
+  const kept: Tick[] = [];
+  for (const tick of [...ticks].sort((a, b) => Math.abs(Math.log(a.value)) - Math.abs(Math.log(b.value)))) {
+    if (kept.every((other) => Math.abs(place(other) - place(tick)) >= room)) kept.push(tick);
+  }
+  return kept.sort((a, b) => a.value - b.value);
 }
 
 /** Pixel of a value on a linear axis that runs from `from` to `to` pixels. */

@@ -8,8 +8,8 @@ import styles from './forecast-figure.module.css';
 import type { ForecastLayout } from './forecast-layout';
 import { ABOVE_MARKS } from './map-layout';
 
-/** From here on (share of the plot's width) the label stands left of its line. */
-const LABEL_LEFT_FROM = 0.6;
+/** Room for a letter of the label: Literata italic, 14 px. */
+const LETTER_WIDTH = 7;
 const LABEL_GAP = 7;
 const NAME_GAP = 8;
 /** Inside the plot a name stands this far above its line. */
@@ -19,7 +19,7 @@ export function ForecastFromLine({ month, label }: { month: number; label: strin
   const x = useXAxisScale()?.(month);
   const plot = usePlotArea();
   if (x === undefined || !plot) return null;
-  const isLeft = (x - plot.x) / plot.width > LABEL_LEFT_FROM;
+  const isLeft = x + LABEL_GAP + label.length * LETTER_WIDTH > plot.x + plot.width;
   return (
     <g>
       <line x1={x} x2={x} y1={plot.y - 14} y2={plot.y + plot.height} className={styles.fromLine} />

@@ -3,6 +3,7 @@
 /** The odds map inside Recharts: alpha against beta on log axes, one dot for each draw shown. */
 import { Scatter, ScatterChart } from 'recharts';
 import type { OddsMap } from '@/lib/brief/types';
+import { thinLogTicks } from './forecast-layout';
 import { MapFrame, renderMapAxes } from './map-axes';
 import type { MapLayout } from './map-layout';
 import { OddsLines, OddsQuarters } from './odds-layers';
@@ -19,7 +20,7 @@ export function OddsPlot({ map, layout, size }: OddsPlotProps) {
   return (
     <ScatterChart width={size.width} height={size.height} margin={layout.margin} accessibilityLayer={false}>
       {renderMapAxes(
-        { domain: map.domain.x, ticks: map.xTicks },
+        { domain: map.domain.x, ticks: thinLogTicks(map.xTicks, map.domain.x, layout.plot.width) },
         { domain: map.domain.y, ticks: map.yTicks },
         layout,
         'log',
