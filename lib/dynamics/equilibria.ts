@@ -14,8 +14,8 @@
 import { isOnBoundary } from './outcome';
 import { assertSystem, type CompetitionSystem, type State } from './system';
 
-export type EquilibriumPlace = 'empty' | 'firstAlone' | 'secondAlone' | 'shared';
-export type EquilibriumKind = 'source' | 'saddle' | 'sink' | 'non-hyperbolic';
+type EquilibriumPlace = 'empty' | 'firstAlone' | 'secondAlone' | 'shared';
+type EquilibriumKind = 'source' | 'saddle' | 'sink' | 'non-hyperbolic';
 
 export interface Equilibrium {
   place: EquilibriumPlace;

@@ -27,7 +27,7 @@ export interface IntegrateOptions {
   shouldStop: ((t: number, y: Float64Array) => boolean) | null;
 }
 
-export const DEFAULT_INTEGRATE_OPTIONS: Readonly<IntegrateOptions> = {
+const DEFAULT_INTEGRATE_OPTIONS: Readonly<IntegrateOptions> = {
   relativeTolerance: 1e-9,
   absoluteTolerance: 1e-12,
   maxSteps: 10_000,
@@ -36,7 +36,7 @@ export const DEFAULT_INTEGRATE_OPTIONS: Readonly<IntegrateOptions> = {
   shouldStop: null,
 };
 
-export type IntegrationStatus =
+type IntegrationStatus =
   | 'reached-end'
   | 'stopped' // shouldStop said so
   | 'too-many-steps'

@@ -24,7 +24,7 @@ import {
 } from './plain-problem';
 import { createPlainStarts } from './plain-starts';
 
-export type PlainParameterId = 'r1' | 'r2' | 'n1Start' | 'n2Start' | 'b11' | 'b12' | 'b21' | 'b22';
+type PlainParameterId = 'r1' | 'r2' | 'n1Start' | 'n2Start' | 'b11' | 'b12' | 'b21' | 'b22';
 
 const IDS: readonly PlainParameterId[] = ['r1', 'r2', 'n1Start', 'n2Start', 'b11', 'b12', 'b21', 'b22'];
 
@@ -34,7 +34,7 @@ export interface PlainFitOptions {
   seed: number;
 }
 
-export const DEFAULT_PLAIN_FIT_OPTIONS: Readonly<PlainFitOptions> = {
+const DEFAULT_PLAIN_FIT_OPTIONS: Readonly<PlainFitOptions> = {
   errorScale: 'log',
   starts: 12,
   seed: 1,
@@ -65,9 +65,9 @@ export interface PlainFit {
 }
 
 /** A saturation level this many times the largest count is none: the counts cannot bend towards it. */
-export const MAX_SATURATION_RATIO = 1000;
+const MAX_SATURATION_RATIO = 1000;
 /** Relative difference of RSS below which two starts found the same. */
-export const SAME_VALUE = 1e-4;
+const SAME_VALUE = 1e-4;
 /** First pass: the value to about 1e-6 of itself, enough to tell which starts go on. */
 const FIRST_PASS = { noise: 'estimated', gradientTolerance: 1e-3, maxIterations: 40 } as const;
 /** Second pass: integration at 1e-10 leaves a rounding of about this in the gradient. */

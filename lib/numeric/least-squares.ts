@@ -49,7 +49,7 @@ const ATTEMPTS = [
   { from: 'start', firstRadiusShare: 100 },
 ] as const;
 
-export type CovarianceReason = 'available' | 'not-converged' | 'flat-direction' | 'no-degrees-of-freedom';
+type CovarianceReason = 'available' | 'not-converged' | 'flat-direction' | 'no-degrees-of-freedom';
 
 export interface LeastSquaresFit {
   status: Termination;

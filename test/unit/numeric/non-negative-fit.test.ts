@@ -1,4 +1,6 @@
+import fc from 'fast-check';
 import { describe, expect, it } from 'vitest';
+import { fitLeastSquares } from '@/lib/numeric/least-squares';
 import type { LeastSquaresProblem } from '@/lib/numeric/least-squares-problem';
 import { fitNonNegative } from '@/lib/numeric/non-negative-fit';
 import { LINE } from './problems';
@@ -17,6 +19,25 @@ function createLinear(rows: number[][], b: number[]): LeastSquaresProblem {
       return true;
     },
   };
+}
+
+/** Least cost over every choice of parameters at zero whose free fit has no negative one: the answer by trying all. */
+function leastCostByTrying(rows: number[][], b: number[]): number {
+  const n = rows[0].length;
+  let least = b.reduce((sum, value) => sum + value * value, 0) / 2;
+  for (let choice = 1; choice < 2 ** n; choice++) {
+    const columns = Array.from({ length: n }, (_, j) => j).filter((j) => choice & (1 << j));
+    const problem = createLinear(
+      rows.map((row) => columns.map((j) => row[j])),
+      b,
+    );
+    const fit = fitLeastSquares(
+      problem,
+      columns.map(() => 0),
+    );
+    if (Math.min(...fit.theta) >= 0) least = Math.min(least, fit.cost);
+  }
+  return least;
 }
 
 describe('fitNonNegative', () => {
@@ -44,6 +65,22 @@ describe('fitNonNegative', () => {
     expect(end.atZero).toEqual([1]);
     expect(end.free).toEqual([0]);
     expect(end.fit.covariance).toHaveLength(1);
+  });
+
+  it('finds the least cost of all choices of parameters at zero, from any start', () => {
+    const entry = fc.integer({ min: -9, max: 9 });
+    const vector = (length: number) => fc.array(entry, { minLength: length, maxLength: length });
+    const anyRows = fc.array(vector(4), { minLength: 6, maxLength: 6 });
+    fc.assert(
+      fc.property(anyRows, vector(6), vector(4), (rows, b, start) => {
+        const least = leastCostByTrying(rows, b);
+        const end = fitNonNegative(createLinear(rows, b), start, [true, true, true, true]);
+        // The gradient tolerance of 1e-8 leaves 1e-16 of the cost; exact fits end at rounding.
+        expect(end.fit.cost).toBeLessThanOrEqual(least * (1 + 1e-9) + 1e-9);
+        expect(Math.min(...end.theta)).toBeGreaterThanOrEqual(0);
+      }),
+      { seed: 1974, numRuns: 300, endOnFailure: true },
+    );
   });
 
   it('frees a parameter that starts at zero but does not belong there', () => {
