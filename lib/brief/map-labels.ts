@@ -13,6 +13,8 @@ const LINE_HEIGHT = 1.25;
 const GAP = 6;
 /** Points of a path nearer than this, pixels, read as one. */
 const TOLD_APART = 4;
+/** Directions tried around a point. */
+const DIRECTIONS = 16;
 /** Half the size of a mark, pixels. */
 const MARK_RADIUS = 6;
 
@@ -20,10 +22,10 @@ const MARK_RADIUS = 6;
 const COST = {
   outsidePerPixel: 40,
   coveredWordPerSquarePixel: 10,
-  crossedLinePerPixel: 1,
+  crossedLinePerPixel: 5,
   coveredMark: 60,
-  coveredDot: 0.6,
-  nearerToAnotherLine: 25,
+  coveredDot: 0.5,
+  nearerToAnotherLine: 40,
   distancePerPixel: 0.15,
 };
 
@@ -118,7 +120,7 @@ function besideLine(line: MapPoint[]): Candidate[] {
     for (const side of [1, -1]) {
       const normal: MapPoint = [-along[1] * side, along[0] * side];
       const anchor = Math.abs(normal[0]) < 0.35 ? 'middle' : normal[0] > 0 ? 'start' : 'end';
-      for (const gap of [GAP, 2 * GAP]) {
+      for (const gap of [GAP, 2 * GAP, 4 * GAP]) {
         candidates.push({
           x: at[0] + normal[0] * gap,
           y: at[1] + normal[1] * (gap + (anchor === 'middle' ? GAP : 0)),
@@ -145,12 +147,12 @@ function pointAlong(line: MapPoint[], lengths: number[], length: number): [MapPo
   return [line[0] ?? [0, 0], [1, 0]];
 }
 
-/** Eight directions at growing distance. */
+/** All around at growing distance. */
 function aroundPoint(point: MapPoint): Candidate[] {
   const candidates: Candidate[] = [];
-  for (const reach of [MARK_RADIUS + GAP, 20, 32, 48]) {
-    for (let step = 0; step < 8; step++) {
-      const angle = (step * Math.PI) / 4;
+  for (const reach of [MARK_RADIUS + GAP, 18, 26, 36, 48]) {
+    for (let step = 0; step < DIRECTIONS; step++) {
+      const angle = (2 * Math.PI * step) / DIRECTIONS;
       const [dx, dy] = [Math.cos(angle), Math.sin(angle)];
       const anchor = Math.abs(dx) < 0.1 ? 'middle' : dx > 0 ? 'start' : 'end';
       candidates.push({
