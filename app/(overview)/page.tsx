@@ -10,6 +10,7 @@ import { Question } from '../_components/frame/question';
 import { MarketList } from '../_components/markets/market-list';
 import { Headline } from '../_components/text/headline';
 import { requireViewer } from '../_lib/require-viewer';
+import styles from './page.module.css';
 
 export const metadata: Metadata = { title: 'Markets' };
 
@@ -45,7 +46,7 @@ function FilledList({ viewer, markets }: ListProps) {
     <>
       <Headline>{headline(markets)}</Headline>
       {canWrite(viewer) ? (
-        <p style={{ marginBlock: '1.25rem 2.25rem' }}>
+        <p className={styles.action}>
           <Link href="/markets/new" className={buttonClass('main')}>
             Import a market
           </Link>
@@ -85,7 +86,7 @@ function EmptyList({ viewer }: { viewer: Viewer }) {
       >
         No market yet.
       </Headline>
-      <p style={{ marginBlockStart: '1.5rem' }}>
+      <p className={styles.action}>
         {canWrite(viewer) ? (
           <Link href="/markets/new" className={buttonClass('main')}>
             Import the first market

@@ -20,7 +20,7 @@ export function InviteForm() {
   const [state, act, isPending] = useActionState(createMemberLinkAction, START);
   return (
     <>
-      <form action={act} className={styles.form}>
+      <form action={act} className={styles.flushForm}>
         <ChoiceField label="Role" name="role" options={ROLES} />
         <ProblemNote explanation={state.explanation} />
         <Button type="submit" kind="main" isBusy={isPending} busyLabel="Making the link">

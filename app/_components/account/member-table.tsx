@@ -6,7 +6,8 @@ import styles from './member-table.module.css';
 export function MemberTable({ members }: { members: MemberRow[] }) {
   const hasEmail = members.some((member) => member.email !== null);
   return (
-    <div className={styles.scroller}>
+    // biome-ignore lint/a11y/noNoninteractiveTabindex: a frame that scrolls must be reachable by keyboard
+    <section className={styles.scroller} aria-label="Members" tabIndex={0}>
       <table className={styles.table}>
         <thead>
           <tr>
@@ -21,12 +22,12 @@ export function MemberTable({ members }: { members: MemberRow[] }) {
             <tr key={member.userId}>
               <th scope="row">{member.name}</th>
               <td>{member.role}</td>
-              {hasEmail ? <td className={styles.email}>{member.email}</td> : null}
+              {hasEmail ? <td>{member.email}</td> : null}
               <td>{formatDay(member.joinedAt)}</td>
             </tr>
           ))}
         </tbody>
       </table>
-    </div>
+    </section>
   );
 }

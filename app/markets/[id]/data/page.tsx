@@ -11,6 +11,7 @@ import { formatDay } from '@/app/_lib/locale';
 import { requestMarket } from '@/app/_lib/request-market';
 import type { MarketPage } from '@/lib/services/read-market';
 import { canWrite } from '@/lib/services/viewer';
+import styles from './page.module.css';
 
 export const metadata: Metadata = { title: 'Data' };
 
@@ -28,13 +29,15 @@ export default async function DataPage({ params }: { params: Promise<{ id: strin
         <Headline>
           {series.focal.length} months of {market.focalName} and {market.rivalName}.
         </Headline>
-        <HistoryFigure
-          series={series}
-          focalName={market.focalName}
-          rivalName={market.rivalName}
-          unit={market.unit}
-        />
-        <p>
+        <div className={styles.history}>
+          <HistoryFigure
+            series={series}
+            focalName={market.focalName}
+            rivalName={market.rivalName}
+            unit={market.unit}
+          />
+        </div>
+        <p className={styles.download}>
           <a href={`/markets/${id}/data/csv`} download>
             Download these counts as CSV
           </a>
