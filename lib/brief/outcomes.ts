@@ -1,7 +1,7 @@
 /** The four outcomes: which one is decided, who wins, what each is called and coloured. */
 import { type Odds, OUTCOMES, type Outcome, type Outlook } from '../forecast/report';
 import type { Tone } from './types';
-import { type FirmRole, otherFirm, type Words } from './words';
+import type { FirmRole, Words } from './words';
 
 const TONES: Record<Outcome, Tone> = {
   coexistence: 'both',
@@ -23,11 +23,6 @@ export function rankOutcomes(odds: Odds): Outcome[] {
 export function winnerOf(outcome: Outcome): FirmRole | null {
   if (outcome === 'exclusionByFocal') return 'focal';
   return outcome === 'exclusionByRival' ? 'rival' : null;
-}
-
-export function loserOf(outcome: Outcome): FirmRole | null {
-  const winner = winnerOf(outcome);
-  return winner && otherFirm(winner);
 }
 
 /** "both stay", "Quillfern alone", "head start decides". */

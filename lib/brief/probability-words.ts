@@ -16,8 +16,8 @@ export type ProbabilityWord =
 
 /** Above this an outcome counts as decided; the lower end of "likely". */
 export const LIKELY_ABOVE = 0.66;
-export const VERY_LIKELY_ABOVE = 0.9;
-export const VIRTUALLY_CERTAIN_ABOVE = 0.99;
+const VERY_LIKELY_ABOVE = 0.9;
+const VIRTUALLY_CERTAIN_ABOVE = 0.99;
 /** Below this: "unlikely". */
 export const UNLIKELY_BELOW = 0.33;
 const VERY_UNLIKELY_BELOW = 0.1;
