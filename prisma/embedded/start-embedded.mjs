@@ -2,6 +2,7 @@
  * The embedded PostgreSQL: PGlite behind a Unix socket, reached with the same driver as a real server.
  * The caller makes sure that only one process opens a data folder at a time (`lib/cli/launch/data-lock.mjs`).
  */
+import { mkdirSync } from 'node:fs';
 import { PGlite } from '@electric-sql/pglite';
 import { PGLiteSocketServer } from '@electric-sql/pglite-socket';
 import { shareSession } from './shared-session.mjs';
@@ -18,13 +19,14 @@ const MAX_CONNECTIONS = 100;
 
 /**
  * @param {object} options
- * @param {string | null} options.dataFolder where the database is kept; null: in memory
+ * @param {string | null} options.dataFolder where the database is kept, made for this account alone; null: in memory
  * @param {string | null} options.socketFolder where its socket goes if the path is short enough; null: a temporary folder
  * @param {(error: Error) => void} [options.onBroken] called when the database cannot go on
  * @returns {Promise<EmbeddedDatabase>}
  */
 export async function startEmbedded({ dataFolder, socketFolder, onBroken = () => {} }) {
-  const database = await PGlite.create(dataFolder === null ? 'memory://' : dataFolder);
+  if (dataFolder !== null) mkdirSync(dataFolder, { recursive: true, mode: 0o700 });
+  const database = await PGlite.create(dataFolder ?? 'memory://');
   const socket = makeSocketFolder(socketFolder);
   const server = new PGLiteSocketServer({
     db: shareSession(database, onBroken),

@@ -3,7 +3,7 @@
  * packages, database client, web build, database, migrations, demo markets, worker, web server.
  * Whatever happens, everything that was started is stopped again, the database last.
  */
-import { chmodSync, mkdirSync } from 'node:fs';
+import { mkdirSync } from 'node:fs';
 import { ensureBuilt, ensureClient } from './build.mjs';
 import { runToEnd, startChild } from './children.mjs';
 import { takeDataLock } from './data-lock.mjs';
@@ -108,11 +108,10 @@ async function start(settings, running, stopping) {
   sayReady(settings, ownerLink.trim());
 }
 
-/** Made readable by this account alone: it holds the database, its socket and the secret of the sessions. */
+/** A new one is this account's alone: it holds the database, its socket and the secret of the sessions. */
 function makeDataFolder(folder) {
   try {
     mkdirSync(folder, { recursive: true, mode: 0o700 });
-    chmodSync(folder, 0o700);
   } catch (error) {
     throw new LaunchProblem(
       `The data folder ${folder} cannot be used (${error.code}): set DATA_DIR to a folder that you may write to.`,

@@ -125,10 +125,11 @@ it('loses no row that was acknowledged when its process is killed', async () => 
   expect(found[0].n).toBeGreaterThanOrEqual(rows);
 });
 
-it('lets only this account near its socket, and takes a short folder when the path would be too long', async () => {
+it('lets only this account near its data and its socket, and takes a short folder when the path would be too long', async () => {
   const preferred = socketFolderOf(embedded);
   expect(preferred).toBe(join(folder, 'socket'));
   expect(statSync(preferred).mode & 0o777).toBe(0o700);
+  expect(statSync(join(folder, 'database')).mode & 0o777).toBe(0o700);
   await embedded.stop();
 
   embedded = await start(join(folder, 'very-long-name-'.repeat(8)));
