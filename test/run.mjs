@@ -16,7 +16,7 @@ const BIN = join(ROOT, 'node_modules', '.bin');
 const REPORTS = mkdtempSync(join(tmpdir(), 'elbowroom-test-'));
 
 const STEPS = [
-  { name: 'generate', command: ['prisma', 'generate'], isNeededByRest: true },
+  { name: 'generate', script: 'generate', isNeededByRest: true },
   { name: 'types', command: ['tsc', '--noEmit', '-p', '.'] },
   { name: 'lint', command: ['biome', 'check', '--error-on-warnings', '.'] },
   {
@@ -24,7 +24,7 @@ const STEPS = [
     command: ['depcruise', '--config', '.dependency-cruiser.cjs', 'lib', 'app', 'seed', 'prisma'],
   },
   { name: 'unused', command: ['knip'] },
-  { name: 'build', command: ['next', 'build'] },
+  { name: 'build', script: 'build' },
   { name: 'unit', project: 'unit' },
   { name: 'reference', project: 'reference' },
   { name: 'integration', project: 'integration' },
@@ -33,20 +33,10 @@ const STEPS = [
 
 function runStep(step) {
   const report = join(REPORTS, `${step.name}.json`);
-  const command = step.project
-    ? [
-        'vitest',
-        'run',
-        '--project',
-        step.project,
-        '--reporter=default',
-        '--reporter=json',
-        `--outputFile.json=${report}`,
-      ]
-    : step.command;
+  const [program, ...args] = commandOf(step, report);
   const started = Date.now();
   console.log(`\n── ${step.name} ──────────────────────────────`);
-  const run = spawnSync(join(BIN, command[0]), command.slice(1), {
+  const run = spawnSync(program, args, {
     cwd: ROOT,
     stdio: 'inherit',
     env: { ...process.env, NEXT_TELEMETRY_DISABLED: '1', PRISMA_HIDE_UPDATE_MESSAGE: '1', FORCE_COLOR: '0' },
@@ -54,6 +44,14 @@ function runStep(step) {
   const isGood = run.status === 0;
   const seconds = ((Date.now() - started) / 1000).toFixed(1);
   return { name: step.name, isGood, seconds, ...readCounts(report, isGood) };
+}
+
+/** A step is a vitest project, a script of package.json, or a program of the installed packages. */
+function commandOf({ project, script, command }, report) {
+  if (script) return ['npm', 'run', '--silent', script];
+  if (command) return [join(BIN, command[0]), ...command.slice(1)];
+  const reporters = ['--reporter=default', '--reporter=json', `--outputFile.json=${report}`];
+  return [join(BIN, 'vitest'), 'run', '--project', project, ...reporters];
 }
 
 /** Tests of a vitest step; a step that is no test run counts as one check. */

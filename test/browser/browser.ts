@@ -15,6 +15,8 @@ const FLAGS = [
   '--disable-component-update',
   '--disable-sync',
 ];
+/** How long a page may take to show what is waited for. */
+const PATIENCE_MS = 20_000;
 const AXE_FILE = createRequire(import.meta.url).resolve('axe-core/axe.min.js');
 export const SCREENSHOT_FOLDER = fileURLToPath(new URL('.shots/', import.meta.url));
 
@@ -47,6 +49,7 @@ export async function openPage(
     ...options,
   });
   const page = await context.newPage();
+  page.setDefaultTimeout(PATIENCE_MS);
   const errors: string[] = [];
   page.on('pageerror', (error) => errors.push(`uncaught: ${error.message}`));
   page.on('console', (message) => {
