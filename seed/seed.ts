@@ -7,10 +7,10 @@ import { ENGINE_VERSION } from '../lib/estimate/engine-version';
 import { canFit, readSeries } from '../lib/series/read-series';
 import type { MonthlySeries } from '../lib/series/types';
 import { createMarket, readMarket } from '../lib/store/markets';
-import { createWorkspace, findFirstWorkspace } from '../lib/store/workspaces';
+import { createWorkspace, FIRST_WORKSPACE_NAME, findFirstWorkspace } from '../lib/store/workspaces';
 import { DEMO_MARKETS, type DemoMarket, readDemoCsv } from './demo-markets';
 
-const FIRST_WORKSPACE = { id: 'first-workspace', name: 'Our workspace' };
+const FIRST_WORKSPACE = { id: 'first-workspace', name: FIRST_WORKSPACE_NAME };
 
 export interface SeedResult {
   workspaceId: string;

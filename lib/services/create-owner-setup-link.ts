@@ -4,12 +4,10 @@
  */
 import { hasOwner } from '../store/members';
 import { replaceSetupLink } from '../store/setup-links';
-import { createWorkspace, findFirstWorkspace } from '../store/workspaces';
+import { createWorkspace, FIRST_WORKSPACE_NAME, findFirstWorkspace } from '../store/workspaces';
 import { getSettings } from './env';
 import { createSecretToken } from './secret-token';
 import { setupLinkExpiry, setupLinkPath } from './setup-link';
-
-const FIRST_WORKSPACE_NAME = 'Our workspace';
 
 /** Full address of the link, or null once there is an owner. */
 export async function createOwnerSetupLink(): Promise<string | null> {

@@ -3,7 +3,7 @@
  * nothing changes afterwards. The comparison is computed here from the stored draws, never taken from a browser.
  */
 import type { Push } from '../dynamics/push';
-import { ISSUE_FORMAT_VERSION, type IssuedForecast } from '../issue/format';
+import { type FreezeInput, freezeForecast } from '../issue/freeze';
 import { compareScenario } from '../scenario/compare';
 import { type DoneFit, latestDoneFit, readDraws } from '../store/fits';
 import { createIssuedForecast } from '../store/issued-forecasts';
@@ -44,30 +44,33 @@ export async function issueForecast(
   if (!fit) return refuse('no-result');
   const reasons = listStaleReasons({ ...fit, engineVersion: fit.report.engineVersion }, market, revision.id);
   if (reasons.length > 0) return refuse('is-stale', { reasons });
-  const scenario = await freezeScenario(viewer, fit, parsed.value);
-  const content: IssuedForecast = {
-    formatVersion: ISSUE_FORMAT_VERSION,
+  const scenario = await compareForIssue(viewer, fit, parsed.value);
+  const content = freezeForecast({
+    facts: toBriefFacts(market, revision, fit),
+    scenario,
     issuedAt: new Date().toISOString(),
     issuedBy: viewer.userName,
-    ...toBriefFacts(market, revision, fit),
-    scenario,
+  });
+  const detail = {
+    fitId: fit.id,
+    revision: revision.number,
+    pushes: scenario?.comparison.pushes.length ?? 0,
   };
-  const detail = { fitId: fit.id, revision: revision.number, pushes: scenario?.pushes.length ?? 0 };
   const audit = { userId, action: 'issue-forecast', detail };
   const stored = await createIssuedForecast({ ...scope, fitId: fit.id, issuedById: userId, content, audit });
   return stored ? succeed(stored) : refuse('not-found');
 }
 
-async function freezeScenario(
+async function compareForIssue(
   viewer: Viewer,
   fit: DoneFit,
   form: IssueForm,
-): Promise<IssuedForecast['scenario']> {
+): Promise<FreezeInput['scenario']> {
   const pushes: Push[] = form.pushes ?? [];
   if (pushes.length === 0) return null;
   const draws = await readDraws({ workspaceId: viewer.workspaceId, fitId: fit.id });
   if (!draws) throw new AppError('inconsistent-data', `fit ${fit.id} is done and has no draws`);
   const { horizonMonths, seed } = fit.options;
   const comparison = compareScenario(draws, pushes, { horizonMonths, seed });
-  return { name: form.scenarioName ?? DEFAULT_SCENARIO_NAME, pushes, comparison };
+  return { name: form.scenarioName ?? DEFAULT_SCENARIO_NAME, comparison };
 }

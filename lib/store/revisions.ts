@@ -1,5 +1,6 @@
 /** Series revisions: the monthly counts of a market. Inserted, never updated. */
 import { createHash } from 'node:crypto';
+import { toCanonicalText } from '../series/canonical-text';
 import type { MonthlySeries } from '../series/types';
 import { type AuditInput, insertAuditEntry } from './audit';
 import { getPrisma, type Queryable } from './client';
@@ -48,10 +49,7 @@ const OBSERVATIONS = {
 
 /** SHA-256 of the counts and their months: equal for equal data, whatever file they came in. */
 export function hashSeries(series: MonthlySeries): string {
-  const { firstMonth, focal, rival } = series;
-  return createHash('sha256')
-    .update(JSON.stringify([firstMonth, focal, rival]))
-    .digest('hex');
+  return createHash('sha256').update(toCanonicalText(series)).digest('hex');
 }
 
 /**

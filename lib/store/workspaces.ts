@@ -2,6 +2,9 @@
 import { getPrisma } from './client';
 import { createId } from './ids';
 
+/** Name of the workspace that is made when there is none yet. */
+export const FIRST_WORKSPACE_NAME = 'Our workspace';
+
 export interface Workspace {
   id: string;
   name: string;
