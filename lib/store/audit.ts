@@ -15,6 +15,9 @@ export interface AuditInput {
   detail?: Record<string, string | number | boolean | null>;
 }
 
+/** Who did what; the function that does it adds to which row. */
+export type Deed = Omit<AuditInput, 'subjectType' | 'subjectId'>;
+
 export interface AuditEntry {
   id: string;
   userId: string | null;

@@ -1,7 +1,7 @@
 /** Forecast links: who holds the token may read one issued forecast. The token itself is never stored, only its hash. */
 import type { Prisma } from '../../prisma/generated/client';
 import type { IssuedForecast } from '../issue/format';
-import { type AuditInput, insertAuditEntry } from './audit';
+import { type Deed, insertAuditEntry } from './audit';
 import { getPrisma } from './client';
 import { createId } from './ids';
 import { readIssuedContent } from './issued-content';
@@ -38,7 +38,7 @@ export async function createForecastLink(args: {
   hint: string;
   expiresAt: Date | null;
   createdById: string | null;
-  audit?: Omit<AuditInput, 'subjectType' | 'subjectId'>;
+  audit?: Deed;
 }): Promise<{ linkId: string } | null> {
   const { workspaceId, issuedId, audit, ...columns } = args;
   return getPrisma().$transaction(async (db) => {
@@ -59,7 +59,7 @@ export async function createForecastLink(args: {
 export async function revokeForecastLink(args: {
   workspaceId: string;
   linkId: string;
-  audit?: Omit<AuditInput, 'subjectType' | 'subjectId'>;
+  audit?: Deed;
 }): Promise<boolean> {
   const { workspaceId, linkId, audit } = args;
   return getPrisma().$transaction(async (db) => {

@@ -1,7 +1,7 @@
 /** Issued forecasts: outlooks frozen as they were. Inserted, never updated. */
 import type { Prisma } from '../../prisma/generated/client';
 import { type IssuedForecast, issuedForecastSchema } from '../issue/format';
-import { type AuditInput, insertAuditEntry } from './audit';
+import { type Deed, insertAuditEntry } from './audit';
 import { getPrisma } from './client';
 import { FORECAST_LINK_COLUMNS, type ForecastLink } from './forecast-links';
 import { createId } from './ids';
@@ -33,7 +33,7 @@ export async function createIssuedForecast(args: {
   id?: string;
   issuedById: string | null;
   content: IssuedForecast;
-  audit?: Omit<AuditInput, 'subjectType' | 'subjectId'>;
+  audit?: Deed;
 }): Promise<{ issuedId: string } | null> {
   const { workspaceId, marketId, fitId, id = createId(), issuedById, audit } = args;
   const content: IssuedForecast = issuedForecastSchema.parse(args.content);

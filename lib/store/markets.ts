@@ -1,6 +1,6 @@
 /** Markets: one contest between two firms, with its newest revision and fit for the list. */
 import type { Prisma } from '../../prisma/generated/client';
-import { type AuditInput, insertAuditEntry } from './audit';
+import { type Deed, insertAuditEntry } from './audit';
 import { getPrisma } from './client';
 import { FIT_VIEW_COLUMNS, type FitView, insertFit, type NewFit, toView } from './fits';
 import { createId } from './ids';
@@ -57,7 +57,7 @@ export async function createMarket(args: {
   market: NewMarket;
   revision: NewRevision;
   fit: NewFit | null;
-  audit?: Omit<AuditInput, 'subjectType' | 'subjectId'>;
+  audit?: Deed;
 }): Promise<{ marketId: string; revisionId: string; fitId: string | null }> {
   const { workspaceId, market, revision, fit, audit } = args;
   return getPrisma().$transaction(async (db) => {
@@ -110,7 +110,7 @@ export async function editMarket(args: {
   workspaceId: string;
   marketId: string;
   changes: Partial<Pick<Market, 'name' | 'unit' | 'focalName' | 'rivalName' | 'focalError' | 'rivalError'>>;
-  audit?: Omit<AuditInput, 'subjectType' | 'subjectId'>;
+  audit?: Deed;
 }): Promise<boolean> {
   return updateMarket(args, args.changes);
 }
@@ -119,13 +119,13 @@ export async function editMarket(args: {
 export async function archiveMarket(args: {
   workspaceId: string;
   marketId: string;
-  audit?: Omit<AuditInput, 'subjectType' | 'subjectId'>;
+  audit?: Deed;
 }): Promise<boolean> {
   return updateMarket(args, { archivedAt: new Date() });
 }
 
 async function updateMarket(
-  args: { workspaceId: string; marketId: string; audit?: Omit<AuditInput, 'subjectType' | 'subjectId'> },
+  args: { workspaceId: string; marketId: string; audit?: Deed },
   data: Prisma.MarketUpdateManyMutationInput,
 ): Promise<boolean> {
   const { workspaceId, marketId, audit } = args;

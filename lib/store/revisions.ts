@@ -2,7 +2,7 @@
 import { createHash } from 'node:crypto';
 import { toCanonicalText } from '../series/canonical-text';
 import type { MonthlySeries } from '../series/types';
-import { type AuditInput, insertAuditEntry } from './audit';
+import { type Deed, insertAuditEntry } from './audit';
 import { getPrisma, type Queryable } from './client';
 import { insertFit, type NewFit } from './fits';
 import { createId } from './ids';
@@ -61,7 +61,7 @@ export async function addRevision(args: {
   marketId: string;
   revision: NewRevision;
   fit: NewFit | null;
-  audit?: Omit<AuditInput, 'subjectType' | 'subjectId'>;
+  audit?: Deed;
 }): Promise<{ revisionId: string; revisionNumber: number; fitId: string | null } | null> {
   const { workspaceId, marketId, revision, fit, audit } = args;
   return getPrisma().$transaction(async (db) => {

@@ -1,5 +1,5 @@
 /** One-time links that let their holder sign up into a workspace. The token itself is never stored, only its hash. */
-import { type AuditInput, insertAuditEntry } from './audit';
+import { type Deed, insertAuditEntry } from './audit';
 import { getPrisma } from './client';
 import { createId } from './ids';
 import type { Role } from './members';
@@ -19,9 +19,7 @@ interface NewSetupLink {
   expiresAt: Date;
 }
 
-export async function createSetupLink(
-  args: NewSetupLink & { audit?: Omit<AuditInput, 'subjectType' | 'subjectId'> },
-): Promise<{ linkId: string }> {
+export async function createSetupLink(args: NewSetupLink & { audit?: Deed }): Promise<{ linkId: string }> {
   const { audit, ...columns } = args;
   return getPrisma().$transaction(async (db) => {
     const { id } = await db.setupLink.create({ data: { id: createId(), ...columns }, select: { id: true } });

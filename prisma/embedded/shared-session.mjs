@@ -9,10 +9,10 @@
  * Limit: what PostgreSQL keeps per session (SET, named statements, LISTEN) is common to all clients. Nothing here uses it.
  */
 
-/** First bytes of the frontend messages that end a run: the session is idle again after them. */
-const ENDS_RUN = new Set(['S', 'Q', 'X'].map((letter) => letter.charCodeAt(0)));
-/** First byte of a start-up packet, which has no type byte: the high byte of its length. */
-const STARTUP = 0;
+/** First bytes of the messages after which the session is idle again: Sync and a query of one message. */
+const ENDS_RUN = new Set(['S', 'Q'].map((letter) => letter.charCodeAt(0)));
+/** First bytes of the messages that belong to no run: Terminate, and a start-up packet, whose first byte is of its length. */
+const BELONGS_TO_NO_RUN = new Set(['X'.charCodeAt(0), 0]);
 /** Sync message: type byte and length 4. */
 const SYNC_MESSAGE = Uint8Array.of('S'.charCodeAt(0), 0, 0, 0, 4);
 
@@ -25,7 +25,7 @@ export function shareSession(database, onBroken) {
   let isRunOpen = false;
 
   async function execProtocolRawStream(message, options) {
-    isRunOpen = message[0] !== STARTUP && !ENDS_RUN.has(message[0]);
+    if (!BELONGS_TO_NO_RUN.has(message[0])) isRunOpen = !ENDS_RUN.has(message[0]);
     try {
       await database.execProtocolRawStream(message, options);
     } catch (error) {

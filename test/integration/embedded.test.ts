@@ -81,6 +81,25 @@ it('goes on after a client that vanishes in the middle of a query', async () => 
   await staying.end();
 });
 
+it('goes on after a client that says good-bye between a failed message and its end', async () => {
+  const leaving = await connect();
+  const { connection } = leaving as unknown as { connection: RawConnection };
+  connection.parse({ text: 'SELECT no_such_column', name: '', types: [] }, true);
+  connection.flush();
+  await once(connection as unknown as NodeJS.EventEmitter, 'errorMessage');
+  connection.end();
+  const staying = await connect();
+  expect((await staying.query('SELECT $1::int AS n', [8])).rows).toEqual([{ n: 8 }]);
+  await staying.end();
+});
+
+/** The part of pg's connection that sends single messages. */
+interface RawConnection {
+  parse(query: { text: string; name: string; types: number[] }, more: boolean): void;
+  flush(): void;
+  end(): void;
+}
+
 function vanish(client: pg.Client): void {
   (client as unknown as { connection: { stream: { destroy(): void } } }).connection.stream.destroy();
 }
