@@ -21,7 +21,7 @@ export function FitStanding({ page, canWrite }: FitStandingProps) {
   if (!standing) return null;
   const hasBrief = page.facts !== null;
   return (
-    <Question id="fit" question="How does the fit stand?" isFirst={!hasBrief}>
+    <Question id="fit" question="How does the fit stand?" isFirst={!hasBrief} isScreenOnly={hasBrief}>
       {hasBrief ? (
         <div className={styles.notice}>
           <p className={styles.what}>{standing.what}</p>

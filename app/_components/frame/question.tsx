@@ -12,14 +12,24 @@ interface QuestionProps {
   note?: ReactNode;
   /** The first question of a page stands without a rule above it. */
   isFirst?: boolean;
+  /** Left out in print. */
+  isScreenOnly?: boolean;
   children: ReactNode;
 }
 
-export function Question({ id, question, note, isFirst = false, children }: QuestionProps) {
+export function Question({
+  id,
+  question,
+  note,
+  isFirst = false,
+  isScreenOnly = false,
+  children,
+}: QuestionProps) {
   return (
     <section
       className={styles.row}
       data-first={isFirst || undefined}
+      data-screen-only={isScreenOnly || undefined}
       aria-labelledby={`${id}-question`}
       id={id}
     >

@@ -78,7 +78,7 @@ export function NewMarketFlow() {
               unit={details.unit}
             />
           </Question>
-          {series.series ? (
+          {reading.canFit ? (
             <Question
               id="market"
               question="What is this market?"
@@ -94,7 +94,7 @@ export function NewMarketFlow() {
               <div className={styles.end}>
                 <ProblemNote explanation={explanation} />
                 <Button kind="main" onClick={store} isBusy={isPending} busyLabel="Storing the counts">
-                  {reading.canFit ? 'Store the counts and fit' : 'Store the counts'}
+                  Store the counts and fit
                 </Button>
               </div>
             </Question>

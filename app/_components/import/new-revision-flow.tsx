@@ -99,7 +99,7 @@ function StoreRevision({
       <div className={styles.end}>
         <ProblemNote explanation={explanation} />
         <Button kind="main" onClick={store} isBusy={isPending} busyLabel="Storing the counts">
-          Store revision {nextNumber} {reading.canFit ? 'and fit' : ''}
+          Store revision {nextNumber} and fit
         </Button>
       </div>
     </>

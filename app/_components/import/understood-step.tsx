@@ -4,6 +4,7 @@ import { LOCALE } from '@/app/_lib/locale';
 /** What was understood from the table: one sentence, the chart and the months, and every problem. */
 import { createMonthFormat } from '@/lib/brief/month-words';
 import { MIN_MONTHS_TO_FIT } from '@/lib/series/limits';
+import { canFit } from '@/lib/series/read-series';
 import type { MonthlySeries, SeriesReading } from '@/lib/series/types';
 import { HistoryFigure } from '../figures/history-figure';
 import { ProblemList } from './problem-list';
@@ -26,6 +27,11 @@ export function UnderstoodStep({ reading, focalName, rivalName, unit }: Understo
         <HistoryFigure series={reading.series} focalName={focalName} rivalName={rivalName} unit={unit} />
       ) : null}
       <ProblemList problems={reading.problems} />
+      {canFit(reading) ? null : (
+        <p className={styles.blocked}>
+          Nothing can be stored until what concerns the whole file is corrected.
+        </p>
+      )}
     </div>
   );
 }

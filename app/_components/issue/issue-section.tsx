@@ -12,7 +12,7 @@ interface IssueSectionProps {
 export function IssueSection({ page, canWrite }: IssueSectionProps) {
   const canIssue = canWrite && page.outlook !== null && page.outlook.staleReasons.length === 0;
   return (
-    <Question id="issue" question="Who should see it?" note={<IssueNote />}>
+    <Question id="issue" question="Who should see it?" note={<IssueNote />} isScreenOnly>
       {canIssue ? <IssueForm marketId={page.market.id} /> : null}
       {canWrite && !canIssue && page.outlook ? (
         <p>Only an outlook that is up to date can be issued: fit again first.</p>
