@@ -41,7 +41,8 @@ describe.sequential('from a file to a link', () => {
   test('somebody signed out is sent to the sign-in page', async () => {
     const { page, context, errors } = await openPage(browser);
     await page.goto(app.address);
-    expect(new URL(page.url()).pathname).toBe('/sign-in');
+    await page.waitForURL(`${app.address}/sign-in*`);
+    await page.getByRole('button', { name: 'Sign in' }).waitFor();
     expect(await findViolations(page)).toEqual([]);
     expect(errors).toEqual([]);
     await context.close();
