@@ -101,7 +101,7 @@ export function createAr1Posterior(
     return true;
   };
 
-  const placeErrors: Posterior['placeErrors'] = (theta, guesses) => {
+  const place: Posterior['place'] = (theta, guesses) => {
     const q = new Float64Array(DIMENSION);
     q.set(theta);
     guesses.forEach((guess, i) => {
@@ -113,29 +113,43 @@ export function createAr1Posterior(
   };
 
   /** Expected information of a stationary autoregression (Hamilton 1994, section 5.2), for ln size and logit phi. */
-  const errorInformation = (q: Float64Array): Float64Array => {
-    const information = new Float64Array(DIMENSION - SIZE);
+  const addInformation: Posterior['addInformation'] = (q, information) => {
+    const add = (j: number, value: number) => {
+      information[j * (DIMENSION + 1)] += value;
+    };
     firms.forEach((firm, i) => {
       const count = firm.months.length;
       const phi = 1 / (1 + Math.exp(-q[PERSISTENCE + i]));
-      information[i] = 2 * count + errorSize.sdLog ** -2;
-      information[2 + i] = (count * phi * phi * (1 + phi * phi)) / (1 + phi) ** 2 + persistence.sdLogit ** -2;
+      add(SIZE + i, 2 * count + errorSize.sdLog ** -2);
+      add(
+        PERSISTENCE + i,
+        (count * phi * phi * (1 + phi * phi)) / (1 + phi) ** 2 + persistence.sdLogit ** -2,
+      );
     });
-    return information;
+  };
+
+  const fillPath: Posterior['fillPath'] = (q, _, out) => {
+    if (!trajectory.run(q)) return false;
+    out.set(trajectory.logLevel1, 0);
+    out.set(trajectory.logLevel2, months);
+    return true;
   };
 
   return {
     dimension: DIMENSION,
     observations,
     priors,
+    segments: [0],
     columns: AR1_COLUMNS,
+    breakMonth: null,
     get evaluations() {
       return evaluations;
     },
     logDensity,
-    placeErrors,
-    errorInformation,
+    place,
+    addInformation,
     fillDraw,
+    fillPath,
   };
 }
 

@@ -2,17 +2,18 @@
  * Posterior draws as one table of numbers: built by the sampler, thinned for storage, read by column name.
  */
 import { AR1_COLUMNS } from './ar1-posterior';
-import { PROCESS_COLUMNS } from './process-posterior';
+import { STATE_COLUMNS } from './state-posterior';
 import type { DrawSet, ErrorModel } from './types';
 
 /**
- * Columns per error model. Natural units: r per month, k, n and n..Start in users (n: level in the last month of the series),
- * alpha, beta and persistence without unit, size as sd of ln users, residual as ln count minus ln level in the last month, noise as sd of
- * ln users per root month.
+ * Columns that every set of an error model has. Natural units: r per month, k, n and n..Start in users (n: level in the last month of the
+ * series), alpha, beta and persistence without unit, size as sd of ln users, residual as ln count minus ln level in the last month, noise as
+ * sd of ln users per root month, breakMonth as month of the grid or -1. r to beta are those in force in the last month. With a yearly cycle
+ * come its offsets of ln users, see `seasonColumn`.
  */
 export const DRAW_COLUMNS: Readonly<Record<ErrorModel, readonly string[]>> = {
   ar1: AR1_COLUMNS,
-  'process-noise': PROCESS_COLUMNS,
+  'process-noise': STATE_COLUMNS,
 };
 
 /**

@@ -1,29 +1,35 @@
 /**
- * A fit from series to draws as a resumable run: each `next()` does a bounded slice and tells how far it is. No clock here; the
- * driver owns time and cancelling.
+ * A fit from series to draws as a resumable run: each step of the generator is a bounded slice and tells how far the run is. No clock here;
+ * the driver owns time and cancelling.
  */
-import { choleskyOrNull, invertFromCholesky } from '../numeric/cholesky';
 import { createStream } from '../numeric/random';
 import { createAr1Posterior, SMALLEST_ERROR } from './ar1-posterior';
-import { HYPERCUBE_STARTS } from './defaults';
+import { blendRows, judgeBlend, samplePaths, type WeightedDraws } from './blend';
+import { ESS_LIMIT, HYPERCUBE_STARTS, R_HAT_LIMIT } from './defaults';
+import { chooseModels, climbFrom, type ModelChoice } from './model-choice';
 import { type Observations, readObservations } from './observations';
-import { PARAMETERS } from './parameters';
 import { distinctEnds, fitStart, type Mode, polishMode, SAME_VALUE, type StartResult } from './point-fit';
-import type { Posterior } from './posterior';
 import { buildPriors, type Priors } from './priors';
-import { createProcessPosterior } from './process-posterior';
-import { runSampler, type SamplerResult, type SamplerStart } from './sampler';
+import { CHAINS, runSampler } from './sampler';
 import { createStarts } from './starts';
-import type { DrawSet, FitInput, FitProgress, FitStatus } from './types';
+import type { DrawSet, FitInput, FitOptions, FitProgress, FitStatus } from './types';
 
 export interface Fit {
   status: FitStatus;
   observations: Observations;
   priors: Priors;
   starts: (StartResult & { reachedBest: boolean })[];
+  /** The best point fit. */
   best: Mode;
-  sampler: SamplerResult;
+  choice: ModelChoice;
+  rHat: number;
+  ess: number;
+  chains: number;
+  /** Draws of all chains before blending. */
+  drawsKept: number;
   draws: DrawSet;
+  /** ln levels of sampled paths through the series, firm-major then month. */
+  paths: Float64Array[];
   evaluations: number;
 }
 
@@ -31,6 +37,8 @@ export interface FitFailure {
   status: Exclude<FitStatus, 'converged' | 'not-converged'>;
   starts: Fit['starts'];
 }
+
+export type FitEnd = { fit: Fit } | { failure: FitFailure };
 
 export type FitStep =
   | { done: false; progress: FitProgress }
@@ -41,39 +49,39 @@ export interface FitRun {
   next(): FitStep;
 }
 
-/** Stream of the seed that the starts use. */
+/** Streams of the seed: the starts, the sampled paths, and CHAINS for each component from FIRST_CHAIN_STREAM on. */
 const START_STREAM = 0;
+const PATH_STREAM = 1;
+const FIRST_CHAIN_STREAM = 10;
 /** Starts of one slice. */
 const STARTS_PER_SLICE = 3;
 /** Ends polished at most. */
-const MAX_MODES = 4;
-/** Log density below the best mode at which a mode is left out: it would hold less than one draw in twenty thousand. */
-const MODE_DEPTH = 10;
+const MAX_POINTS = 4;
+/** Rows of the blended draw set. */
+export const BLENDED_DRAWS = 4000;
+/** Sampled paths: months of history get their intervals from them. */
+const PATHS = 500;
+/** A component with a smaller share needs less accuracy of its own, for its errors count with the square of the share. */
+const MINOR_SHARE = 0.25;
+const MINOR_R_HAT = 1.05;
+const MINOR_ESS = 100;
 
 export function createFitRun(input: FitInput): FitRun {
   const steps = runFit(input);
   return {
     next() {
       const { done, value } = steps.next();
-      if (!done) return { done: false, progress: value };
-      return 'failure' in value ? { done: true, failure: value.failure } : { done: true, fit: value.fit };
+      return done ? { done: true, ...value } : { done: false, progress: value };
     },
   };
 }
 
-export type FitEnd = { fit: Fit } | { failure: FitFailure };
-
 /** The run as a generator; `createFitRun` and the outlook run drive it. */
-export function* runFit(input: FitInput): Generator<FitProgress, FitEnd> {
-  const { series, options } = input;
+export function* runFit({ series, options }: FitInput): Generator<FitProgress, FitEnd> {
   const reading = readObservations(series);
   if (!reading.ok) return { failure: { status: reading.status, starts: [] } };
   const { observations } = reading;
   const priors = buildPriors(observations);
-  const floors = [options.measurementFloor.focal, options.measurementFloor.rival].map((floor) =>
-    Math.max(floor, SMALLEST_ERROR),
-  ) as [number, number];
-
   const starts = createStarts(
     observations,
     priors,
@@ -97,42 +105,114 @@ export function* runFit(input: FitInput): Generator<FitProgress, FitEnd> {
   }
 
   const rows = markBest(results);
-  const modes: Mode[] = [];
-  for (const end of distinctEnds(results, MAX_MODES)) {
-    const mode = polishMode(observations, priors, floors, end.theta, 'competition');
-    if (mode) modes.push(mode);
+  const points: Mode[] = [];
+  for (const mode of polishEnds(observations, priors, options, results)) {
+    if (mode) points.push(mode);
     yield progress('polish');
   }
-  if (modes.length === 0) return { failure: { status: 'failed', starts: rows } };
-  modes.sort((a, b) => a.value - b.value);
-  const alone = polishMode(observations, priors, floors, modes[0].theta, 'no-competition');
+  const choosing = chooseComponents(observations, priors, options, points);
+  let choice = choosing.next();
+  for (; !choice.done; choice = choosing.next()) yield progress('polish');
+  if (!choice.value) return { failure: { status: 'failed', starts: rows } };
 
-  const createPosterior = options.errorModel === 'ar1' ? createAr1Posterior : createProcessPosterior;
-  const posterior = createPosterior(observations, priors, options.measurementFloor);
-  const samplerStarts = chooseSamplerStarts(posterior, alone ? [...modes, alone] : modes);
-  if (samplerStarts.length === 0) return { failure: { status: 'failed', starts: rows } };
-  const sampling = runSampler(posterior, samplerStarts, options.seed, options.horizonMonths);
-  for (;;) {
-    const step = sampling.next();
-    if (!step.done) {
-      yield { ...progress(step.value.stage), ...step.value };
-      continue;
+  const parts: WeightedDraws[] = [];
+  for (const [k, component] of choice.value.components.entries()) {
+    const isMinor = component.weight < MINOR_SHARE;
+    const sampling = runSampler(component, {
+      seed: options.seed,
+      firstStream: FIRST_CHAIN_STREAM + k * CHAINS,
+      horizonMonths: options.horizonMonths,
+      rHatLimit: isMinor ? MINOR_R_HAT : R_HAT_LIMIT,
+      essLimit: isMinor ? MINOR_ESS : ESS_LIMIT,
+    });
+    const before = countDraws(parts);
+    let step = sampling.next();
+    for (; !step.done; step = sampling.next()) {
+      const { drawsKept, drawsTarget } = step.value;
+      const components = choice.value.components.length;
+      yield {
+        ...progress(step.value.stage),
+        ...step.value,
+        drawsKept: before + drawsKept,
+        drawsTarget: Math.max(drawsTarget * components, before + drawsKept),
+      };
     }
-    const sampler = step.value;
-    const { count, values } = sampler;
-    return {
-      fit: {
-        status: sampler.hasConverged ? 'converged' : 'not-converged',
-        observations,
-        priors,
-        starts: rows,
-        best: modes[0],
-        sampler,
-        draws: { errorModel: options.errorModel, columns: [...posterior.columns], count, values },
-        evaluations: posterior.evaluations,
-      },
-    };
+    parts.push({ weight: component.weight, result: step.value });
   }
+  return { fit: assembleFit(observations, priors, rows, points[0], choice.value, parts, options) };
+}
+
+/** The distinct ends of the starts, polished; then the best of them under the part of the prior without competition. */
+function* polishEnds(
+  observations: Observations,
+  priors: Priors,
+  { measurementFloor }: FitOptions,
+  results: readonly StartResult[],
+): Generator<Mode | null> {
+  const floors = [measurementFloor.focal, measurementFloor.rival].map((floor) =>
+    Math.max(floor, SMALLEST_ERROR),
+  );
+  const pair = [floors[0], floors[1]] as const;
+  const ends = distinctEnds(results, MAX_POINTS);
+  for (const end of ends) yield polishMode(observations, priors, pair, end.theta, 'competition');
+  if (ends.length > 0) yield polishMode(observations, priors, pair, ends[0].theta, 'no-competition');
+}
+
+function* chooseComponents(
+  observations: Observations,
+  priors: Priors,
+  options: FitOptions,
+  points: readonly Mode[],
+): Generator<undefined, ModelChoice | null> {
+  if (points.length === 0) return null;
+  if (options.errorModel === 'process-noise') {
+    return yield* chooseModels(observations, priors, options.measurementFloor, points);
+  }
+  const posterior = createAr1Posterior(observations, priors, options.measurementFloor);
+  const modes = climbFrom(posterior, points);
+  if (modes.length === 0) return null;
+  return {
+    components: [{ posterior, modes, weight: 1, breakMonths: null }],
+    harmonics: 0,
+    flags: [],
+    breakChance: 0,
+  };
+}
+
+function assembleFit(
+  observations: Observations,
+  priors: Priors,
+  starts: Fit['starts'],
+  best: Mode,
+  choice: ModelChoice,
+  parts: readonly WeightedDraws[],
+  options: FitOptions,
+): Fit {
+  const blended = blendRows(parts, BLENDED_DRAWS);
+  const columns = [...choice.components[0].posterior.columns];
+  const values = new Float64Array(blended.length * columns.length);
+  blended.forEach(({ store, draw }, i) => {
+    values.set(store.row(draw), i * columns.length);
+  });
+  const posteriors = new Set(choice.components.map(({ posterior }) => posterior));
+  return {
+    status: parts.every(({ result }) => result.hasConverged) ? 'converged' : 'not-converged',
+    observations,
+    priors,
+    starts,
+    best,
+    choice,
+    ...judgeBlend(parts),
+    chains: CHAINS * parts.length,
+    drawsKept: countDraws(parts),
+    draws: { errorModel: options.errorModel, columns, count: blended.length, values },
+    paths: samplePaths(blended, PATHS, observations.months, createStream(options.seed, PATH_STREAM)),
+    evaluations: [...posteriors].reduce((sum, { evaluations }) => sum + evaluations, 0),
+  };
+}
+
+function countDraws(parts: readonly WeightedDraws[]): number {
+  return parts.reduce((sum, { result }) => sum + result.store.count, 0);
 }
 
 function lowestValue(results: readonly StartResult[]): number | null {
@@ -146,35 +226,4 @@ function markBest(results: readonly StartResult[]): Fit['starts'] {
     ...result,
     reachedBest: best !== null && result.value !== null && result.value - best <= SAME_VALUE,
   }));
-}
-
-/** Modes with a share of the posterior worth a chain, best first. */
-function chooseSamplerStarts(posterior: Posterior, modes: readonly Mode[]): SamplerStart[] {
-  const starts = modes.flatMap((mode) => {
-    const q = posterior.placeErrors(mode.theta, mode.errors);
-    const density = posterior.logDensity(q, null);
-    const covariance = approximateCovariance(mode, q, posterior);
-    return density > Number.NEGATIVE_INFINITY && covariance ? [{ q, covariance, density }] : [];
-  });
-  const best = Math.max(...starts.map((start) => start.density));
-  return starts.filter((start) => start.density > best - MODE_DEPTH).sort((a, b) => b.density - a.density);
-}
-
-/** Gauss-Newton covariance of the log parameters, prior included, beside that of the error parameters. */
-function approximateCovariance(mode: Mode, q: Float64Array, posterior: Posterior): Float64Array | null {
-  const n = posterior.dimension;
-  const p = PARAMETERS.length;
-  const information = new Float64Array(n * n);
-  const rows = mode.jacobian.length / p;
-  for (let row = 0; row < rows; row++) {
-    for (let i = 0; i < p; i++) {
-      for (let j = 0; j < p; j++)
-        information[i * n + j] += mode.jacobian[row * p + i] * mode.jacobian[row * p + j];
-    }
-  }
-  posterior.errorInformation(q).forEach((value, j) => {
-    information[(p + j) * (n + 1)] = value;
-  });
-  const lower = choleskyOrNull(information, n);
-  return lower && invertFromCholesky(lower, n);
 }

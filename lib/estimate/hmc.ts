@@ -14,8 +14,10 @@ export interface HmcChain {
   readonly logDensity: number;
   /** One trajectory. @returns its acceptance probability; 0 when it left the support */
   move(metric: Float64Array, stepSize: number, steps: number): number;
-  /** Puts the chain somewhere else (or recomputes after a change of coordinates). @returns whether the density is finite there */
+  /** Puts the chain somewhere else. @returns whether the density is finite there */
   reset(position: Float64Array): boolean;
+  /** Takes density and gradient anew where the chain stands, after the density has changed. */
+  refresh(): void;
 }
 
 export function createHmcChain(dimension: number, density: LogDensity, stream: RandomStream): HmcChain {
@@ -78,6 +80,9 @@ export function createHmcChain(dimension: number, density: LogDensity, stream: R
       return logDensity;
     },
     move,
+    refresh() {
+      logDensity = density(position, gradient);
+    },
     reset(to) {
       position.set(to);
       logDensity = density(position, gradient);

@@ -1,46 +1,75 @@
 /**
- * Likelihood of the process-noise model by the extended Kalman filter, with the reverse sweep for its gradient.
+ * Likelihood of the state-space model by the extended Kalman filter, with the reverse sweep for its gradient.
  *
- *   z(t+1) = Phi(z(t); theta) + w(t), w ~ N(0, diag(noise1^2, noise2^2));   ln count_i(t) = z_i(t) + v, v ~ N(0, s_i^2)
+ *   z(t+1) = Phi_t(z(t)) + w(t), w ~ N(0, diag(process));   ln count_i(t) = z_i(t) + season_i(t mod 12) + v, v ~ N(0, observation_i)
  *
- * z ln users, Phi one month of the competitive growth system. Mean through Phi, covariance through F = d Phi / d z (Jazwinski 1970;
- * Kristensen, Madsen & Jorgensen 2004); the counts of a month update one after the other; a month without a count is predicted and
- * not updated, so gaps are exact. The start of a firm is a parameter, known exactly given theta.
+ * z ln users, Phi_t one month of the competitive growth system, its parameters those of the segment (before or after a break). Mean
+ * through Phi, covariance through F = d Phi / d z (Jazwinski 1970; Kristensen, Madsen & Jorgensen 2004); the counts of a month update
+ * one after the other; a month without a count is predicted and not updated, so gaps are exact. A flagged count has its variance
+ * multiplied by FLAGGED_INFLATION. The start of a firm is a parameter, known exactly given theta.
  */
 import { createMonthFlow } from '../dynamics/month-flow';
 import type { FirmObservations, Observations } from './observations';
 
-/** Variances per firm: of one observation (ln users squared) and of one month of process noise. */
-export interface FilterVariances {
+/** A flagged count is believed this much less (variance): next to nothing. */
+export const FLAGGED_INFLATION = 1e4;
+
+/** What the filter runs on. */
+export interface FilterInput {
+  /** Eight log parameters. */
+  theta: Float64Array;
+  /** Six log parameters (r, K, alpha, beta) in force from `breakMonth` on; null: no break. */
+  after: Float64Array | null;
+  breakMonth: number;
+  /** Variance of one observation (ln users squared), per firm. */
   observation: Float64Array;
+  /** Variance of one month of process noise, per firm. */
   process: Float64Array;
+  /** Seasonal offsets of ln counts, firm-major, one per month of the cycle that begins with month 0 of the grid; null: none. */
+  season: Float64Array | null;
 }
 
+/** Gradients with respect to the fields of `FilterInput`. */
 export interface FilterGradient {
-  /** With respect to the eight log parameters. */
   theta: Float64Array;
+  after: Float64Array;
   observation: Float64Array;
   process: Float64Array;
+  season: Float64Array;
+}
+
+/** What `sampleStatePath` needs to know of the last run. */
+export interface FilterHistory {
+  /** Per month: filtered mean (2) and covariance (3), predicted mean (2) and covariance (3). */
+  states: Float64Array;
+  /** Per month: F of the step to the next month, row-major. */
+  jacobians: Float64Array;
 }
 
 export interface KalmanFilter {
   /** Filtered state in the last month after `run`: mean of ln users, and covariance (11, 12, 22). */
   readonly mean: Float64Array;
   readonly covariance: Float64Array;
+  readonly history: FilterHistory;
+  /** 1 where the count of a month is flagged, firm-major; may be changed between runs. */
+  readonly flags: Uint8Array;
   /** Log likelihood up to a constant; -Infinity where the path cannot be followed. */
-  run(theta: ArrayLike<number>, variances: FilterVariances): number;
+  run(input: FilterInput): number;
   /**
    * Adds the gradient along the last `run`, with F held fixed: d F / d theta is left out. A Hamiltonian chain stays exact under any
    * smooth force, since the accept step uses the true density; this force costs a third of the exact one.
    */
-  sweepBack(variances: FilterVariances, gradient: FilterGradient): void;
+  sweepBack(input: FilterInput, gradient: FilterGradient): void;
 }
 
-/** Doubles kept per month: F (4), scaled state before and after the month (4), then per firm: covariance (3), innovation, its variance. */
-const WIDTH = 18;
-const SCALED = 4;
-const UPDATE = 8;
+/** Doubles kept per month of `FilterHistory.states`. */
+export const STATE_WIDTH = 10;
+
+/** Doubles kept per month: scaled state before and after the month (4), then per firm: covariance (3), innovation, its variance. */
+const WIDTH = 14;
+const UPDATE = 4;
 const UPDATE_WIDTH = 5;
+export const SEASON_MONTHS = 12;
 
 export function createKalmanFilter(observations: Observations): KalmanFilter {
   const { months, firms } = observations;
@@ -50,15 +79,32 @@ export function createKalmanFilter(observations: Observations): KalmanFilter {
   const entry1 = firms[0].entry;
   const entry2 = firms[1].entry;
   const kept = new Float64Array(months * WIDTH);
+  const history = {
+    states: new Float64Array(months * STATE_WIDTH),
+    jacobians: new Float64Array(months * 4),
+  };
+  const flags = new Uint8Array(2 * months);
   const mean = new Float64Array(2);
   const covariance = new Float64Array(3);
   /** Adjoints of mean and covariance. */
   const pullMean = new Float64Array(2);
   const pull = new Float64Array(3);
+  let season: Float64Array | null = null;
   let logK1 = 0;
   let logK2 = 0;
 
-  const enter = (t: number, theta: ArrayLike<number>) => {
+  const takeSegment = (parameters: Float64Array) => {
+    logK1 = parameters[2];
+    logK2 = parameters[3];
+    flow.setParameters(
+      Math.exp(parameters[0]),
+      Math.exp(parameters[1]),
+      Math.exp(parameters[4]),
+      Math.exp(parameters[5]),
+    );
+  };
+
+  const enter = (t: number, theta: Float64Array) => {
     if (t === entry1) {
       mean[0] = theta[6];
       covariance[0] = 0;
@@ -71,12 +117,17 @@ export function createKalmanFilter(observations: Observations): KalmanFilter {
     }
   };
 
+  const varianceOf = (i: number, t: number, observation: Float64Array): number =>
+    flags[i * months + t] === 1 ? observation[i] * FLAGGED_INFLATION : observation[i];
+
   /** Update by the count of firm i; returns its log likelihood. */
-  const update = (i: number, t: number, variance: number): number => {
+  const update = (i: number, t: number, observation: Float64Array): number => {
     const at = t * WIDTH + UPDATE + i * UPDATE_WIDTH;
+    const variance = varianceOf(i, t, observation);
     const own = covariance[2 * i];
     const both = covariance[1];
-    const innovation = counts[i][t] - mean[i];
+    const offset = season ? season[i * SEASON_MONTHS + (t % SEASON_MONTHS)] : 0;
+    const innovation = counts[i][t] - offset - mean[i];
     const total = own + variance;
     kept[at] = covariance[0];
     kept[at + 1] = both;
@@ -113,14 +164,15 @@ export function createKalmanFilter(observations: Observations): KalmanFilter {
     const f12 = has1 ? tangent[10] / nextX : 0;
     const f21 = has2 ? tangent[9] / nextY : 0;
     const f22 = has2 ? tangent[11] / nextY : 0;
-    kept[at] = f11;
-    kept[at + 1] = f12;
-    kept[at + 2] = f21;
-    kept[at + 3] = f22;
-    kept[at + SCALED] = x;
-    kept[at + SCALED + 1] = y;
-    kept[at + SCALED + 2] = nextX;
-    kept[at + SCALED + 3] = nextY;
+    const { jacobians } = history;
+    jacobians[4 * t] = f11;
+    jacobians[4 * t + 1] = f12;
+    jacobians[4 * t + 2] = f21;
+    jacobians[4 * t + 3] = f22;
+    kept[at] = x;
+    kept[at + 1] = y;
+    kept[at + 2] = nextX;
+    kept[at + 3] = nextY;
     if (has1) mean[0] = logK1 + Math.log(nextX);
     if (has2) mean[1] = logK2 + Math.log(nextY);
     const p11 = covariance[0];
@@ -132,24 +184,38 @@ export function createKalmanFilter(observations: Observations): KalmanFilter {
     return true;
   };
 
-  const run = (theta: ArrayLike<number>, { observation, process }: FilterVariances): number => {
-    logK1 = theta[2];
-    logK2 = theta[3];
-    flow.setParameters(Math.exp(theta[0]), Math.exp(theta[1]), Math.exp(theta[4]), Math.exp(theta[5]));
+  const keepState = (at: number) => {
+    const { states } = history;
+    states[at] = mean[0];
+    states[at + 1] = mean[1];
+    states[at + 2] = covariance[0];
+    states[at + 3] = covariance[1];
+    states[at + 4] = covariance[2];
+  };
+
+  const run = (input: FilterInput): number => {
+    const { theta, after, breakMonth, observation, process } = input;
+    season = input.season;
+    takeSegment(theta);
     covariance.fill(0);
+    mean.fill(0);
     let value = 0;
     for (let t = 0; t < months; t++) {
+      if (after && t === breakMonth) takeSegment(after);
       enter(t, theta);
-      if (!Number.isNaN(counts[0][t])) value += update(0, t, observation[0]);
-      if (!Number.isNaN(counts[1][t])) value += update(1, t, observation[1]);
+      keepState(t * STATE_WIDTH + 5);
+      if (!Number.isNaN(counts[0][t])) value += update(0, t, observation);
+      if (!Number.isNaN(counts[1][t])) value += update(1, t, observation);
+      keepState(t * STATE_WIDTH);
       if (t < months - 1 && !predict(t, process)) return Number.NEGATIVE_INFINITY;
     }
     return orImpossible(value);
   };
 
   /** Reverse of `update`. */
-  const pullUpdate = (i: number, t: number, variance: number, slope: Float64Array): void => {
+  const pullUpdate = (i: number, t: number, observation: Float64Array, gradient: FilterGradient): void => {
     const at = t * WIDTH + UPDATE + i * UPDATE_WIDTH;
+    const variance = varianceOf(i, t, observation);
     const own = kept[at + 2 * i];
     const both = kept[at + 1];
     const innovation = kept[at + 3];
@@ -164,21 +230,23 @@ export function createKalmanFilter(observations: Observations): KalmanFilter {
       (0.5 * innovation * innovation - gains * innovation - variance * shrinks + both * both * byOther) *
         inverse *
         inverse;
-    slope[i] += shrinks * inverse + byTotal;
+    gradient.observation[i] += (shrinks * inverse + byTotal) * (variance / observation[i]);
+    gradient.season[i * SEASON_MONTHS + (t % SEASON_MONTHS)] += (innovation - gains) * inverse;
     pull[2 * i] = (pullMean[i] * innovation + byOwn * variance) * inverse + byTotal;
     pull[1] = (pullMean[1 - i] * innovation + byBoth * variance - 2 * both * byOther) * inverse;
     pullMean[i] += (innovation - gains) * inverse;
   };
 
-  /** Reverse of `predict`, F held fixed. */
-  const pullPredict = (t: number, gradient: FilterGradient): void => {
+  /** Reverse of `predict`, F held fixed; the slopes of K go to the gradient of the segment. */
+  const pullPredict = (t: number, gradient: FilterGradient, segment: Float64Array): void => {
     const at = t * WIDTH;
     const has1 = t >= entry1;
     const has2 = t >= entry2;
-    const f11 = kept[at];
-    const f12 = kept[at + 1];
-    const f21 = kept[at + 2];
-    const f22 = kept[at + 3];
+    const { jacobians } = history;
+    const f11 = jacobians[4 * t];
+    const f12 = jacobians[4 * t + 1];
+    const f21 = jacobians[4 * t + 2];
+    const f22 = jacobians[4 * t + 3];
     const l11 = pull[0];
     const l12 = pull[1];
     const l22 = pull[2];
@@ -187,17 +255,18 @@ export function createKalmanFilter(observations: Observations): KalmanFilter {
     pull[0] = f11 * f11 * l11 + f11 * f21 * l12 + f21 * f21 * l22;
     pull[1] = 2 * f11 * f12 * l11 + (f11 * f22 + f12 * f21) * l12 + 2 * f21 * f22 * l22;
     pull[2] = f12 * f12 * l11 + f12 * f22 * l12 + f22 * f22 * l22;
-    adjoint[0] = has1 ? pullMean[0] / kept[at + SCALED + 2] : 0;
-    adjoint[1] = has2 ? pullMean[1] / kept[at + SCALED + 3] : 0;
+    adjoint[0] = has1 ? pullMean[0] / kept[at + 2] : 0;
+    adjoint[1] = has2 ? pullMean[1] / kept[at + 3] : 0;
     flow.pullBack(t);
-    const before1 = adjoint[0] * kept[at + SCALED];
-    const before2 = adjoint[1] * kept[at + SCALED + 1];
-    if (has1) gradient.theta[2] += pullMean[0] - before1;
-    if (has2) gradient.theta[3] += pullMean[1] - before2;
+    const before1 = adjoint[0] * kept[at];
+    const before2 = adjoint[1] * kept[at + 1];
+    if (has1) segment[2] += pullMean[0] - before1;
+    if (has2) segment[3] += pullMean[1] - before2;
     pullMean[0] = before1;
     pullMean[1] = before2;
   };
 
+  /** Reverse of `enter`. */
   const leave = (t: number, gradient: FilterGradient) => {
     if (t === entry1) {
       gradient.theta[6] += pullMean[0];
@@ -213,23 +282,36 @@ export function createKalmanFilter(observations: Observations): KalmanFilter {
     }
   };
 
-  const sweepBack = ({ observation }: FilterVariances, gradient: FilterGradient): void => {
+  /** Moves what the flow has gathered into the gradient of the segment. */
+  const collect = (segment: Float64Array) => {
+    segment[0] += flow.gradient[0];
+    segment[1] += flow.gradient[1];
+    segment[4] += flow.gradient[2];
+    segment[5] += flow.gradient[3];
+    flow.clearGradient();
+  };
+
+  const sweepBack = (input: FilterInput, gradient: FilterGradient): void => {
+    const { theta, after, breakMonth, observation } = input;
     flow.clearGradient();
     pullMean.fill(0);
     pull.fill(0);
+    let segment = after ? gradient.after : gradient.theta;
     for (let t = months - 1; t >= 0; t--) {
-      if (t < months - 1) pullPredict(t, gradient);
-      if (!Number.isNaN(counts[1][t])) pullUpdate(1, t, observation[1], gradient.observation);
-      if (!Number.isNaN(counts[0][t])) pullUpdate(0, t, observation[0], gradient.observation);
+      if (after && t === breakMonth - 1) {
+        collect(segment);
+        segment = gradient.theta;
+        takeSegment(theta);
+      }
+      if (t < months - 1) pullPredict(t, gradient, segment);
+      if (!Number.isNaN(counts[1][t])) pullUpdate(1, t, observation, gradient);
+      if (!Number.isNaN(counts[0][t])) pullUpdate(0, t, observation, gradient);
       leave(t, gradient);
     }
-    gradient.theta[0] += flow.gradient[0];
-    gradient.theta[1] += flow.gradient[1];
-    gradient.theta[4] += flow.gradient[2];
-    gradient.theta[5] += flow.gradient[3];
+    collect(segment);
   };
 
-  return { mean, covariance, run, sweepBack };
+  return { mean, covariance, history, flags, run, sweepBack };
 }
 
 /** -Infinity in place of NaN. */

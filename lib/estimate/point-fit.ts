@@ -7,6 +7,7 @@
  */
 import { fitLeastSquares, type LeastSquaresFit } from '../numeric/least-squares';
 import type { Observations } from './observations';
+import { PARAMETERS } from './parameters';
 import {
   type CompetitionPart,
   createPenalisedProblem,
@@ -31,7 +32,7 @@ export interface Mode {
   errors: readonly [ErrorGuess, ErrorGuess];
   /** Penalised objective under this mode's own errors. */
   value: number;
-  /** Covariance of the log parameters, 8 x 8 row-major: inverse of J'J with the prior rows. */
+  /** Of the penalised residuals, prior rows included; rows x 8. */
   jacobian: Float64Array;
   conditionNumber: number;
   evaluations: number;
@@ -122,4 +123,16 @@ function refineGuesses(
   if (!problem.evaluate(theta, residuals, null)) return guesses;
   const refine = (i: 0 | 1) => refineError(observations.firms[i], problem.errors[i], guesses[i], floors[i]);
   return [refine(0), refine(1)];
+}
+
+/** J'J of a mode over the log parameters, 8 x 8 row-major. */
+export function fitInformation({ jacobian }: Mode): Float64Array {
+  const p = PARAMETERS.length;
+  const information = new Float64Array(p * p);
+  for (let row = 0; row < jacobian.length; row += p) {
+    for (let i = 0; i < p; i++) {
+      for (let j = 0; j < p; j++) information[i * p + j] += jacobian[row + i] * jacobian[row + j];
+    }
+  }
+  return information;
 }

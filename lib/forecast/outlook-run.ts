@@ -1,16 +1,18 @@
 /**
  * The whole way from a series to a stored result as a resumable run: the fit, then its outlook. Each `next()` is a bounded slice.
  */
-import { createTrajectory } from '../dynamics/trajectory';
-import { thinDraws } from '../estimate/draws';
+import { readColumn, thinDraws } from '../estimate/draws';
 import { ENGINE_VERSION } from '../estimate/engine-version';
 import { type Fit, type FitFailure, runFit } from '../estimate/fit-run';
+import { INDEX } from '../estimate/parameters';
 import type { DrawSet, FitInput, FitProgress } from '../estimate/types';
 import { readDrawTable } from './draw-table';
 import { computeHistory } from './history';
+import { intervalOf } from './interval';
 import { computeErrors, computeOutlook } from './outlook';
 import { computeParameterRows } from './parameter-rows';
 import type { Diagnostics, FitReport, PointFit } from './report';
+import { describeStructure } from './structure';
 import { listUnknowns } from './unknowns';
 
 export type OutlookStep =
@@ -54,10 +56,10 @@ function outlookProgress(fit: Fit): FitProgress {
     startsDone: fit.starts.length,
     startsTotal: fit.starts.length,
     bestValue: fit.best.value,
-    drawsKept: fit.sampler.count,
-    drawsTarget: fit.sampler.count,
-    rHat: finiteOrNull(fit.sampler.rHat),
-    ess: fit.sampler.ess,
+    drawsKept: fit.drawsKept,
+    drawsTarget: fit.drawsKept,
+    rHat: finiteOrNull(fit.rHat),
+    ess: fit.ess,
   };
 }
 
@@ -76,7 +78,8 @@ function buildReport(fit: Fit, { series, options }: FitInput): FitReport {
     point: describePoint(fit),
     parameters,
     errors,
-    history: computeHistory(fit.draws, fit.observations),
+    history: computeHistory(fit),
+    structure: describeStructure(fit, series.firstMonth),
     outlook,
     cloud,
     unknowns: listUnknowns(fit, parameters, errors),
@@ -87,10 +90,10 @@ function describeFit(fit: Fit): Diagnostics {
   const starts = describeStarts(fit.starts);
   return {
     status: fit.status,
-    rHat: finiteOrNull(fit.sampler.rHat),
-    ess: fit.sampler.ess,
-    chains: fit.sampler.chains,
-    drawsKept: fit.sampler.count,
+    rHat: finiteOrNull(fit.rHat),
+    ess: fit.ess,
+    chains: fit.chains,
+    drawsKept: fit.drawsKept,
     evaluations: fit.evaluations,
     starts,
     startsAtBest: starts.filter((start) => start.reachedBest).length,
@@ -123,11 +126,13 @@ function describeStarts(starts: Fit['starts']): Diagnostics['starts'] {
   }));
 }
 
+/** The mode of the heaviest component, its rates those in force now; users in the last month: medians over draws. */
 function describePoint(fit: Fit): PointFit {
-  const { months, firms } = fit.observations;
-  const trajectory = createTrajectory({ months, entry1: firms[0].entry, entry2: firms[1].entry });
-  trajectory.run(fit.best.theta);
-  const [r1, r2, k1, k2, alpha, beta, n1Start, n2Start] = Array.from(fit.best.theta, Math.exp);
+  const { posterior, modes } = fit.choice.components.reduce((a, b) => (b.weight > a.weight ? b : a));
+  const { q } = modes[0];
+  const last = posterior.segments[posterior.segments.length - 1];
+  const [r1, r2, k1, k2, alpha, beta] = Array.from(q.subarray(last, last + 6), Math.exp);
+  const median = (column: string) => intervalOf(readColumn(fit.draws, column)).q50;
   return {
     r1,
     r2,
@@ -135,10 +140,10 @@ function describePoint(fit: Fit): PointFit {
     k2,
     alpha,
     beta,
-    n1Start,
-    n2Start,
-    n1Last: Math.exp(trajectory.logLevel1[months - 1]),
-    n2Last: Math.exp(trajectory.logLevel2[months - 1]),
+    n1Start: Math.exp(q[INDEX.n1Start]),
+    n2Start: Math.exp(q[INDEX.n2Start]),
+    n1Last: median('n1'),
+    n2Last: median('n2'),
   };
 }
 

@@ -158,6 +158,19 @@ export const historySchema = z.object({
   rival: z.array(intervalSchema.nullable()),
 });
 
+/** What the series was found to hold besides growth and competition. Months are calendar months. */
+export const structureSchema = z.object({
+  /** Harmonics of a yearly cycle in use; 0: none was found. */
+  seasonHarmonics: z.union([z.literal(0), z.literal(1), z.literal(2), z.literal(6)]),
+  /** Chance that rates and levels jumped once within the series. */
+  breakChance: probability,
+  /** Month in which they did, given that they did; null when too few draws have a break. */
+  breakMonth: intervalSchema.nullable(),
+  /** Single counts that the fit could not believe and nearly ignored. */
+  flaggedCounts: z.array(z.object({ firm: z.union([z.literal(1), z.literal(2)]), month: z.number().int() })),
+});
+export type Structure = z.infer<typeof structureSchema>;
+
 /** A thinned set of draws for the maps (at most CLOUD_SIZE): coefficients and where each draw ends. */
 export const cloudSchema = z.array(
   z.object({
@@ -182,6 +195,8 @@ export const fitReportSchema = z.object({
   parameters: z.array(parameterRowSchema),
   errors: errorsSchema,
   history: historySchema,
+  /** Absent in results of engine versions before 0.3. */
+  structure: structureSchema.optional(),
   outlook: outlookSchema,
   cloud: cloudSchema,
   unknowns: z.array(unknownSchema),

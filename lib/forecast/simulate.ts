@@ -3,11 +3,13 @@
  *
  * Level: the competitive growth system from the state in the last month of the series; with process noise the state is shaken once
  * a month, ln level += noise z. Observation, with persistent errors: ln count(h) = ln level(h) + e(h), e(h) = phi e(h-1) +
- * s sqrt(1 - phi^2) z from the error in the last month; with process noise: e(h) = s z. The same seed gives the same z whatever the
+ * s sqrt(1 - phi^2) z from the error in the last month; with process noise: e(h) = s z, plus the offset of the yearly cycle where the
+ * draws have one. The same seed gives the same z whatever the
  * levels are, so scenarios are compared with common random numbers.
  */
 import { createMonthFlow } from '../dynamics/month-flow';
 import { readColumn } from '../estimate/draws';
+import { seasonColumn } from '../estimate/state-posterior';
 import type { DrawSet } from '../estimate/types';
 import { createStream } from '../numeric/random';
 import { readDrawTable } from './draw-table';
@@ -21,8 +23,8 @@ export interface Futures {
 }
 
 /** Streams of the seed for process noise, and for observation errors of firm 1 and 2. */
-const PROCESS_STREAM = 30;
-const ERROR_STREAM = 31;
+const PROCESS_STREAM = 100;
+const ERROR_STREAM = 101;
 
 /**
  * Standard normal shocks of the state, two per draw and month: month h (1 ..) of draw i at 2 ((h - 1) count + i), firm 1 then firm 2.
@@ -76,6 +78,7 @@ export function simulateObservations(
   const futures = emptyFutures(months, total);
   for (const firm of [1, 2] as const) {
     const { size, persistence, residual } = readErrors(draws, firm);
+    const season = readSeasonFactors(draws, firm, months);
     const stream = createStream(seed, ERROR_STREAM + firm);
     const from = firm === 1 ? levels.focal : levels.rival;
     const to = firm === 1 ? futures.focal : futures.rival;
@@ -88,7 +91,7 @@ export function simulateObservations(
         for (let h = 0; h < months; h++) {
           carried *= phi;
           error = phi * error + fresh * stream.normal();
-          const level = from[h * count + i];
+          const level = from[h * count + i] * (season ? season[h * count + i] : 1);
           const at = h * total + i * replicates + 2 * pair;
           to[at] = level * Math.exp(carried + error);
           to[at + 1] = level * Math.exp(carried - error);
@@ -97,6 +100,20 @@ export function simulateObservations(
     }
   }
   return futures;
+}
+
+/**
+ * Factors of the yearly cycle on future counts of one firm, month-major as `Futures`; null when the draws have none.
+ */
+export function readSeasonFactors(draws: DrawSet, firm: 1 | 2, months: number): Float64Array | null {
+  if (!draws.columns.includes(seasonColumn(firm, 1))) return null;
+  const factors = new Float64Array(months * draws.count);
+  for (let h = 0; h < months; h++) {
+    readColumn(draws, seasonColumn(firm, h + 1)).forEach((offset, i) => {
+      factors[h * draws.count + i] = Math.exp(offset);
+    });
+  }
+  return factors;
 }
 
 function readErrors(draws: DrawSet, firm: 1 | 2) {

@@ -1,0 +1,282 @@
+/**
+ * The posterior of the state-space model: the log state wanders from the path and is observed with independent errors
+ * (`kalman-filter.ts`); optionally with a yearly cycle (`season.ts`) and one break from which all rates and levels may differ.
+ *
+ * q = (eight log parameters, ln size of the observation error of firm 1 and 2, ln process noise of firm 1 and 2,
+ *      six log parameters after the break, seasonal coefficients of firm 1, of firm 2); the last two where the model has them.
+ * observation sd^2 = floor^2 + size^2 (ln users), process noise in ln users per root month, each log parameter after the break
+ * ~ N(the one before, JUMP_SD).
+ */
+import type { RandomStream } from '../numeric/random';
+import { logSizeBeyondFloor, SMALLEST_ERROR } from './ar1-posterior';
+import {
+  createKalmanFilter,
+  type FilterGradient,
+  type FilterInput,
+  orImpossible,
+  SEASON_MONTHS,
+} from './kalman-filter';
+import type { Observations } from './observations';
+import { PARAMETERS } from './parameters';
+import type { Posterior } from './posterior';
+import { createLogPrior, type Priors } from './priors';
+import { createSeasonBasis, type Harmonics } from './season';
+import { sampleStatePath } from './state-path';
+import type { FitOptions } from './types';
+
+export interface StateModel {
+  harmonics: Harmonics;
+  hasBreak: boolean;
+}
+
+/** Columns of every draw of the state-space model; `breakMonth` is -1 without a break. */
+export const STATE_COLUMNS = [
+  'r1',
+  'r2',
+  'k1',
+  'k2',
+  'alpha',
+  'beta',
+  'n1Start',
+  'n2Start',
+  'n1',
+  'n2',
+  'size1',
+  'size2',
+  'noise1',
+  'noise2',
+  'breakMonth',
+] as const;
+
+/** sd of the jump of a log parameter at a break: a factor of 1.6 either way is nothing special (common practice). */
+const JUMP_SD = 0.5;
+
+/** Months that each segment must have at least: fewer say nothing about its parameters. */
+export const SEGMENT_MONTHS = 4;
+
+const SIZE = PARAMETERS.length;
+const NOISE = SIZE + 2;
+const AFTER = NOISE + 2;
+const SEGMENT = 6;
+/** Rough information of one month on a seasonal coefficient of unit prior sd, and of the data on ln process noise. */
+const SEASON_INFORMATION = 3;
+const NOISE_INFORMATION = 1;
+
+export interface StatePosterior extends Posterior {
+  readonly model: StateModel;
+  /** 1 where the count of a month is flagged, firm-major. */
+  readonly flags: Uint8Array;
+}
+
+export function createStatePosterior(
+  observations: Observations,
+  priors: Priors,
+  measurementFloor: FitOptions['measurementFloor'],
+  model: StateModel,
+): StatePosterior {
+  const { months } = observations;
+  const filter = createKalmanFilter(observations);
+  const logPrior = createLogPrior(priors);
+  const floors = [measurementFloor.focal, measurementFloor.rival].map((floor) =>
+    Math.max(floor, SMALLEST_ERROR),
+  );
+  const basis = createSeasonBasis(model.harmonics);
+  const season = AFTER + (model.hasBreak ? SEGMENT : 0);
+  const dimension = season + 2 * basis.length;
+  const input: FilterInput = {
+    theta: new Float64Array(SIZE),
+    after: model.hasBreak ? new Float64Array(SEGMENT) : null,
+    breakMonth: months,
+    observation: new Float64Array(2),
+    process: new Float64Array(2),
+    season: basis.length > 0 ? new Float64Array(2 * SEASON_MONTHS) : null,
+  };
+  const slopes: FilterGradient = {
+    theta: new Float64Array(SIZE),
+    after: new Float64Array(SEGMENT),
+    observation: new Float64Array(2),
+    process: new Float64Array(2),
+    season: new Float64Array(2 * SEASON_MONTHS),
+  };
+  let evaluations = 0;
+
+  const readInput = (q: Float64Array) => {
+    for (let j = 0; j < SIZE; j++) input.theta[j] = q[j];
+    for (let i = 0; i < 2; i++) {
+      input.observation[i] = Math.exp(2 * q[SIZE + i]) + floors[i] * floors[i];
+      input.process[i] = Math.exp(2 * q[NOISE + i]);
+    }
+    if (input.after) for (let j = 0; j < SEGMENT; j++) input.after[j] = q[AFTER + j];
+    if (input.season) fillSeason(q, input.season);
+  };
+
+  const fillSeason = (q: Float64Array, offsets: Float64Array) => {
+    offsets.fill(0);
+    for (let i = 0; i < 2; i++) {
+      for (let k = 0; k < basis.length; k++) {
+        const coefficient = q[season + i * basis.length + k];
+        const wave = basis[k];
+        for (let m = 0; m < SEASON_MONTHS; m++) offsets[i * SEASON_MONTHS + m] += coefficient * wave[m];
+      }
+    }
+  };
+
+  const addNormal = (
+    at: number,
+    mean: number,
+    sd: number,
+    q: Float64Array,
+    gradient: Float64Array | null,
+  ): number => {
+    const z = (q[at] - mean) / sd;
+    if (gradient) gradient[at] -= z / sd;
+    return logNormalDensity(z, sd);
+  };
+
+  /** Log prior of everything beyond the eight log parameters. */
+  const addFurtherPriors = (q: Float64Array, gradient: Float64Array | null): number => {
+    const { errorSize, processNoise } = priors;
+    let value = 0;
+    for (let i = 0; i < 2; i++) {
+      value += addNormal(SIZE + i, errorSize.meanLog, errorSize.sdLog, q, gradient);
+      value += addNormal(NOISE + i, processNoise.meanLog, processNoise.sdLog, q, gradient);
+    }
+    for (let j = 0; input.after && j < SEGMENT; j++) {
+      value += addNormal(AFTER + j, q[j], JUMP_SD, q, gradient);
+      if (gradient) gradient[j] += (q[AFTER + j] - q[j]) / (JUMP_SD * JUMP_SD);
+    }
+    for (let j = season; j < dimension; j++) value += addNormal(j, 0, 1, q, gradient);
+    return value;
+  };
+
+  const addLikelihoodGradient = (q: Float64Array, gradient: Float64Array) => {
+    for (const part of Object.values(slopes) as Float64Array[]) part.fill(0);
+    filter.sweepBack(input, slopes);
+    for (let j = 0; j < SIZE; j++) gradient[j] += slopes.theta[j];
+    for (let i = 0; i < 2; i++) {
+      gradient[SIZE + i] += slopes.observation[i] * 2 * Math.exp(2 * q[SIZE + i]);
+      gradient[NOISE + i] += slopes.process[i] * 2 * input.process[i];
+    }
+    for (let j = 0; input.after && j < SEGMENT; j++) gradient[AFTER + j] += slopes.after[j];
+    for (let i = 0; i < 2; i++) {
+      for (let k = 0; k < basis.length; k++) {
+        let sum = 0;
+        for (let m = 0; m < SEASON_MONTHS; m++) sum += basis[k][m] * slopes.season[i * SEASON_MONTHS + m];
+        gradient[season + i * basis.length + k] += sum;
+      }
+    }
+  };
+
+  const logDensity = (q: Float64Array, gradient: Float64Array | null): number => {
+    evaluations++;
+    gradient?.fill(0);
+    readInput(q);
+    const likelihood = filter.run(input);
+    if (!(likelihood > Number.NEGATIVE_INFINITY)) return Number.NEGATIVE_INFINITY;
+    const prior = logPrior(q, gradient) + addFurtherPriors(q, gradient);
+    if (gradient) addLikelihoodGradient(q, gradient);
+    return orImpossible(likelihood + prior);
+  };
+
+  /** Persistent residuals of the path are mostly process noise: the observation error starts with the independent share. */
+  const place: Posterior['place'] = (theta, guesses) => {
+    const q = new Float64Array(dimension);
+    q.set(theta);
+    guesses.forEach((guess, i) => {
+      q[SIZE + i] = logSizeBeyondFloor(guess.size * Math.sqrt(1 - guess.persistence), floors[i]);
+      q[NOISE + i] = priors.processNoise.meanLog;
+    });
+    for (let j = 0; model.hasBreak && j < SEGMENT; j++) q[AFTER + j] = theta[j];
+    return q;
+  };
+
+  const addInformation: Posterior['addInformation'] = (_, information) => {
+    const n = dimension;
+    const add = (i: number, j: number, value: number) => {
+      information[i * n + j] += value;
+    };
+    for (let i = 0; i < 2; i++) {
+      add(SIZE + i, SIZE + i, observations.firms[i].months.length + priors.errorSize.sdLog ** -2);
+      add(NOISE + i, NOISE + i, NOISE_INFORMATION + priors.processNoise.sdLog ** -2);
+    }
+    const tie = JUMP_SD ** -2;
+    for (let j = 0; model.hasBreak && j < SEGMENT; j++) {
+      add(j, j, tie);
+      add(AFTER + j, AFTER + j, 2 * tie);
+      add(j, AFTER + j, -tie);
+      add(AFTER + j, j, -tie);
+    }
+    for (let j = season; j < n; j++) add(j, j, 1 + SEASON_INFORMATION * months);
+  };
+
+  const fillDraw = (q: Float64Array, stream: RandomStream, out: Float64Array, offset: number): boolean => {
+    readInput(q);
+    if (!(filter.run(input) > Number.NEGATIVE_INFINITY)) return false;
+    for (let j = 0; j < SIZE; j++) out[offset + j] = Math.exp(q[j]);
+    for (let j = 0; input.after && j < SEGMENT; j++) out[offset + j] = Math.exp(q[AFTER + j]);
+    const [p11, p12, p22] = filter.covariance;
+    const slope = p11 > 0 ? p12 / p11 : 0;
+    const deviation = Math.sqrt(Math.max(p11, 0)) * stream.normal();
+    const rest = Math.sqrt(Math.max(p22 - slope * p12, 0)) * stream.normal();
+    out[offset + 8] = Math.exp(filter.mean[0] + deviation);
+    out[offset + 9] = Math.exp(filter.mean[1] + slope * deviation + rest);
+    for (let i = 0; i < 2; i++) {
+      out[offset + 10 + i] = Math.sqrt(input.observation[i]);
+      out[offset + 12 + i] = Math.sqrt(input.process[i]);
+    }
+    out[offset + 14] = model.hasBreak ? input.breakMonth : -1;
+    for (let k = 0; input.season && k < 2 * SEASON_MONTHS; k++) {
+      const firm = k < SEASON_MONTHS ? 0 : 1;
+      out[offset + STATE_COLUMNS.length + k] =
+        input.season[firm * SEASON_MONTHS + ((months + k) % SEASON_MONTHS)];
+    }
+    return true;
+  };
+
+  const fillPath = (q: Float64Array, stream: RandomStream, out: Float64Array): boolean => {
+    readInput(q);
+    if (!(filter.run(input) > Number.NEGATIVE_INFINITY)) return false;
+    sampleStatePath(filter.history, months, stream, out);
+    return true;
+  };
+
+  return {
+    model,
+    dimension,
+    observations,
+    priors,
+    segments: model.hasBreak ? [0, AFTER] : [0],
+    columns: model.harmonics === 0 ? STATE_COLUMNS : [...STATE_COLUMNS, ...seasonColumns()],
+    flags: filter.flags,
+    get evaluations() {
+      return evaluations;
+    },
+    get breakMonth() {
+      return model.hasBreak ? input.breakMonth : null;
+    },
+    set breakMonth(month) {
+      input.breakMonth = month ?? months;
+    },
+    logDensity,
+    place,
+    addInformation,
+    fillDraw,
+    fillPath,
+  };
+}
+
+/** Columns of the seasonal offsets of ln counts: firm, then month ahead of the last one, 1 to 12, repeating. */
+export function seasonColumn(firm: 1 | 2, monthAhead: number): string {
+  return `season${firm}m${((monthAhead - 1) % SEASON_MONTHS) + 1}`;
+}
+
+function seasonColumns(): string[] {
+  const ahead = Array.from({ length: SEASON_MONTHS }, (_, k) => k + 1);
+  return ([1, 2] as const).flatMap((firm) => ahead.map((month) => seasonColumn(firm, month)));
+}
+
+const HALF_LOG_TWO_PI = Math.log(2 * Math.PI) / 2;
+
+function logNormalDensity(z: number, sd: number): number {
+  return -0.5 * z * z - Math.log(sd) - HALF_LOG_TWO_PI;
+}
