@@ -71,7 +71,12 @@ function main() {
     console.error(tooOld);
     return 1;
   }
-  ensureInstalled(ROOT);
+  try {
+    ensureInstalled(ROOT);
+  } catch (problem) {
+    console.error(problem.message);
+    return 1;
+  }
   const wanted = process.argv.slice(2);
   const unknown = wanted.filter((name) => !STEPS.some((step) => step.name === name));
   if (unknown.length > 0) {
