@@ -1,5 +1,5 @@
 import { describe, expect, it } from 'vitest';
-import { normalQuantile } from '@/lib/numeric/normal';
+import { normalCdf, normalQuantile } from '@/lib/numeric/normal';
 
 describe('standard normal quantile', () => {
   it('agrees with scipy.stats.norm.ppf in the centre, the shoulders and the far tail', () => {
@@ -26,5 +26,19 @@ describe('standard normal quantile', () => {
     expect(normalQuantile(1)).toBe(Infinity);
     expect(normalQuantile(1.1)).toBeNaN();
     expect(normalQuantile(Number.NaN)).toBeNaN();
+  });
+});
+
+describe('standard normal distribution function', () => {
+  it('undoes the quantile', () => {
+    for (const p of [1e-20, 1e-6, 0.0013, 0.3, 0.5, 0.9, 0.9999]) {
+      expect(Math.abs(normalCdf(normalQuantile(p)) / p - 1)).toBeLessThan(1e-12);
+    }
+  });
+
+  it('has no value for no number', () => {
+    expect(normalCdf(Number.NaN)).toBeNaN();
+    expect(normalCdf(Number.NEGATIVE_INFINITY)).toBe(0);
+    expect(normalCdf(Number.POSITIVE_INFINITY)).toBe(1);
   });
 });
