@@ -56,8 +56,9 @@ export interface KalmanFilter {
   /** Log likelihood up to a constant; -Infinity where the path cannot be followed. */
   run(input: FilterInput): number;
   /**
-   * Adds the gradient along the last `run`, with F held fixed: d F / d theta is left out. A Hamiltonian chain stays exact under any
-   * smooth force, since the accept step uses the true density; this force costs a third of the exact one.
+   * Adds the gradient along the last `run` with F held fixed: how F itself changes is left out, which vanishes with the process noise.
+   * A Hamiltonian chain stays exact under any smooth force, since the accept step uses the true density; this one costs a third of the
+   * exact one.
    */
   sweepBack(input: FilterInput, gradient: FilterGradient): void;
 }

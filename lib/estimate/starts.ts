@@ -21,7 +21,7 @@ export interface Start {
 const MAX_PRIOR_SDS = 2.5;
 
 /** Weight of the ridge that keeps the regressions solvable, as a share of the mean square of each column. */
-const RIDGE = 1e-6;
+const RIDGE = 1e-8;
 
 /** Both regressions where the data allow them, then `hypercube` draws. */
 export function createStarts(
