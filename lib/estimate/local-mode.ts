@@ -55,7 +55,7 @@ export function findLocalMode(
   coordinates.fromParameters(q, start);
   if (!(coordinates.logDensity(start, null) > Number.NEGATIVE_INFINITY)) return null;
   const { point, value } = climb(coordinates.logDensity, start, scale);
-  const lower = factorWithRidge(negativeHessian(coordinates.logDensity, point, scale), scale);
+  const lower = factorCurvature(coordinates, point, scale);
   let logDeterminant = 0;
   for (let j = 0; lower && j < n; j++) logDeterminant += Math.log(lower[j * (n + 1)]);
   const at = new Float64Array(n);
@@ -83,6 +83,28 @@ function roughCovariance(
   posterior.addInformation(q, information);
   const lower = choleskyOrNull(information, n);
   return lower && invertFromCholesky(lower, n);
+}
+
+/** A spread that is wrong by more than this factor makes the differences of the gradient too coarse or too fine. */
+const MISJUDGED = 3;
+
+/** Lower factor of minus the Hessian at a mode; differences are taken anew when the spread turns out to be far off. */
+function factorCurvature(
+  coordinates: WorkingCoordinates,
+  point: Float64Array,
+  scale: Float64Array,
+): Float64Array | null {
+  const n = point.length;
+  const hessian = negativeHessian(coordinates.logDensity, point, scale);
+  const better = scale.map((sd, j) => {
+    const curvature = hessian[j * (n + 1)];
+    return curvature > 0 ? Math.min(1 / Math.sqrt(curvature), MAX_SPREAD) : sd;
+  });
+  const isMisjudged = better.some((sd, j) => sd > MISJUDGED * scale[j] || scale[j] > MISJUDGED * sd);
+  return factorWithRidge(
+    isMisjudged ? negativeHessian(coordinates.logDensity, point, better) : hessian,
+    better,
+  );
 }
 
 function factorWithRidge(hessian: Float64Array, scale: Float64Array): Float64Array | null {

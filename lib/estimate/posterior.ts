@@ -27,7 +27,10 @@ export interface Posterior {
   logDensity(q: Float64Array, gradient: Float64Array | null): number;
   /** A point from log parameters and a guess of each firm's errors. */
   place(theta: Float64Array, errors: readonly [ErrorGuess, ErrorGuess]): Float64Array;
-  /** Adds rough information (inverse covariance, prior included) of the coordinates beyond the log parameters to a row-major matrix. */
+  /**
+   * Completes a row-major matrix of rough information (inverse covariance), which holds that of the first eight coordinates, by that of
+   * the others, prior included.
+   */
   addInformation(q: Float64Array, information: Float64Array): void;
   /**
    * Natural-unit values of a draw at q, `columns.length` of them from `offset` on, with the unobserved state at the last month drawn

@@ -199,13 +199,7 @@ export function createStatePosterior(
       add(SIZE + i, SIZE + i, observations.firms[i].months.length + priors.errorSize.sdLog ** -2);
       add(NOISE + i, NOISE + i, NOISE_INFORMATION + priors.processNoise.sdLog ** -2);
     }
-    const tie = JUMP_SD ** -2;
-    for (let j = 0; model.hasBreak && j < SEGMENT; j++) {
-      add(j, j, tie);
-      add(AFTER + j, AFTER + j, 2 * tie);
-      add(j, AFTER + j, -tie);
-      add(AFTER + j, j, -tie);
-    }
+    if (model.hasBreak) splitInformation(information, n, 1 - input.breakMonth / months);
     for (let j = season; j < n; j++) add(j, j, 1 + SEASON_INFORMATION * months);
   };
 
@@ -263,6 +257,31 @@ export function createStatePosterior(
     fillDraw,
     fillPath,
   };
+}
+
+/**
+ * Shares the information about the parameters of one segment out between the segments before and after a break, by their months, and
+ * ties the two by the prior of the jump. The scaling is a congruence, so the matrix stays positive definite.
+ */
+function splitInformation(information: Float64Array, n: number, shareAfter: number): void {
+  const tie = JUMP_SD ** -2;
+  const scale = Math.sqrt(1 - shareAfter);
+  for (let i = 0; i < SEGMENT; i++) {
+    for (let j = 0; j < SEGMENT; j++)
+      information[(AFTER + i) * n + AFTER + j] = shareAfter * information[i * n + j];
+  }
+  for (let i = 0; i < SEGMENT; i++) {
+    for (let j = 0; j < n; j++) {
+      information[i * n + j] *= scale;
+      information[j * n + i] *= scale;
+    }
+  }
+  for (let j = 0; j < SEGMENT; j++) {
+    information[j * n + j] += tie;
+    information[(AFTER + j) * n + AFTER + j] += tie;
+    information[j * n + AFTER + j] -= tie;
+    information[(AFTER + j) * n + j] -= tie;
+  }
 }
 
 /** Columns of the seasonal offsets of ln counts: firm, then month ahead of the last one, 1 to 12, repeating. */

@@ -1,0 +1,144 @@
+import { describe, expect, it } from 'vitest';
+import { DEFAULT_FIT_OPTIONS, ESS_LIMIT, R_HAT_LIMIT } from '@/lib/estimate/defaults';
+import { readColumn } from '@/lib/estimate/draws';
+import { createFitRun, type Fit } from '@/lib/estimate/fit-run';
+import type { FitInput, FitProgress } from '@/lib/estimate/types';
+import { quantiles } from '@/lib/numeric/quantile';
+import type { MonthlySeries } from '@/lib/series/types';
+import { COEXISTING, RIVAL_LOSES, simulateSeries, simulateWandering, type Truth } from './simulated-market';
+
+function runToEnd(series: MonthlySeries, options: Partial<FitInput['options']> = {}) {
+  const run = createFitRun({ series, options: { ...DEFAULT_FIT_OPTIONS, ...options } });
+  const progress: FitProgress[] = [];
+  for (;;) {
+    const step = run.next();
+    if (step.done) return { ...step, progress };
+    progress.push(step.progress);
+  }
+}
+
+function fitOf(series: MonthlySeries, options: Partial<FitInput['options']> = {}): Fit {
+  const end = runToEnd(series, options);
+  if (!('fit' in end)) throw new Error(`no fit: ${end.failure.status}`);
+  return end.fit;
+}
+
+const COLUMNS = { r1: 'r1', r2: 'r2', k1: 'k1', k2: 'k2', alpha: 'alpha', beta: 'beta' } as const;
+
+/** Distance of the truth from the middle of the draws, in units of half their 98 % interval. */
+function missesOf(fit: Fit, truth: Truth): number[] {
+  return Object.keys(COLUMNS).map((column) => {
+    const [low, middle, high] = quantiles(readColumn(fit.draws, column), [0.01, 0.5, 0.99]).map(Math.log);
+    return Math.abs(Math.log(truth[column as keyof typeof COLUMNS]) - middle) / ((high - low) / 2);
+  });
+}
+
+describe('a fit', () => {
+  it('recovers the parameters of both error models within their intervals, and converges', () => {
+    for (const [truth, errorModel] of [
+      [COEXISTING, 'process-noise'],
+      [RIVAL_LOSES, 'ar1'],
+    ] as const) {
+      const fit = fitOf(simulateSeries(truth, 48, 0.02, 1), { errorModel });
+      expect(fit.status).toBe('converged');
+      expect(fit.rHat).toBeLessThanOrEqual(R_HAT_LIMIT);
+      expect(fit.ess).toBeGreaterThanOrEqual(ESS_LIMIT);
+      // six 98 % intervals: each holds the truth but for a chance of one in fifty
+      expect(Math.max(...missesOf(fit, truth))).toBeLessThan(1.2);
+      expect(fit.starts.filter((start) => start.reachedBest).length).toBeGreaterThan(fit.starts.length / 2);
+    }
+  });
+
+  it('gives the same numbers for the same seed, others for another', () => {
+    const series = simulateSeries(RIVAL_LOSES, 24, 0.03, 4);
+    const one = fitOf(series, { seed: 5 });
+    expect(fitOf(series, { seed: 5 }).draws.values).toEqual(one.draws.values);
+    expect(fitOf(series, { seed: 6 }).draws.values).not.toEqual(one.draws.values);
+  });
+
+  it('tells true progress that never goes back', () => {
+    const { progress } = runToEnd(simulateSeries(COEXISTING, 30, 0.03, 1));
+    const order = ['starts', 'polish', 'warm-up', 'sampling'];
+    for (let i = 1; i < progress.length; i++) {
+      expect(order.indexOf(progress[i].stage)).toBeGreaterThanOrEqual(order.indexOf(progress[i - 1].stage));
+      expect(progress[i].startsDone).toBeGreaterThanOrEqual(progress[i - 1].startsDone);
+      expect(progress[i].drawsKept).toBeGreaterThanOrEqual(progress[i - 1].drawsKept);
+    }
+    expect(progress.some(({ rHat, ess }) => rHat !== null && ess !== null)).toBe(true);
+  });
+
+  it('finds process noise where there is some, and little where there is none', () => {
+    const noiseOf = (series: MonthlySeries) => quantiles(readColumn(fitOf(series).draws, 'noise1'), [0.5])[0];
+    expect(noiseOf(simulateWandering(COEXISTING, 60, 0.01, 0.04, 2))).toBeGreaterThan(0.025);
+    expect(noiseOf(simulateSeries(COEXISTING, 60, 0.04, 2))).toBeLessThan(0.01);
+  });
+});
+
+describe('what a series may hold besides', () => {
+  const base = simulateSeries(COEXISTING, 48, 0.02, 3);
+  const cycle = (t: number) => 0.12 * Math.cos((2 * Math.PI * (t - 3)) / 12);
+
+  it('a yearly cycle is found and measured; none is found in a series without', () => {
+    const focal = base.focal.map((count, t) => Math.round(count! * Math.exp(cycle(t))));
+    const fit = fitOf({ ...base, focal });
+    expect(fit.choice.harmonics).toBeGreaterThanOrEqual(1);
+    for (const ahead of [1, 4, 9]) {
+      const [offset] = quantiles(readColumn(fit.draws, `season1m${ahead}`), [0.5]);
+      // 48 counts of sd 0.02 fix two coefficients to 0.004
+      expect(Math.abs(offset - cycle(47 + ahead))).toBeLessThan(0.02);
+    }
+    expect(fitOf(base).choice.harmonics).toBe(0);
+  });
+
+  it('one break is found in its month; none in a series without', () => {
+    const before = simulateSeries(COEXISTING, 30, 0.02, 5);
+    const changed: Truth = {
+      ...COEXISTING,
+      k1: 4e5,
+      alpha: 1.3,
+      n1: before.focal[29]!,
+      n2: before.rival[29]!,
+    };
+    const after = simulateSeries(changed, 25, 0.02, 6);
+    const join = (a: (number | null)[], b: (number | null)[]) => [...a, ...b.slice(1)];
+    const fit = fitOf({
+      ...before,
+      focal: join(before.focal, after.focal),
+      rival: join(before.rival, after.rival),
+    });
+    expect(fit.choice.breakChance).toBeGreaterThan(0.9);
+    const [month] = quantiles(readColumn(fit.draws, 'breakMonth'), [0.5]);
+    expect(Math.abs(month - 29)).toBeLessThanOrEqual(3);
+    // the parameters in force now are those after the break
+    expect(quantiles(readColumn(fit.draws, 'k1'), [0.5])[0]).toBeLessThan(6e5);
+    expect(fitOf(base).choice.breakChance).toBeLessThan(0.2);
+  });
+
+  it('a spike is flagged and hardly moves the fit; a clean series has no flag', () => {
+    const focal = base.focal.map((count, t) => (t === 20 ? 2 * count! : count));
+    const spiked = fitOf({ ...base, focal });
+    const clean = fitOf(base);
+    expect(spiked.choice.flags).toEqual([{ firm: 1, month: 20 }]);
+    expect(clean.choice.flags).toEqual([]);
+    const middle = (fit: Fit) => quantiles(readColumn(fit.draws, 'k1'), [0.5])[0];
+    expect(Math.abs(middle(spiked) / middle(clean) - 1)).toBeLessThan(0.05);
+  });
+
+  it('gaps and a late launch are no errors', () => {
+    const focal = base.focal.map((count, t) => (t % 5 === 2 ? null : count));
+    const late = base.rival.map((count, t) => (t < 9 ? 0 : count));
+    const fit = fitOf({ ...base, focal, rival: late });
+    expect(fit.observations.firms[1].entry).toBe(9);
+    expect(fit.draws.values.every(Number.isFinite)).toBe(true);
+    expect(quantiles(readColumn(fit.draws, 'r2'), [0.5])[0]).toBeGreaterThan(0.05);
+  });
+});
+
+describe('a series that cannot be fitted', () => {
+  it('ends with a status, at once', () => {
+    const short = { firstMonth: 0, focal: [1, 2, 3], rival: [3, 2, 1] };
+    expect(runToEnd(short)).toMatchObject({ done: true, failure: { status: 'too-short' } });
+    const absent = { firstMonth: 0, focal: new Array(30).fill(0), rival: new Array(30).fill(8) };
+    expect(runToEnd(absent)).toMatchObject({ done: true, failure: { status: 'no-usable-data' } });
+  });
+});
