@@ -1,10 +1,10 @@
 /** Runs a worker as a process: starts it, waits for a sign to stop, stops it, and ends. */
-import type { FitWorker } from './fit-worker';
 import { getLogger } from './log';
+import type { Worker } from './start-worker';
 
 const SIGNS_TO_STOP = ['SIGTERM', 'SIGINT', 'disconnect'] as const;
 
-export async function runProcess(start: () => Promise<FitWorker>): Promise<void> {
+export async function runProcess(start: () => Promise<Worker>): Promise<void> {
   const log = getLogger();
   try {
     // Listening before starting: a sign that comes during the start must not be lost.

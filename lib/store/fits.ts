@@ -6,9 +6,11 @@
 import type { Prisma } from '../../prisma/generated/client';
 import type { DrawSet, FitOptions, FitProgress } from '../estimate/types';
 import { type FitReport, fitReportSchema } from '../forecast/report';
-import { type AuditInput, insertAuditEntry } from './audit';
+import { analysisWork } from './analysis-work';
+import { type Deed, insertAuditEntry } from './audit';
 import { getPrisma, type Queryable } from './client';
 import { decodeDraws } from './draw-bytes';
+import { cancelUnfinishedFits } from './fit-work';
 import { createId } from './ids';
 import { fitOptionsSchema, fitProgressSchema, readJson } from './json-columns';
 import { StoreError } from './store-error';
@@ -73,7 +75,7 @@ export async function createFit(args: {
   marketId: string;
   revisionId: string;
   fit: NewFit;
-  audit?: Omit<AuditInput, 'subjectType' | 'subjectId'>;
+  audit?: Deed;
 }): Promise<{ fitId: string } | null> {
   const { workspaceId, marketId, revisionId, fit, audit } = args;
   return getPrisma().$transaction(async (db) => {
@@ -94,7 +96,8 @@ export async function insertFit(
   args: { workspaceId: string; marketId: string; revisionId: string; fit: NewFit },
 ): Promise<string> {
   const { fit, ...scope } = args;
-  await cancelUnfinished(db, { workspaceId: scope.workspaceId, marketId: scope.marketId });
+  await cancelUnfinishedFits(db, { workspaceId: scope.workspaceId, marketId: scope.marketId });
+  await cancelAnalysesOfOthers(db, scope);
   const id = fit.id ?? createId();
   const options: FitOptions = fitOptionsSchema.parse(fit.options);
   await db.fit.create({
@@ -118,7 +121,7 @@ export async function askCancel(args: {
 }): Promise<'cancelled' | 'asked' | 'ended' | null> {
   const { fitId: id, workspaceId } = args;
   return getPrisma().$transaction(async (db) => {
-    await cancelUnfinished(db, { id, workspaceId });
+    await cancelUnfinishedFits(db, { id, workspaceId });
     const row = await db.fit.findFirst({ where: { id, workspaceId }, select: { state: true } });
     if (!row) return null;
     if (row.state === 'running') return 'asked';
@@ -126,12 +129,17 @@ export async function askCancel(args: {
   });
 }
 
-async function cancelUnfinished(db: Queryable, where: Prisma.FitWhereInput): Promise<void> {
-  await db.fit.updateMany({
-    where: { ...where, state: 'queued' },
-    data: { state: 'cancelled', cancelAsked: true, finishedAt: new Date() },
-  });
-  await db.fit.updateMany({ where: { ...where, state: 'running' }, data: { cancelAsked: true } });
+/** Analyses of the market's other revisions would answer for counts that nobody looks at any more. */
+async function cancelAnalysesOfOthers(
+  db: Queryable,
+  { workspaceId, marketId, revisionId }: { workspaceId: string; marketId: string; revisionId: string },
+): Promise<void> {
+  await analysisWork.cancelUnfinished(db, { workspaceId, marketId, revisionId: { not: revisionId } });
+}
+
+/** Whether two fits of one revision give the same numbers, by the same version of the engine. */
+export function hasSameInput(a: FitOptions, b: FitOptions): boolean {
+  return JSON.stringify(fitOptionsSchema.parse(a)) === JSON.stringify(fitOptionsSchema.parse(b));
 }
 
 export async function readFit(args: { workspaceId: string; fitId: string }): Promise<FitView | null> {

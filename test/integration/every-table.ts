@@ -1,4 +1,4 @@
-/** One row in every table, written in SQL so that it needs no generated client of the newest schema. */
+/** One row in every table that is there, written in SQL so that it needs no generated client of the newest schema. */
 
 type Query = (sql: string, values?: unknown[]) => Promise<Record<string, unknown>[]>;
 
@@ -75,6 +75,20 @@ const ROWS: [table: string, row: Record<string, unknown>][] = [
     },
   ],
   ['forecast_link', { id: 'fl', workspaceId: 'w', issuedForecastId: 'i', tokenHash: 'fh', hint: 'abc' }],
+  [
+    'analysis',
+    {
+      id: 'n',
+      workspaceId: 'w',
+      marketId: 'k',
+      revisionId: 'r',
+      fitId: 'f',
+      kind: 'backtest',
+      engineVersion: '1',
+      state: 'failed',
+      failureCode: 'too-few-origins',
+    },
+  ],
   [
     'audit_entry',
     { id: 'ae', workspaceId: 'w', action: 'issue-forecast', subjectType: 'issued', subjectId: 'i' },

@@ -5,11 +5,17 @@ import { setTimeout } from 'node:timers/promises';
 import { afterAll, afterEach, beforeEach, expect, it } from 'vitest';
 import { ENGINE_VERSION } from '@/lib/estimate/engine-version';
 import type { OutlookStep } from '@/lib/forecast/outlook-run';
-import { closeSender, enqueueFit } from '@/lib/jobs/enqueue-fit';
+import { enqueueFit } from '@/lib/jobs/enqueue-fit';
 import { type FitJobTools, runFitJob, STORED_DRAWS } from '@/lib/jobs/fit-job';
-import { type FitWorker, MAX_ATTEMPTS, SILENT_SECONDS, startFitWorker } from '@/lib/jobs/fit-worker';
 import { getLogger } from '@/lib/jobs/log';
 import { FIT_QUEUE, openQueue } from '@/lib/jobs/queue';
+import { closeSender } from '@/lib/jobs/sender';
+import {
+  MAX_ATTEMPTS,
+  SILENT_SECONDS,
+  startWorker as startAppWorker,
+  type Worker,
+} from '@/lib/jobs/start-worker';
 import { cancelFit } from '@/lib/services/cancel-fit';
 import { readFitProgress } from '@/lib/services/read-fit-progress';
 import { requestFit } from '@/lib/services/request-fit';
@@ -34,7 +40,7 @@ describeOnDatabases('jobs', (readUrl) => {
   let viewer: Viewer;
   let marketId: string;
   let fitId: string;
-  const workers: FitWorker[] = [];
+  const workers: Worker[] = [];
   const processes: ChildProcess[] = [];
 
   beforeEach(async () => {
@@ -55,7 +61,7 @@ describeOnDatabases('jobs', (readUrl) => {
   const readRow = () => getPrisma().fit.findUniqueOrThrow({ where: { id: fitId } });
 
   async function startWorker(options: FakeOptions): Promise<void> {
-    workers.push(await startFitWorker(createFakeRun(options)));
+    workers.push(await startAppWorker({ createRun: createFakeRun(options), analyses: {} }));
   }
 
   /** A worker as a process of its own, ready to work. */

@@ -2,9 +2,9 @@
 import { afterAll, beforeEach, expect, it } from 'vitest';
 import type { Push } from '@/lib/dynamics/push';
 import { issuedForecastSchema } from '@/lib/issue/format';
-import { closeSender } from '@/lib/jobs/enqueue-fit';
 import { runFitJob } from '@/lib/jobs/fit-job';
 import { getLogger } from '@/lib/jobs/log';
+import { closeSender } from '@/lib/jobs/sender';
 import { addRevision } from '@/lib/services/add-revision';
 import { cancelFit } from '@/lib/services/cancel-fit';
 import { TRY_LIMITS } from '@/lib/services/count-tries';

@@ -1,6 +1,7 @@
 /** Fits from queue to end: of several writers one wins, and a worker that was given up can no longer write. */
 import { setTimeout as wait } from 'node:timers/promises';
 import { beforeEach, expect, it } from 'vitest';
+import { GAVE_UP } from '@/lib/store/claimed-work';
 import { getPrisma } from '@/lib/store/client';
 import * as work from '@/lib/store/fit-work';
 import * as fits from '@/lib/store/fits';
@@ -130,7 +131,7 @@ describeOnDatabases('the store of fits', () => {
     expect(await work.sweepFits({ silentSeconds: 60, maxAttempts: 1 })).toEqual([]);
     expect(await fits.readFit({ workspaceId, fitId })).toMatchObject({
       state: 'failed',
-      failureCode: work.GAVE_UP,
+      failureCode: GAVE_UP,
     });
 
     const cancelled = await storeMarket(workspaceId);
