@@ -38,8 +38,10 @@ export interface MonthFlow {
   setParameters(r1: number, r2: number, alpha: number, beta: number): void;
   /** Moves `state` on by month `slot`, the months of a path being taped in ascending order. @returns false when too fast or not finite */
   advance(slot: number): boolean;
-  /** Moves columns `firstColumn` .. of `tangent` through month `slot` as taped. */
-  pushForward(slot: number, firstColumn: number): void;
+  /** Moves `tangent` through month `slot` as taped. */
+  pushForward(slot: number): void;
+  /** Fills `out` at `at` with the derivative of the state after month `slot` by the state before, row-major (2 x 2). */
+  fillPropagator(slot: number, out: Float64Array, at: number): void;
   /** Moves `adjoint` back through month `slot` as taped, adding to `gradient`. */
   pullBack(slot: number): void;
   clearGradient(): void;
@@ -200,11 +202,63 @@ export function createMonthFlow(slots: number): MonthFlow {
     tangent[2 * column + 1] = sy + sixth * (ay + 2 * (by + cy) + dy);
   };
 
-  const pushForward = (slot: number, firstColumn: number): void => {
+  const fillPropagator = (slot: number, out: Float64Array, to: number): void => {
+    const h = 1 / stepsOf[slot];
+    const half = 0.5 * h;
+    const sixth = h / 6;
+    const r1Alpha = r1 * alpha;
+    const r2Beta = r2 * beta;
+    let p11 = 1;
+    let p12 = 0;
+    let p21 = 0;
+    let p22 = 1;
+    for (let at = tapeStart[slot]; at < tapeStart[slot + 1]; at += TAPE_WIDTH) {
+      let s11 = p11;
+      let s12 = p12;
+      let s21 = p21;
+      let s22 = p22;
+      let sum11 = 0;
+      let sum12 = 0;
+      let sum21 = 0;
+      let sum22 = 0;
+      for (let stage = 0; stage < 4; stage++) {
+        const x = tape[at + 2 * stage];
+        const y = tape[at + 2 * stage + 1];
+        const a = r1 * (1 - 2 * x - alpha * y);
+        const b = -r1Alpha * x;
+        const c = -r2Beta * y;
+        const d = r2 * (1 - 2 * y - beta * x);
+        const k11 = a * s11 + b * s21;
+        const k12 = a * s12 + b * s22;
+        const k21 = c * s11 + d * s21;
+        const k22 = c * s12 + d * s22;
+        const weight = stage === 0 || stage === 3 ? sixth : 2 * sixth;
+        sum11 += weight * k11;
+        sum12 += weight * k12;
+        sum21 += weight * k21;
+        sum22 += weight * k22;
+        const reach = stage === 2 ? h : half;
+        s11 = p11 + reach * k11;
+        s12 = p12 + reach * k12;
+        s21 = p21 + reach * k21;
+        s22 = p22 + reach * k22;
+      }
+      p11 += sum11;
+      p12 += sum12;
+      p21 += sum21;
+      p22 += sum22;
+    }
+    out[to] = p11;
+    out[to + 1] = p12;
+    out[to + 2] = p21;
+    out[to + 3] = p22;
+  };
+
+  const pushForward = (slot: number): void => {
     const h = 1 / stepsOf[slot];
     for (let at = tapeStart[slot]; at < tapeStart[slot + 1]; at += TAPE_WIDTH) {
       fillStages(at);
-      for (let column = firstColumn; column < TANGENT_COLUMNS; column++) stepColumn(column, h);
+      for (let column = 0; column < TANGENT_COLUMNS; column++) stepColumn(column, h);
     }
   };
 
@@ -221,6 +275,7 @@ export function createMonthFlow(slots: number): MonthFlow {
     },
     advance,
     pushForward,
+    fillPropagator,
     pullBack,
     clearGradient() {
       gradient.fill(0);

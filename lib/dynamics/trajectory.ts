@@ -115,7 +115,7 @@ export function createTrajectory(grid: TrajectoryGrid): Trajectory {
       if (t === entry2) enter(tangent, 1, levelY[t]);
       writeLogSensitivities(tangent, 0, t >= entry1 ? 1 / levelX[t] : 0, out, t * PARAMETER_COUNT);
       writeLogSensitivities(tangent, 1, t >= entry2 ? 1 / levelY[t] : 0, out, (months + t) * PARAMETER_COUNT);
-      if (t < months - 1) flow.pushForward(t, 0);
+      if (t < months - 1) flow.pushForward(t);
     }
     return true;
   };

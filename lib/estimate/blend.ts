@@ -17,7 +17,10 @@ export interface BlendedRow {
   draw: number;
 }
 
-/** `count` rows; component k has about weight_k of them, each evenly spaced over its draws. */
+/**
+ * `count` rows; component k has about weight_k of them, evenly spaced over its draws and taken from its chains in turn, the order of the
+ * chains rotating, so that every second or fourth row still comes from all chains.
+ */
 export function blendRows(parts: readonly WeightedDraws[], count: number): BlendedRow[] {
   const owed = parts.map(() => 0);
   const taken = parts.map(() => 0);
@@ -29,8 +32,10 @@ export function blendRows(parts: readonly WeightedDraws[], count: number): Blend
     const k = owed.indexOf(Math.max(...owed));
     owed[k] -= 1;
     const { store } = parts[k].result;
-    const total = Math.max(Math.round(parts[k].weight * count), 1);
-    rows.push({ store, draw: Math.floor((taken[k] * store.count) / total) % store.count });
+    const share = taken[k] / Math.max(parts[k].weight * count, 1);
+    const chain = (taken[k] + Math.floor(taken[k] / store.chains)) % store.chains;
+    const place = Math.min(Math.floor(share * store.perChain), store.perChain - 1);
+    rows.push({ store, draw: place * store.chains + chain });
     taken[k]++;
   }
   return rows;

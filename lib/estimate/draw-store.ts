@@ -8,6 +8,7 @@ import type { RandomStream } from '../numeric/random';
 import type { Posterior } from './posterior';
 
 export interface DrawStore {
+  readonly chains: number;
   readonly perChain: number;
   readonly count: number;
   keep(chain: number, q: Float64Array, stream: RandomStream): void;
@@ -46,6 +47,7 @@ export function createDrawStore(posterior: Posterior, chains: number, horizonMon
   };
 
   return {
+    chains,
     get perChain() {
       return watched[chains - 1][0].length;
     },

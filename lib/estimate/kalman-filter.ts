@@ -66,16 +66,14 @@ export interface KalmanFilter {
 /** Doubles kept per month of `FilterHistory.states`. */
 export const STATE_WIDTH = 10;
 
-/** Doubles kept per month: scaled state before and after the month (4), then per firm: covariance (3), innovation, its variance. */
+/** Doubles kept per month: scaled state before and after the month (4), then per firm: covariance (3), innovation, 1 / its variance. */
 const WIDTH = 14;
-const UPDATE = 4;
-const UPDATE_WIDTH = 5;
 export const SEASON_MONTHS = 12;
 
 export function createKalmanFilter(observations: Observations): KalmanFilter {
   const { months, firms } = observations;
   const flow = createMonthFlow(months);
-  const { state, tangent, adjoint } = flow;
+  const { state, adjoint } = flow;
   const counts = firms.map((firm) => onGrid(firm, months));
   const entry1 = firms[0].entry;
   const entry2 = firms[1].entry;
@@ -87,10 +85,6 @@ export function createKalmanFilter(observations: Observations): KalmanFilter {
   const flags = new Uint8Array(2 * months);
   const mean = new Float64Array(2);
   const covariance = new Float64Array(3);
-  /** Adjoints of mean and covariance. */
-  const pullMean = new Float64Array(2);
-  const pull = new Float64Array(3);
-  let season: Float64Array | null = null;
   let logK1 = 0;
   let logK2 = 0;
 
@@ -105,185 +99,150 @@ export function createKalmanFilter(observations: Observations): KalmanFilter {
     );
   };
 
-  const enter = (t: number, theta: Float64Array) => {
-    if (t === entry1) {
-      mean[0] = theta[6];
-      covariance[0] = 0;
-      covariance[1] = 0;
-    }
-    if (t === entry2) {
-      mean[1] = theta[7];
-      covariance[2] = 0;
-      covariance[1] = 0;
-    }
-  };
-
-  const varianceOf = (i: number, t: number, observation: Float64Array): number =>
-    flags[i * months + t] === 1 ? observation[i] * FLAGGED_INFLATION : observation[i];
-
-  /** Update by the count of firm i; returns its log likelihood. */
-  const update = (i: number, t: number, observation: Float64Array): number => {
-    const at = t * WIDTH + UPDATE + i * UPDATE_WIDTH;
-    const variance = varianceOf(i, t, observation);
-    const own = covariance[2 * i];
-    const both = covariance[1];
-    const offset = season ? season[i * SEASON_MONTHS + (t % SEASON_MONTHS)] : 0;
-    const innovation = counts[i][t] - offset - mean[i];
-    const total = own + variance;
-    kept[at] = covariance[0];
-    kept[at + 1] = both;
-    kept[at + 2] = covariance[2];
-    kept[at + 3] = innovation;
-    kept[at + 4] = total;
-    mean[i] += (own / total) * innovation;
-    mean[1 - i] += (both / total) * innovation;
-    covariance[2 * i] = (own * variance) / total;
-    covariance[1] = (both * variance) / total;
-    covariance[2 - 2 * i] -= (both * both) / total;
-    return -0.5 * (Math.log(total) + (innovation * innovation) / total);
-  };
-
-  /** Prediction from month t to the next; false where the path cannot be followed. */
-  const predict = (t: number, process: Float64Array): boolean => {
-    const at = t * WIDTH;
-    const has1 = t >= entry1;
-    const has2 = t >= entry2;
-    const x = has1 ? Math.exp(mean[0] - logK1) : 0;
-    const y = has2 ? Math.exp(mean[1] - logK2) : 0;
-    state[0] = x;
-    state[1] = y;
-    if (!flow.advance(t)) return false;
-    const nextX = state[0];
-    const nextY = state[1];
-    if ((has1 && !(nextX > 0)) || (has2 && !(nextY > 0))) return false;
-    tangent[8] = x;
-    tangent[9] = 0;
-    tangent[10] = 0;
-    tangent[11] = y;
-    flow.pushForward(t, 4);
-    const f11 = has1 ? tangent[8] / nextX : 0;
-    const f12 = has1 ? tangent[10] / nextX : 0;
-    const f21 = has2 ? tangent[9] / nextY : 0;
-    const f22 = has2 ? tangent[11] / nextY : 0;
-    const { jacobians } = history;
-    jacobians[4 * t] = f11;
-    jacobians[4 * t + 1] = f12;
-    jacobians[4 * t + 2] = f21;
-    jacobians[4 * t + 3] = f22;
-    kept[at] = x;
-    kept[at + 1] = y;
-    kept[at + 2] = nextX;
-    kept[at + 3] = nextY;
-    if (has1) mean[0] = logK1 + Math.log(nextX);
-    if (has2) mean[1] = logK2 + Math.log(nextY);
-    const p11 = covariance[0];
-    const p12 = covariance[1];
-    const p22 = covariance[2];
-    covariance[0] = f11 * f11 * p11 + 2 * f11 * f12 * p12 + f12 * f12 * p22 + (has1 ? process[0] : 0);
-    covariance[1] = f11 * f21 * p11 + (f11 * f22 + f12 * f21) * p12 + f12 * f22 * p22;
-    covariance[2] = f21 * f21 * p11 + 2 * f21 * f22 * p12 + f22 * f22 * p22 + (has2 ? process[1] : 0);
-    return true;
-  };
-
-  const keepState = (at: number) => {
-    const { states } = history;
-    states[at] = mean[0];
-    states[at + 1] = mean[1];
-    states[at + 2] = covariance[0];
-    states[at + 3] = covariance[1];
-    states[at + 4] = covariance[2];
-  };
-
+  /** The hot loop: written out over local numbers, because calls and array traffic here cost more than the arithmetic. */
   const run = (input: FilterInput): number => {
     const { theta, after, breakMonth, observation, process } = input;
-    season = input.season;
+    const { states, jacobians } = history;
+    const [counts1, counts2] = counts;
+    const { season } = input;
+    const [variance1, variance2] = observation;
+    const [process1, process2] = process;
     takeSegment(theta);
-    covariance.fill(0);
-    mean.fill(0);
-    let value = 0;
+    let logLevel1 = 0;
+    let logLevel2 = 0;
+    let level1 = 0;
+    let level2 = 0;
+    let p11 = 0;
+    let p12 = 0;
+    let p22 = 0;
+    let squares = 0;
+    let logs = 0;
     for (let t = 0; t < months; t++) {
-      if (after && t === breakMonth) takeSegment(after);
-      enter(t, theta);
-      keepState(t * STATE_WIDTH + 5);
-      if (!Number.isNaN(counts[0][t])) value += update(0, t, observation);
-      if (!Number.isNaN(counts[1][t])) value += update(1, t, observation);
-      keepState(t * STATE_WIDTH);
-      if (t < months - 1 && !predict(t, process)) return Number.NEGATIVE_INFINITY;
+      const has1 = t >= entry1;
+      const has2 = t >= entry2;
+      if (after && t === breakMonth) {
+        takeSegment(after);
+        level1 = t > entry1 ? Math.exp(logLevel1 - logK1) : 0;
+        level2 = t > entry2 ? Math.exp(logLevel2 - logK2) : 0;
+      }
+      if (t === entry1) {
+        logLevel1 = theta[6];
+        level1 = Math.exp(logLevel1 - logK1);
+        p11 = 0;
+        p12 = 0;
+      }
+      if (t === entry2) {
+        logLevel2 = theta[7];
+        level2 = Math.exp(logLevel2 - logK2);
+        p22 = 0;
+        p12 = 0;
+      }
+      const state0 = t * STATE_WIDTH;
+      states[state0 + 5] = logLevel1;
+      states[state0 + 6] = logLevel2;
+      states[state0 + 7] = p11;
+      states[state0 + 8] = p12;
+      states[state0 + 9] = p22;
+
+      const at = t * WIDTH;
+      let move1 = 0;
+      let move2 = 0;
+      let product = 1;
+      const count1 = counts1[t];
+      if (!Number.isNaN(count1)) {
+        const variance = flags[t] === 1 ? variance1 * FLAGGED_INFLATION : variance1;
+        const innovation = count1 - logLevel1 - (season ? season[t % SEASON_MONTHS] : 0);
+        const total = p11 + variance;
+        const inverse = 1 / total;
+        kept[at + 4] = p11;
+        kept[at + 5] = p12;
+        kept[at + 6] = p22;
+        kept[at + 7] = innovation;
+        kept[at + 8] = inverse;
+        const gain2 = p12 * inverse;
+        move1 = p11 * inverse * innovation;
+        move2 = gain2 * innovation;
+        p22 -= p12 * gain2;
+        p11 *= variance * inverse;
+        p12 *= variance * inverse;
+        squares += innovation * innovation * inverse;
+        product = total;
+      }
+      const count2 = counts2[t];
+      if (!Number.isNaN(count2)) {
+        const variance = flags[months + t] === 1 ? variance2 * FLAGGED_INFLATION : variance2;
+        const offset = season ? season[SEASON_MONTHS + (t % SEASON_MONTHS)] : 0;
+        const innovation = count2 - offset - logLevel2 - move2;
+        const total = p22 + variance;
+        const inverse = 1 / total;
+        kept[at + 9] = p11;
+        kept[at + 10] = p12;
+        kept[at + 11] = p22;
+        kept[at + 12] = innovation;
+        kept[at + 13] = inverse;
+        const gain1 = p12 * inverse;
+        move1 += gain1 * innovation;
+        move2 += p22 * inverse * innovation;
+        p11 -= p12 * gain1;
+        p22 *= variance * inverse;
+        p12 *= variance * inverse;
+        squares += innovation * innovation * inverse;
+        product *= total;
+      }
+      logs += Math.log(product);
+      logLevel1 += move1;
+      logLevel2 += move2;
+      states[state0] = logLevel1;
+      states[state0 + 1] = logLevel2;
+      states[state0 + 2] = p11;
+      states[state0 + 3] = p12;
+      states[state0 + 4] = p22;
+      if (t === months - 1) break;
+
+      const x = level1 * exponential(move1);
+      const y = level2 * exponential(move2);
+      state[0] = x;
+      state[1] = y;
+      if (!flow.advance(t)) return Number.NEGATIVE_INFINITY;
+      level1 = state[0];
+      level2 = state[1];
+      if ((has1 && !(level1 > 0)) || (has2 && !(level2 > 0))) return Number.NEGATIVE_INFINITY;
+      const to = 4 * t;
+      flow.fillPropagator(t, jacobians, to);
+      // from the scaled state to its logarithm: d ln x' / d ln x = (d x' / d x) x / x'
+      const inverse1 = has1 ? 1 / level1 : 0;
+      const inverse2 = has2 ? 1 / level2 : 0;
+      const f11 = jacobians[to] * x * inverse1;
+      const f12 = jacobians[to + 1] * y * inverse1;
+      const f21 = jacobians[to + 2] * x * inverse2;
+      const f22 = jacobians[to + 3] * y * inverse2;
+      jacobians[to] = f11;
+      jacobians[to + 1] = f12;
+      jacobians[to + 2] = f21;
+      jacobians[to + 3] = f22;
+      kept[at] = x;
+      kept[at + 1] = y;
+      kept[at + 2] = level1;
+      kept[at + 3] = level2;
+      if (has1) logLevel1 = logK1 + Math.log(level1);
+      if (has2) logLevel2 = logK2 + Math.log(level2);
+      const q11 = f11 * p11 + f12 * p12;
+      const q12 = f11 * p12 + f12 * p22;
+      const q21 = f21 * p11 + f22 * p12;
+      const q22 = f21 * p12 + f22 * p22;
+      p11 = q11 * f11 + q12 * f12 + (has1 ? process1 : 0);
+      p12 = q11 * f21 + q12 * f22;
+      p22 = q21 * f21 + q22 * f22 + (has2 ? process2 : 0);
     }
-    return orImpossible(value);
+    mean[0] = logLevel1;
+    mean[1] = logLevel2;
+    covariance[0] = p11;
+    covariance[1] = p12;
+    covariance[2] = p22;
+    return orImpossible(-0.5 * (squares + logs));
   };
 
-  /** Reverse of `update`. */
-  const pullUpdate = (i: number, t: number, observation: Float64Array, gradient: FilterGradient): void => {
-    const at = t * WIDTH + UPDATE + i * UPDATE_WIDTH;
-    const variance = varianceOf(i, t, observation);
-    const own = kept[at + 2 * i];
-    const both = kept[at + 1];
-    const innovation = kept[at + 3];
-    const inverse = 1 / kept[at + 4];
-    const byOwn = pull[2 * i];
-    const byBoth = pull[1];
-    const byOther = pull[2 - 2 * i];
-    const gains = own * pullMean[i] + both * pullMean[1 - i];
-    const shrinks = own * byOwn + both * byBoth;
-    const byTotal =
-      -0.5 * inverse +
-      (0.5 * innovation * innovation - gains * innovation - variance * shrinks + both * both * byOther) *
-        inverse *
-        inverse;
-    gradient.observation[i] += (shrinks * inverse + byTotal) * (variance / observation[i]);
-    gradient.season[i * SEASON_MONTHS + (t % SEASON_MONTHS)] += (innovation - gains) * inverse;
-    pull[2 * i] = (pullMean[i] * innovation + byOwn * variance) * inverse + byTotal;
-    pull[1] = (pullMean[1 - i] * innovation + byBoth * variance - 2 * both * byOther) * inverse;
-    pullMean[i] += (innovation - gains) * inverse;
-  };
-
-  /** Reverse of `predict`, F held fixed; the slopes of K go to the gradient of the segment. */
-  const pullPredict = (t: number, gradient: FilterGradient, segment: Float64Array): void => {
-    const at = t * WIDTH;
-    const has1 = t >= entry1;
-    const has2 = t >= entry2;
-    const { jacobians } = history;
-    const f11 = jacobians[4 * t];
-    const f12 = jacobians[4 * t + 1];
-    const f21 = jacobians[4 * t + 2];
-    const f22 = jacobians[4 * t + 3];
-    const l11 = pull[0];
-    const l12 = pull[1];
-    const l22 = pull[2];
-    if (has1) gradient.process[0] += l11;
-    if (has2) gradient.process[1] += l22;
-    pull[0] = f11 * f11 * l11 + f11 * f21 * l12 + f21 * f21 * l22;
-    pull[1] = 2 * f11 * f12 * l11 + (f11 * f22 + f12 * f21) * l12 + 2 * f21 * f22 * l22;
-    pull[2] = f12 * f12 * l11 + f12 * f22 * l12 + f22 * f22 * l22;
-    adjoint[0] = has1 ? pullMean[0] / kept[at + 2] : 0;
-    adjoint[1] = has2 ? pullMean[1] / kept[at + 3] : 0;
-    flow.pullBack(t);
-    const before1 = adjoint[0] * kept[at];
-    const before2 = adjoint[1] * kept[at + 1];
-    if (has1) segment[2] += pullMean[0] - before1;
-    if (has2) segment[3] += pullMean[1] - before2;
-    pullMean[0] = before1;
-    pullMean[1] = before2;
-  };
-
-  /** Reverse of `enter`. */
-  const leave = (t: number, gradient: FilterGradient) => {
-    if (t === entry1) {
-      gradient.theta[6] += pullMean[0];
-      pullMean[0] = 0;
-      pull[0] = 0;
-      pull[1] = 0;
-    }
-    if (t === entry2) {
-      gradient.theta[7] += pullMean[1];
-      pullMean[1] = 0;
-      pull[2] = 0;
-      pull[1] = 0;
-    }
-  };
-
-  /** Moves what the flow has gathered into the gradient of the segment. */
+  /** Moves what the flow has gathered into the gradient of a segment. */
   const collect = (segment: Float64Array) => {
     segment[0] += flow.gradient[0];
     segment[1] += flow.gradient[1];
@@ -292,28 +251,126 @@ export function createKalmanFilter(observations: Observations): KalmanFilter {
     flow.clearGradient();
   };
 
+  /** The loop of `run` in reverse; written out for the same reason. `by..`: adjoints of mean (1, 2) and covariance (11, 12, 22). */
   const sweepBack = (input: FilterInput, gradient: FilterGradient): void => {
     const { theta, after, breakMonth, observation } = input;
+    const { jacobians } = history;
+    const [counts1, counts2] = counts;
+    const { season } = gradient;
+    const [variance1, variance2] = observation;
     flow.clearGradient();
-    pullMean.fill(0);
-    pull.fill(0);
     let segment = after ? gradient.after : gradient.theta;
+    let by1 = 0;
+    let by2 = 0;
+    let by11 = 0;
+    let by12 = 0;
+    let by22 = 0;
+    let byVariance1 = 0;
+    let byVariance2 = 0;
+    let byProcess1 = 0;
+    let byProcess2 = 0;
     for (let t = months - 1; t >= 0; t--) {
       if (after && t === breakMonth - 1) {
         collect(segment);
         segment = gradient.theta;
         takeSegment(theta);
       }
-      if (t < months - 1) pullPredict(t, gradient, segment);
-      if (!Number.isNaN(counts[1][t])) pullUpdate(1, t, observation, gradient);
-      if (!Number.isNaN(counts[0][t])) pullUpdate(0, t, observation, gradient);
-      leave(t, gradient);
+      const at = t * WIDTH;
+      const has1 = t >= entry1;
+      const has2 = t >= entry2;
+      if (t < months - 1) {
+        const f11 = jacobians[4 * t];
+        const f12 = jacobians[4 * t + 1];
+        const f21 = jacobians[4 * t + 2];
+        const f22 = jacobians[4 * t + 3];
+        if (has1) byProcess1 += by11;
+        if (has2) byProcess2 += by22;
+        const next11 = f11 * f11 * by11 + f11 * f21 * by12 + f21 * f21 * by22;
+        const next12 = 2 * f11 * f12 * by11 + (f11 * f22 + f12 * f21) * by12 + 2 * f21 * f22 * by22;
+        by22 = f12 * f12 * by11 + f12 * f22 * by12 + f22 * f22 * by22;
+        by11 = next11;
+        by12 = next12;
+        adjoint[0] = has1 ? by1 / kept[at + 2] : 0;
+        adjoint[1] = has2 ? by2 / kept[at + 3] : 0;
+        flow.pullBack(t);
+        const before1 = adjoint[0] * kept[at];
+        const before2 = adjoint[1] * kept[at + 1];
+        if (has1) segment[2] += by1 - before1;
+        if (has2) segment[3] += by2 - before2;
+        by1 = before1;
+        by2 = before2;
+      }
+      if (!Number.isNaN(counts2[t])) {
+        const inflation = flags[months + t] === 1 ? FLAGGED_INFLATION : 1;
+        const variance = variance2 * inflation;
+        const both = kept[at + 10];
+        const own = kept[at + 11];
+        const innovation = kept[at + 12];
+        const inverse = kept[at + 13];
+        const gains = own * by2 + both * by1;
+        const shrinks = own * by22 + both * by12;
+        const byTotal =
+          inverse *
+          ((0.5 * innovation * innovation - gains * innovation - variance * shrinks + both * both * by11) *
+            inverse -
+            0.5);
+        byVariance2 += (shrinks * inverse + byTotal) * inflation;
+        season[SEASON_MONTHS + (t % SEASON_MONTHS)] += (innovation - gains) * inverse;
+        by22 = (by2 * innovation + by22 * variance) * inverse + byTotal;
+        by12 = (by1 * innovation + by12 * variance - 2 * both * by11) * inverse;
+        by2 += (innovation - gains) * inverse;
+      }
+      if (!Number.isNaN(counts1[t])) {
+        const inflation = flags[t] === 1 ? FLAGGED_INFLATION : 1;
+        const variance = variance1 * inflation;
+        const own = kept[at + 4];
+        const both = kept[at + 5];
+        const innovation = kept[at + 7];
+        const inverse = kept[at + 8];
+        const gains = own * by1 + both * by2;
+        const shrinks = own * by11 + both * by12;
+        const byTotal =
+          inverse *
+          ((0.5 * innovation * innovation - gains * innovation - variance * shrinks + both * both * by22) *
+            inverse -
+            0.5);
+        byVariance1 += (shrinks * inverse + byTotal) * inflation;
+        season[t % SEASON_MONTHS] += (innovation - gains) * inverse;
+        by11 = (by1 * innovation + by11 * variance) * inverse + byTotal;
+        by12 = (by2 * innovation + by12 * variance - 2 * both * by22) * inverse;
+        by1 += (innovation - gains) * inverse;
+      }
+      if (t === entry1) {
+        gradient.theta[6] += by1;
+        by1 = 0;
+        by11 = 0;
+        by12 = 0;
+      }
+      if (t === entry2) {
+        gradient.theta[7] += by2;
+        by2 = 0;
+        by22 = 0;
+        by12 = 0;
+      }
     }
     collect(segment);
+    gradient.observation[0] += byVariance1;
+    gradient.observation[1] += byVariance2;
+    gradient.process[0] += byProcess1;
+    gradient.process[1] += byProcess2;
   };
 
   return { mean, covariance, history, flags, run, sweepBack };
 }
+
+/** exp for the small moves of a filter: a polynomial within 2e-13 of it up to SMALL_MOVE, where Math.exp takes over. */
+function exponential(move: number): number {
+  if (!(Math.abs(move) < SMALL_MOVE)) return Math.exp(move);
+  return (
+    1 + move * (1 + (move / 2) * (1 + (move / 3) * (1 + (move / 4) * (1 + (move / 5) * (1 + move / 6)))))
+  );
+}
+const SMALL_MOVE = 0.05;
 
 /** -Infinity in place of NaN. */
 export function orImpossible(value: number): number {

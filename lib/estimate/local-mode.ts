@@ -16,8 +16,8 @@ export interface LocalMode {
   /** The mode in working coordinates and in the posterior's own. */
   u: Float64Array;
   q: Float64Array;
-  /** Log density at the mode, Jacobian of the coordinates included. */
-  logDensity: number;
+  /** Log density of q at the mode: comparable between climbs that ended in different coordinates. */
+  density: number;
   logEvidence: number;
   /** Lower factor of the covariance of u near the mode, row-major. */
   metric: Float64Array;
@@ -33,6 +33,11 @@ const MAX_METRIC_SD = 2.5;
 const RIDGE = 0.05;
 const MAX_RIDGES = 30;
 
+/** Rounds of climbing with coordinates fitted anew to what the round before found. */
+const MAX_ROUNDS = 4;
+/** The covariance that coordinates were fitted to holds when no spread turns out to be off by more than this factor. */
+const SETTLED = 2.5;
+
 /**
  * Climbs from q. `fitInformation`: J'J of the point fit over the log parameters (prior rows included), 8 x 8.
  * @returns null where the density does not exist at the start
@@ -42,33 +47,101 @@ export function findLocalMode(
   q: Float64Array,
   fitInformation: Float64Array,
 ): LocalMode | null {
-  const n = posterior.dimension;
-  const covariance = roughCovariance(posterior, q, fitInformation);
+  let covariance = roughCovariance(posterior, q, fitInformation);
   if (!covariance || !(posterior.logDensity(q, null) > Number.NEGATIVE_INFINITY)) return null;
+  let best: LocalMode | null = null;
+  for (let round = 0; round < MAX_ROUNDS; round++) {
+    const rise: Rise | null = climbFrom(posterior, best?.q ?? q, covariance);
+    if (!rise) break;
+    best = rise.mode;
+    if (rise.isSettled || !rise.covariance) break;
+    covariance = rise.covariance;
+  }
+  return best;
+}
+
+interface Rise {
+  mode: LocalMode;
+  isSettled: boolean;
+  /** Covariance of q at the mode, for the next round; null when the curvature there is of no use. */
+  covariance: Float64Array | null;
+}
+
+function climbFrom(posterior: Posterior, q: Float64Array, anchorCovariance: Float64Array): Rise | null {
+  const n = posterior.dimension;
   const { coordinates, spread } = createWorkingCoordinates(posterior.logDensity, {
     q,
-    covariance,
+    covariance: anchorCovariance,
     segments: posterior.segments,
   });
   const scale = spread.map((sd) => Math.min(sd, MAX_SPREAD));
   const start = new Float64Array(n);
   coordinates.fromParameters(q, start);
   if (!(coordinates.logDensity(start, null) > Number.NEGATIVE_INFINITY)) return null;
-  const { point, value } = climb(coordinates.logDensity, start, scale);
+  const { point, value, hasEnded } = climb(coordinates.logDensity, start, scale);
   const lower = factorCurvature(coordinates, point, scale);
   let logDeterminant = 0;
   for (let j = 0; lower && j < n; j++) logDeterminant += Math.log(lower[j * (n + 1)]);
   const at = new Float64Array(n);
   coordinates.toParameters(point, at);
+  const metric = toMetric(lower, scale);
+  const sds = rowNorms(metric, n);
   return {
-    coordinates,
-    u: point,
-    q: at,
-    logDensity: value,
-    logEvidence: lower ? value + (n / 2) * Math.log(2 * Math.PI) - logDeterminant : Number.NEGATIVE_INFINITY,
-    metric: toMetric(lower, scale),
-    breakMonth: posterior.breakMonth,
+    mode: {
+      coordinates,
+      u: point,
+      q: at,
+      density: posterior.logDensity(at, null),
+      logEvidence: lower
+        ? value + (n / 2) * Math.log(2 * Math.PI) - logDeterminant
+        : Number.NEGATIVE_INFINITY,
+      metric,
+      breakMonth: posterior.breakMonth,
+    },
+    isSettled: hasEnded && sds.every((sd, j) => sd < SETTLED * scale[j] && scale[j] < SETTLED * sd),
+    covariance: lower && covarianceOfParameters(coordinates, point, metric, sds),
   };
+}
+
+/** Share of the spread over which the map to q is differenced. */
+const DIFFERENCE = 1e-4;
+
+/** J M M' J' with J = d q / d u at the point (central differences of a map that costs next to nothing) and M the metric. */
+function covarianceOfParameters(
+  coordinates: WorkingCoordinates,
+  point: Float64Array,
+  metric: Float64Array,
+  sds: Float64Array,
+): Float64Array {
+  const n = point.length;
+  const shifted = point.slice();
+  const above = new Float64Array(n);
+  const below = new Float64Array(n);
+  const columns: Float64Array[] = [];
+  for (let j = 0; j < n; j++) {
+    shifted[j] = point[j] + DIFFERENCE * sds[j];
+    coordinates.toParameters(shifted, above);
+    shifted[j] = point[j] - DIFFERENCE * sds[j];
+    coordinates.toParameters(shifted, below);
+    shifted[j] = point[j];
+    columns.push(above.map((value, i) => (value - below[i]) / (2 * DIFFERENCE * sds[j])));
+  }
+  const factor = new Float64Array(n * n);
+  for (let i = 0; i < n; i++) {
+    for (let k = 0; k < n; k++)
+      for (let j = k; j < n; j++) factor[i * n + k] += columns[j][i] * metric[j * n + k];
+  }
+  const covariance = new Float64Array(n * n);
+  for (let i = 0; i < n; i++) {
+    for (let j = 0; j < n; j++)
+      for (let k = 0; k < n; k++) covariance[i * n + j] += factor[i * n + k] * factor[j * n + k];
+  }
+  return covariance;
+}
+
+/** Euclidean norm of each row of a square matrix. */
+function rowNorms(matrix: Float64Array, n: number): Float64Array {
+  return Float64Array.from({ length: n }, (_, i) => Math.hypot(...matrix.subarray(i * n, (i + 1) * n)));
 }
 
 function roughCovariance(
@@ -127,11 +200,9 @@ function toMetric(lower: Float64Array | null, scale: Float64Array): Float64Array
     });
     return diagonal;
   }
-  for (let j = 0; j < n; j++) {
-    let variance = 0;
-    for (let k = 0; k <= j; k++) variance += metric[j * n + k] ** 2;
-    const shrink = MAX_METRIC_SD / Math.sqrt(variance);
+  rowNorms(metric, n).forEach((sd, j) => {
+    const shrink = MAX_METRIC_SD / sd;
     if (shrink < 1) for (let k = 0; k <= j; k++) metric[j * n + k] *= shrink;
-  }
+  });
   return metric;
 }

@@ -62,7 +62,7 @@ export const MIN_WEIGHT = 0.03;
 /** Log density below the best mode at which a mode is left out: it would hold less than one draw in twenty thousand. */
 const MODE_DEPTH = 10;
 /** Modes closer than this in log density are the same after the climb. */
-const SAME_DENSITY = 0.01;
+const SAME_DENSITY = 0.05;
 
 export function* chooseModels(
   observations: Observations,
@@ -82,12 +82,20 @@ export function* chooseModels(
   yield;
 
   if (observations.months >= SEASON_MIN_MONTHS) {
+    let from = modes[0];
+    let starts = points;
     for (const harmonics of CYCLES) {
       const seasonal = create({ harmonics, hasBreak: false }, []);
-      const mode = findLocalMode(seasonal, extend(modes[0].q, seasonal.dimension), information);
-      if (!mode || !(mode.logEvidence > modes[0].logEvidence)) continue;
+      const extended = findLocalMode(seasonal, extend(from.q, seasonal.dimension), information) ?? [];
+      // the plain mode bends towards the cycle that it lacks: the point fits may be nearer to the first seasonal one
+      const found = rankModes([extended, climbFrom(seasonal, starts)].flat());
+      starts = [];
+      if (found.length === 0) continue;
+      from = found[0];
+      if (!(from.logEvidence > modes[0].logEvidence)) continue;
       posterior = seasonal;
-      modes = [mode];
+      modes = found;
+      yield;
     }
     yield;
   }
@@ -109,17 +117,22 @@ export function* chooseModels(
   return { ...weighBreaks(plain, broken, tries), harmonics, flags };
 }
 
-/** Distinct modes near enough to the best one, best first. */
+/** Modes of a posterior near enough to the best one, best first, climbed to from point fits. */
 export function climbFrom(posterior: Posterior, points: readonly Mode[]): LocalMode[] {
-  const modes = points
-    .flatMap(
+  return rankModes(
+    points.flatMap(
       (point) =>
         findLocalMode(posterior, posterior.place(point.theta, point.errors), fitInformation(point)) ?? [],
-    )
-    .sort((a, b) => b.logDensity - a.logDensity);
-  return modes.filter((mode, i) => {
-    const isNear = mode.logDensity > modes[0].logDensity - MODE_DEPTH;
-    return isNear && (i === 0 || modes[i - 1].logDensity - mode.logDensity > SAME_DENSITY);
+    ),
+  );
+}
+
+/** Distinct modes of one posterior by density; those of no weight are left out. */
+function rankModes(modes: readonly LocalMode[]): LocalMode[] {
+  const ranked = [...modes].sort((a, b) => b.density - a.density);
+  return ranked.filter((mode, i) => {
+    const isNear = mode.density > ranked[0].density - MODE_DEPTH;
+    return isNear && (i === 0 || ranked[i - 1].density - mode.density > SAME_DENSITY);
   });
 }
 

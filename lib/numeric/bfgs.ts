@@ -6,6 +6,8 @@ export interface ClimbResult {
   point: Float64Array;
   value: number;
   iterations: number;
+  /** False when it stopped at the limit of iterations. */
+  hasEnded: boolean;
 }
 
 /** Value of the function, and its gradient (overwritten) unless null; -Infinity where it does not exist. */
@@ -56,7 +58,7 @@ export function climb(ascent: Ascent, start: Float64Array, scale: Float64Array):
     value = trialValue;
     if (!(gain > NO_GAIN)) break;
   }
-  return { point, value, iterations };
+  return { point, value, iterations, hasEnded: iterations < MAX_ITERATIONS };
 }
 
 /** out = A x for a square row-major matrix; returns x . out. */

@@ -30,7 +30,7 @@ describe('draws', () => {
 describe('the blend of components', () => {
   const part = (weight: number, count: number, ess: number, rHat = 1.002): WeightedDraws => ({
     weight,
-    result: { hasConverged: true, rHat, ess, store: { count } as DrawStore },
+    result: { hasConverged: true, rHat, ess, store: { count, chains: 4, perChain: count / 4 } as DrawStore },
   });
 
   it('gives each component its share in every stretch, from all over its draws', () => {
@@ -44,7 +44,13 @@ describe('the blend of components', () => {
     }
     const first = rows.filter(({ store }) => store === parts[0].result.store).map(({ draw }) => draw);
     expect(Math.max(...first)).toBeGreaterThan(2990);
-    expect(first).toEqual([...first].sort((a, b) => a - b));
+    for (const stride of [1, 2, 4]) {
+      const kept = first.filter((_, i) => i % stride === 0);
+      for (const chain of [0, 1, 2, 3]) {
+        const share = kept.filter((draw) => draw % 4 === chain).length / kept.length;
+        expect(Math.abs(share - 0.25)).toBeLessThan(0.01);
+      }
+    }
   });
 
   it('of one component is that component', () => {
