@@ -5,6 +5,7 @@ export function slimFacts(facts: BriefFacts): BriefFacts {
   const { report } = facts;
   return {
     ...facts,
+    backtest: undefined,
     report: {
       ...report,
       cloud: [],

@@ -1,5 +1,6 @@
 /** The brief of one market from its facts: five questions, read top to bottom. Pure: the same facts give the same brief. */
 import { OUTCOMES } from '../forecast/report';
+import { describeBacktest, warnOfSimpler } from './backtest-words';
 import { writeCautions } from './cautions';
 import type { BriefFacts } from './facts';
 import { buildForecastFigure } from './forecast-figure';
@@ -11,7 +12,7 @@ import { buildParameterTable } from './parameters';
 import { buildPhaseMap } from './phase-map';
 import { describeSampler } from './sampler-health';
 import { listWords, sentence } from './text';
-import type { Brief, Sentence, TrustSection, WhereSection, WhySection } from './types';
+import type { Brief, Sentence, TrustSection, Verdict, WhereSection, WhySection } from './types';
 import { writeUnknowns } from './unknowns';
 import { writeVerdict } from './verdict';
 import { createWords, DEFAULT_LOCALE, type Words } from './words';
@@ -55,11 +56,20 @@ function buildWhere(words: Words): WhereSection {
   return {
     question: 'Where is it heading?',
     note: writePriorNote(words),
-    verdict: writeVerdict(words),
+    verdict: buildVerdict(words),
     odds: buildOddsStrip(words),
     forecast: buildForecastFigure(words),
     milestones: writeMilestones(words),
   };
+}
+
+/** A simple method that did better is told beside the verdict, not only further down. */
+function buildVerdict(words: Words): Verdict {
+  const verdict = writeVerdict(words);
+  const { backtest } = words.facts;
+  return backtest
+    ? { ...verdict, support: [...verdict.support, ...warnOfSimpler(words, backtest)] }
+    : verdict;
 }
 
 function writePriorNote(words: Words): Sentence {
@@ -85,11 +95,13 @@ function buildWhy(words: Words): WhySection {
 }
 
 function buildTrust(words: Words): TrustSection {
+  const { backtest } = words.facts;
   return {
     question: 'How far can I trust it?',
     note: sentence('What the history cannot tell, and how the numbers were got.'),
     unknowns: writeUnknowns(words),
     sampler: describeSampler(words),
+    backtest: backtest ? describeBacktest(words, backtest) : null,
     leftOut: sentence(
       `Left out: a third firm, prices, seasons, and every change of strengths after ${words.months.long(words.lastMonth)}.`,
     ),

@@ -2,6 +2,7 @@
  * What a brief is written from: the market's names, the series, where it came from and the stored result of a fit.
  * Nothing else is consulted, so the same facts always give the same brief, on the server, in the browser and from a frozen forecast.
  */
+import type { BacktestReport } from '../forecast/backtest/report';
 import type { FitReport } from '../forecast/report';
 import type { MonthlySeries } from '../series/types';
 
@@ -27,4 +28,6 @@ export interface BriefFacts {
   series: MonthlySeries;
   revision: RevisionFacts;
   report: FitReport;
+  /** How past forecasts of these counts did; absent: not known yet. */
+  backtest?: BacktestReport;
 }

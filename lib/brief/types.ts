@@ -344,6 +344,33 @@ export interface TrustSection {
   sampler: SamplerHealth;
   /** What the model leaves out. */
   leftOut: Sentence;
+  /** How past forecasts did; null: there is no backtest. */
+  backtest: BacktestPart | null;
+}
+
+export interface BacktestPart {
+  /** Who forecast this market better, with numbers. */
+  verdict: Sentence;
+  /** More than chance or not, how the bands held, the combination, what was tested. */
+  details: Sentence[];
+  /** Stands above the rows. */
+  caption: Sentence;
+  /** Methods at the longest horizon, this model first. */
+  rows: BacktestRow[];
+  /** All scores at all horizons. */
+  table: FigureTable;
+}
+
+export interface BacktestRow {
+  method: string;
+  label: string;
+  /** "3.1 %". */
+  error: string;
+  /** Share of outcomes inside the 90 % band: "91 %". */
+  inside: string;
+  /** "best here", or why it is not ranked. Empty: nothing to say. */
+  note: string;
+  isOwn: boolean;
 }
 
 export interface UnknownLine {

@@ -4,6 +4,7 @@
  * A stored version is never rewritten: a new version gets a new reader here and the old reader stays.
  */
 import { z } from 'zod';
+import { backtestReportSchema } from '../forecast/backtest/report';
 import { fitReportSchema } from '../forecast/report';
 import { scenarioComparisonSchema } from '../scenario/comparison';
 import { pushesSchema } from '../scenario/push-schema';
@@ -42,6 +43,8 @@ export const issuedForecastSchema = z.object({
   revision: revisionSchema,
   series: seriesSchema,
   report: fitReportSchema,
+  /** Absent in forecasts issued before there were backtests, or before theirs was done. */
+  backtest: backtestReportSchema.optional(),
   scenario: z
     .object({ name: z.string(), pushes: pushesSchema, comparison: scenarioComparisonSchema })
     .nullable(),

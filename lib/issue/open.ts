@@ -17,8 +17,8 @@ export interface OpenedForecast {
   stamp: string;
 }
 
-export function factsOfIssued({ market, revision, series, report }: IssuedForecast): BriefFacts {
-  return { market, revision, series, report };
+export function factsOfIssued({ market, revision, series, report, backtest }: IssuedForecast): BriefFacts {
+  return { market, revision, series, report, backtest };
 }
 
 export function openIssued(

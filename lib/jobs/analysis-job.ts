@@ -1,7 +1,7 @@
 /** One analysis, from claim to end, and the asking for those that follow a fit. */
 import { ENGINE_VERSION } from '../estimate/engine-version';
 import type { AnalysisInput, AnalysisStep } from '../forecast/analysis-run';
-import { ensureAnalysis } from '../store/analyses';
+import { ensureAnalysis, listFitsWithoutAnalysis } from '../store/analyses';
 import { type AnalysisKind, type AnalysisResult, analysisResultSchema } from '../store/analysis-kinds';
 import { analysisWork, type ClaimedAnalysis, claimAnalysis, finishAnalysis } from '../store/analysis-work';
 import type { WorkItem } from '../store/claimed-work';
@@ -57,4 +57,13 @@ export async function requestAnalysesAfter(job: FitJob, runs: AnalysisRuns): Pro
     if (asked?.isQueued) items.push({ id: asked.analysisId, workspaceId: job.workspaceId });
   }
   return items;
+}
+
+/** The same for fits that were left without, see `listFitsWithoutAnalysis`; what is queued here finds a worker as all waiting work does. */
+export async function requestMissingAnalyses(runs: AnalysisRuns, limit: number): Promise<void> {
+  for (const kind of Object.keys(runs) as AnalysisKind[]) {
+    const fits = await listFitsWithoutAnalysis({ kind, engineVersion: ENGINE_VERSION, limit });
+    for (const fit of fits)
+      await ensureAnalysis({ ...fit, kind, engineVersion: ENGINE_VERSION, startAnew: 'changed' });
+  }
 }

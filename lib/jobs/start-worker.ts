@@ -7,7 +7,7 @@ import type PgBoss from 'pg-boss';
 import { analysisWork } from '../store/analysis-work';
 import { closePrisma } from '../store/client';
 import { listQueuedFits, sweepFits } from '../store/fit-work';
-import { requestAnalysesAfter, runAnalysisJob } from './analysis-job';
+import { requestAnalysesAfter, requestMissingAnalyses, runAnalysisJob } from './analysis-job';
 import type { AnalysisRuns } from './analysis-runs';
 import type { JobEnd } from './drive-run';
 import { type FitJobTools, runFitJob } from './fit-job';
@@ -85,7 +85,7 @@ export async function startWorker({ createRun, analyses }: WorkerParts): Promise
 
   /** Not while a fit runs: this worker could not take what it finds, and after a pause might give away its own fit. */
   async function sweepWhenFree(): Promise<void> {
-    if (!isFitting && !stopping.signal.aborted) await sweep(boss, analysisId);
+    if (!isFitting && !stopping.signal.aborted) await sweep(boss, analyses, analysisId);
   }
 
   await sweepWhenFree();
@@ -124,11 +124,12 @@ async function logEnd(what: string, id: string, work: () => Promise<JobEnd>): Pr
  * Takes work of dead workers back and gives all waiting work a job; what has a job already keeps it.
  * @param ownAnalysisId runs in this very worker, which may only have been paused
  */
-async function sweep(boss: PgBoss, ownAnalysisId: string | null): Promise<void> {
+async function sweep(boss: PgBoss, runs: AnalysisRuns, ownAnalysisId: string | null): Promise<void> {
   const log = getLogger();
   const limits = { silentSeconds: SILENT_SECONDS, maxAttempts: MAX_ATTEMPTS };
   try {
     const fits = await sweepFits(limits);
+    await requestMissingAnalyses(runs, SWEEP_LIMIT);
     const analyses = await analysisWork.sweep({ ...limits, exceptId: ownAnalysisId });
     const ids = [...fits.map((fit) => fit.fitId), ...analyses.map((analysis) => analysis.id)];
     if (ids.length > 0) log.warn({ ids }, 'work taken back from a silent worker');

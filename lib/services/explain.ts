@@ -1,4 +1,5 @@
 /** Sentences for the codes that services return and fits end with: what happened, why, what to try. */
+import type { BacktestFailure } from '../forecast/backtest/backtest-run';
 import type { FailureCode } from '../jobs/failure';
 import type { StaleReason } from './staleness';
 
@@ -105,10 +106,38 @@ const FAILURES: Record<FailureCode, Explanation> = {
   },
 };
 
+const ANALYSIS_FAILURES: Record<BacktestFailure | 'engine-error' | 'gave-up', Explanation> = {
+  'too-few-origins': {
+    what: 'Past forecasts cannot be tested yet.',
+    why: 'At least three past months are needed from which this market could have been fitted and a later month checked.',
+    tryThis: 'Come back with more months; fifteen are the fewest.',
+  },
+  'too-few-forecasts': {
+    what: 'Past forecasts could not be tested.',
+    why: 'From too few past months did the model give a forecast at all.',
+    tryThis: 'Look for mistyped counts in the early months, or come back with more months.',
+  },
+  'engine-error': {
+    what: 'The test of past forecasts broke off.',
+    why: 'The calculation met a fault of its own. It is written in the log of the server.',
+    tryThis: 'Start it again after the next update, and report the market if it happens again.',
+  },
+  'gave-up': {
+    what: 'The test of past forecasts did not end.',
+    why: 'Several workers stopped in the middle of it, perhaps for lack of memory.',
+    tryThis: 'Look after the server, then start it again.',
+  },
+};
+
+/** @param code as stored with the analysis, perhaps by another version */
+export function explainAnalysisFailure(code: string | null): Explanation {
+  return ANALYSIS_FAILURES[code as BacktestFailure] ?? UNKNOWN_FAILURE;
+}
+
 const UNKNOWN_FAILURE: Explanation = {
-  what: 'The fit failed.',
+  what: 'This failed.',
   why: 'The reason is not known to this version.',
-  tryThis: 'Fit again.',
+  tryThis: 'Start it again.',
 };
 
 /** @param code as stored with the fit, perhaps by another version */

@@ -1,11 +1,17 @@
 /** The facts that a brief is written from: a market's newest outlook with the very series that it was made from. */
 import type { BriefFacts } from '../brief/facts';
+import type { BacktestReport } from '../forecast/backtest/report';
 import type { DoneFit } from '../store/fits';
 import type { Market } from '../store/markets';
 import type { Revision } from '../store/revisions';
 
 /** @param revision the one that the fit was made from, which need not be the newest */
-export function toBriefFacts(market: Market, revision: Revision, fit: DoneFit): BriefFacts {
+export function toBriefFacts(
+  market: Market,
+  revision: Revision,
+  fit: DoneFit,
+  backtest: BacktestReport | null,
+): BriefFacts {
   const { name, unit, focalName, rivalName } = market;
   const { number, createdAt, fileName, series } = revision;
   return {
@@ -13,5 +19,6 @@ export function toBriefFacts(market: Market, revision: Revision, fit: DoneFit): 
     revision: { number, createdAt: createdAt.toISOString(), fileName },
     series,
     report: fit.report,
+    ...(backtest && { backtest }),
   };
 }

@@ -97,6 +97,38 @@ export async function ensureAnalysis(args: {
   });
 }
 
+/**
+ * Fits that ended well, are of their market's newest revision and of this version of the engine, and have no analysis of this kind: they
+ * were made before there was one, or their worker died before it could ask.
+ */
+export async function listFitsWithoutAnalysis(args: {
+  kind: AnalysisKind;
+  engineVersion: string;
+  limit: number;
+}): Promise<{ fitId: string; workspaceId: string }[]> {
+  const { kind, engineVersion, limit } = args;
+  const rows = await getPrisma().fit.findMany({
+    where: {
+      state: 'done',
+      engineVersion,
+      market: { archivedAt: null },
+      revision: { analyses: { none: { kind, engineVersion } } },
+    },
+    orderBy: { finishedAt: 'desc' },
+    distinct: ['revisionId'],
+    take: limit,
+    select: {
+      id: true,
+      workspaceId: true,
+      revisionId: true,
+      market: { select: { revisions: { orderBy: { number: 'desc' }, take: 1, select: { id: true } } } },
+    },
+  });
+  return rows
+    .filter(({ revisionId, market }) => market.revisions[0]?.id === revisionId)
+    .map(({ id, workspaceId }) => ({ fitId: id, workspaceId }));
+}
+
 /** null: never asked for. */
 export async function readAnalysis<Kind extends AnalysisKind>(
   key: AnalysisKey & { kind: Kind },

@@ -5,6 +5,7 @@ import { buildBrief } from '@/lib/brief/build-brief';
 import type { BriefFacts } from '@/lib/brief/facts';
 import type { MarketPage } from '@/lib/services/read-market';
 import { canWrite as canWriteMarkets, type Viewer } from '@/lib/services/viewer';
+import { BacktestStanding } from '../backtest/backtest-standing';
 import { ChangeSection } from '../change/change-section';
 import { readPushMarket } from '../change/push-market';
 import { PushProvider } from '../change/push-state';
@@ -44,7 +45,9 @@ export function MarketBrief({ viewer, page, facts }: MarketBriefProps) {
             canWrite={canWrite}
           />
         ) : null}
-        <TrustSection trust={brief.trust} cautions={brief.cautions} />
+        <TrustSection trust={brief.trust} cautions={brief.cautions}>
+          <BacktestStanding page={page} canWrite={canWrite} />
+        </TrustSection>
         <IssueSection page={page} canWrite={canWrite} />
       </PushProvider>
     </PageFrame>

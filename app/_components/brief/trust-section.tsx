@@ -1,7 +1,9 @@
-/** How far can I trust it? What the data cannot tell, the sampler's health, what the model leaves out, the cautions. */
+/** How far can I trust it? What the data cannot tell, how past forecasts did, the sampler's health, what the model leaves out, the cautions. */
 
+import type { ReactNode } from 'react';
 import { plainText } from '@/lib/brief/text';
 import type { Caution, TrustSection as TrustSectionData } from '@/lib/brief/types';
+import { BacktestResult } from '../backtest/backtest-result';
 import { Question } from '../frame/question';
 import { SentenceText } from '../text/sentence-text';
 import styles from './sections.module.css';
@@ -9,9 +11,11 @@ import styles from './sections.module.css';
 interface TrustSectionProps {
   trust: TrustSectionData;
   cautions: Caution[];
+  /** Stands in the place of the backtest while there is none. */
+  children?: ReactNode;
 }
 
-export function TrustSection({ trust, cautions }: TrustSectionProps) {
+export function TrustSection({ trust, cautions, children }: TrustSectionProps) {
   return (
     <Question id="trust" question={trust.question} note={<SentenceText sentence={trust.note} />}>
       <ul className={styles.unknowns}>
@@ -24,6 +28,7 @@ export function TrustSection({ trust, cautions }: TrustSectionProps) {
       <p className={styles.leftOut}>
         <SentenceText sentence={trust.leftOut} />
       </p>
+      {trust.backtest ? <BacktestResult backtest={trust.backtest} /> : children}
       <div className={styles.sampler}>
         <p>
           <SentenceText sentence={trust.sampler.line} />

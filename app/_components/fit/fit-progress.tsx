@@ -10,7 +10,7 @@ import type { FitProgressView } from '@/lib/services/read-fit-progress';
 import { Button } from '../controls/button';
 import { type Explanation, ProblemNote } from '../controls/problem-note';
 import styles from './fit-progress.module.css';
-import { useFitProgress } from './use-fit-progress';
+import { useProgress } from './use-progress';
 
 const STAGES: Record<FitStage, string> = {
   starts: 'Looking for the best fit from many starts',
@@ -31,7 +31,8 @@ interface FitProgressProps {
 }
 
 export function FitProgress({ marketId, fitId, start, canCancel }: FitProgressProps) {
-  const { view, isOffline } = useFitProgress(marketId, fitId, start);
+  const url = `/markets/${marketId}/progress?fit=${encodeURIComponent(fitId)}`;
+  const { view, isOffline } = useProgress(url, start);
   return (
     <div className={styles.block}>
       <p role="status" className={styles.stage}>

@@ -6,6 +6,7 @@ import { formatDay } from '@/app/_lib/locale';
 import { buildBrief } from '@/lib/brief/build-brief';
 import { buildPushBrief } from '@/lib/brief/push-brief';
 import type { IssuedForecast } from '@/lib/issue/format';
+import { factsOfIssued } from '@/lib/issue/open';
 import { TrustSection } from '../brief/trust-section';
 import { WhereSection } from '../brief/where-section';
 import { WhySection } from '../brief/why-section';
@@ -20,8 +21,8 @@ interface FrozenBriefProps {
 }
 
 export function FrozenBrief({ forecast, viewer }: FrozenBriefProps) {
-  const { market, series, revision, report, scenario } = forecast;
-  const facts = { market, series, revision, report };
+  const { market, scenario } = forecast;
+  const facts = factsOfIssued(forecast);
   const brief = buildBrief(facts, { hasScenario: scenario !== null });
   const push = scenario && buildPushBrief(scenario.comparison, facts);
   const issued = `issued ${formatDay(new Date(forecast.issuedAt))} by ${forecast.issuedBy}`;

@@ -50,5 +50,11 @@ export function membersAt(forecast: LogForecast, h: number, standard: Float64Arr
 }
 
 export function standardMembers(df: number, count: number): Float64Array {
-  return Float64Array.from({ length: count }, (_, i) => studentTQuantile((i + 0.5) / count, df));
+  const members = new Float64Array(count);
+  for (let i = 0; 2 * i < count; i++) {
+    const low = studentTQuantile((i + 0.5) / count, df);
+    members[i] = low;
+    members[count - 1 - i] = -low;
+  }
+  return members;
 }

@@ -20,6 +20,8 @@ const MIN_COUNTS = 8;
 const MOST_PERSISTENT = 0.95;
 /** Crowding tried first, in units of r: saturation at 1.2, 3 and 30 times the largest count. */
 const START_LEVELS = [1.2, 3, 30];
+/** Half the squared errors below which the curve goes through every count but for rounding; then nothing is left to estimate a covariance from. */
+const EXACT = 1e-20;
 /** Rate times time below which (exp(rt) - 1) / r is read off its series. */
 const SMALL = 1e-6;
 
@@ -29,8 +31,9 @@ export function forecastIndependentLogistic(series: LogSeries, months: number): 
   const top = Math.max(...values);
   const logs = values.map((value) => value - top);
   const end = fitLogistic(times, logs);
-  const covariance = end?.fit.covariance;
-  if (!end || !covariance) return { ok: false, code: 'failed' };
+  if (!end) return { ok: false, code: 'failed' };
+  const covariance = isExact(end) ? new Float64Array(end.free.length ** 2) : end.fit.covariance;
+  if (!covariance) return { ok: false, code: 'failed' };
   const df = values.length - PARAMETERS;
   const { variance, persistence, last } = describeErrors(end.theta, times, logs, df);
   const inflation = (1 + persistence) / (1 - persistence);
@@ -60,9 +63,13 @@ function fitLogistic(times: readonly number[], logs: readonly number[]): NonNega
   ];
   const ends = starts
     .map((start) => fitNonNegative(problem, start, [false, false, true], { noise: 'estimated' }))
-    .filter((end) => isUsableTermination(end.fit.status));
+    .filter((end) => isUsableTermination(end.fit.status) || isExact(end));
   if (ends.length === 0) return null;
   return ends.reduce((best, end) => (end.fit.cost < best.fit.cost ? end : best));
+}
+
+function isExact(end: NonNegativeFit): boolean {
+  return end.fit.cost <= EXACT;
 }
 
 function createProblem(times: readonly number[], logs: readonly number[]): LeastSquaresProblem {

@@ -1,0 +1,59 @@
+/** How the test of past forecasts stands while it has no result: on its way, failed, cancelled, or to come with the next fit. */
+import { explainAnalysisFailure } from '@/lib/services/explain';
+import type { MarketPage } from '@/lib/services/read-market';
+import styles from './backtest.module.css';
+import { BacktestButton } from './backtest-button';
+import { BacktestProgress } from './backtest-progress';
+
+interface BacktestStandingProps {
+  page: MarketPage;
+  canWrite: boolean;
+}
+
+export function BacktestStanding({ page, canWrite }: BacktestStandingProps) {
+  const { backtest, market, outlook } = page;
+  if (!backtest || !outlook) return null;
+  const again = canWrite ? <BacktestButton marketId={market.id} /> : null;
+  switch (backtest.state) {
+    case 'absent':
+      // An outlook that is out of date gets its test with the next fit; a fresh one is about to get it.
+      return outlook.staleReasons.length > 0 ? null : <Waiting {...{ page, canWrite }} />;
+    case 'queued':
+    case 'running':
+      return <Waiting {...{ page, canWrite }} />;
+    case 'failed': {
+      const { what, why, tryThis } = explainAnalysisFailure(backtest.failureCode);
+      const isForGood = backtest.failureCode === 'too-few-origins';
+      return (
+        <div className={`${styles.block} ${styles.waiting}`}>
+          <p>
+            {what} {why} {tryThis}
+          </p>
+          {isForGood ? null : again}
+        </div>
+      );
+    }
+    case 'cancelled':
+      return (
+        <div className={`${styles.block} ${styles.waiting}`}>
+          <p>The test of past forecasts was cancelled.</p>
+          {again}
+        </div>
+      );
+    case 'done':
+      return null;
+  }
+}
+
+function Waiting({ page, canWrite }: BacktestStandingProps) {
+  const { state, progress, isCancelling } = page.backtest!;
+  return (
+    <div className={`${styles.block} ${styles.waiting}`} data-screen-only>
+      <BacktestProgress
+        marketId={page.market.id}
+        start={{ state, progress, isCancelling }}
+        canCancel={canWrite}
+      />
+    </div>
+  );
+}
