@@ -1,16 +1,27 @@
 import { defineConfig } from 'vitest/config';
 
 const shared = {
-  resolve: { tsconfigPaths: true, alias: { 'server-only': new URL('./test/server-only.ts', import.meta.url).pathname } },
+  resolve: {
+    tsconfigPaths: true,
+    alias: { 'server-only': new URL('./test/server-only.ts', import.meta.url).pathname },
+  },
 };
 
 export default defineConfig({
   test: {
     projects: [
-      { ...shared, test: { name: 'unit', include: ['test/unit/**/*.test.{ts,tsx}'], env: { TZ: 'Asia/Kathmandu' } } },
       {
         ...shared,
-        test: { name: 'reference', include: ['test/reference/**/*.test.ts'], env: { TZ: 'Asia/Kathmandu' }, testTimeout: 120_000 },
+        test: { name: 'unit', include: ['test/unit/**/*.test.{ts,tsx}'], env: { TZ: 'Asia/Kathmandu' } },
+      },
+      {
+        ...shared,
+        test: {
+          name: 'reference',
+          include: ['test/reference/**/*.test.ts'],
+          env: { TZ: 'Asia/Kathmandu' },
+          testTimeout: 120_000,
+        },
       },
       {
         ...shared,
