@@ -4,53 +4,13 @@ import { describeBacktest } from '@/lib/brief/backtest-words';
 import { buildBrief } from '@/lib/brief/build-brief';
 import { plainText } from '@/lib/brief/text';
 import { createWords } from '@/lib/brief/words';
-import type { BacktestReport, ScoreRow } from '@/lib/forecast/backtest/report';
+import type { BacktestReport } from '@/lib/forecast/backtest/report';
+import { sampleBacktest as report, scoreRow as row } from './sample-backtest';
 import { makeSample } from './sample-report';
 
 const { facts } = makeSample('coexistence');
 const words = createWords(facts);
 const plain = (text: string) => text.replaceAll('\u00a0', ' ');
-
-function row(
-  method: ScoreRow['method'],
-  error: number,
-  crps: number,
-  changes: Partial<ScoreRow> = {},
-): ScoreRow {
-  return {
-    method,
-    horizonMonths: 12,
-    cases: 20,
-    isComplete: true,
-    absoluteLogError: Math.log1p(error),
-    mase: 1.5,
-    crps,
-    intervalScore90: 0.5,
-    coverage50: 0.5,
-    coverage90: 0.9,
-    ...changes,
-  };
-}
-
-function report(changes: Partial<BacktestReport> = {}): BacktestReport {
-  return {
-    engineVersion: '1',
-    origins: { possible: 25, used: 10, failed: 0, firstTraining: 24, lastTraining: 36 },
-    horizons: [12],
-    scores: [row('competition', 0.058, 0.05), row('random-walk-drift', 0.031, 0.03)],
-    comparisons: [
-      {
-        horizonMonths: 12,
-        bestSimple: 'random-walk-drift',
-        meanDifference: 0.02,
-        statistic: 3,
-        pValue: 0.012,
-      },
-    ],
-    combination: null,
-    ...changes,
-  };
-}
 
 const ownBetter = report({
   scores: [row('competition', 0.021, 0.02), row('random-walk-drift', 0.05, 0.04)],

@@ -1,7 +1,9 @@
 import { describe, expect, it } from 'vitest';
 import { ISSUE_FORMAT_VERSION, issuedForecastSchema } from '@/lib/issue/format';
 import { freezeForecast } from '@/lib/issue/freeze';
+import { factsOfIssued } from '@/lib/issue/open';
 import { readIssuedForecast } from '@/lib/issue/read';
+import { sampleBacktest } from '../brief/sample-backtest';
 import { comparison, issuedOf, sample } from './issued-cases';
 
 /** What storing as JSON does to a value. */
@@ -14,6 +16,23 @@ describe('freezeForecast', () => {
     const { market, series, revision, report } = issued;
     expect({ market, series, revision, report }).toEqual(sample.facts);
     expect(issued.scenario).toEqual({ name: 'Their autumn campaign', pushes: comparison.pushes, comparison });
+  });
+
+  it('takes the backtest with it where there is one; a forecast without one reads as before', () => {
+    const backtest = sampleBacktest();
+    const facts = { ...sample.facts, backtest };
+    const frozen = freezeForecast({
+      facts,
+      scenario: null,
+      issuedAt: '2026-01-08T09:00:00Z',
+      issuedBy: 'Ada',
+    });
+    const read = readIssuedForecast(store(frozen));
+    if (!read.ok) throw new Error(read.code);
+    expect(factsOfIssued(read.value).backtest).toEqual(backtest);
+    const without = readIssuedForecast(store(issuedOf(false)));
+    if (!without.ok) throw new Error(without.code);
+    expect(factsOfIssued(without.value).backtest).toBeUndefined();
   });
 
   it('is untouched by what happens to the facts afterwards', () => {
