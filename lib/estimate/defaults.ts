@@ -9,7 +9,7 @@ export const DEFAULT_FIT_OPTIONS: Readonly<FitOptions> = {
 };
 
 /** Starts from the Latin hypercube, besides the two regressions. */
-export const HYPERCUBE_STARTS = 10;
+export const HYPERCUBE_STARTS = 8;
 
 /** What a sampler must reach for ln alpha, ln beta and both firms' ln users at the horizon (Vehtari et al. 2021). */
 export const R_HAT_LIMIT = 1.01;

@@ -46,11 +46,12 @@ export function findLocalMode(
   posterior: Posterior,
   q: Float64Array,
   fitInformation: Float64Array,
+  maxRounds: number = MAX_ROUNDS,
 ): LocalMode | null {
   let covariance = roughCovariance(posterior, q, fitInformation);
   if (!covariance || !(posterior.logDensity(q, null) > Number.NEGATIVE_INFINITY)) return null;
   let best: LocalMode | null = null;
-  for (let round = 0; round < MAX_ROUNDS; round++) {
+  for (let round = 0; round < maxRounds; round++) {
     const rise: Rise | null = climbFrom(posterior, best?.q ?? q, covariance);
     if (!rise) break;
     best = rise.mode;

@@ -54,6 +54,11 @@ export const BREAK_PRIOR = 0.2;
 /** Months tried for a break at most, evenly spread; every other month in a series of up to five years. */
 const MAX_BREAK_TRIES = 30;
 const BREAK_STEP = 2;
+/** Rounds of a climb, and tries of one slice. */
+const TRY_ROUNDS = 2;
+const TRIES_PER_SLICE = 6;
+/** A chance of a break below this after the first tries is not looked at more closely: it would have to grow sixfold to count. */
+const HOPELESS = 0.005;
 /** Two months of a break belong to different components when the log evidence between them falls this far below the lower one. */
 const VALLEY = 2;
 
@@ -114,7 +119,7 @@ export function* chooseModels(
     return { components: [plain], harmonics, flags, breakChance: 0 };
   const broken = create({ harmonics, hasBreak: true }, flags);
   const tries = yield* tryBreaks(broken, modes[0], information);
-  return { ...weighBreaks(plain, broken, tries), harmonics, flags };
+  return { ...weighBreaks(plain, broken, tries, information), harmonics, flags };
 }
 
 /** Modes of a posterior near enough to the best one, best first, climbed to from point fits. */
@@ -144,6 +149,7 @@ function extend(q: Float64Array, dimension: number): Float64Array {
 }
 
 interface BreakTries {
+  /** In the order of their months. */
   modes: LocalMode[];
   /** Months between two tries. */
   step: number;
@@ -151,6 +157,7 @@ interface BreakTries {
   possible: number;
 }
 
+/** Every other month of those to try first; the ones between them only where a break is not out of the question. */
 function* tryBreaks(
   posterior: StatePosterior,
   unbroken: LocalMode,
@@ -158,16 +165,33 @@ function* tryBreaks(
 ): Generator<undefined, BreakTries> {
   const { months } = posterior.observations;
   const possible = months - 2 * SEGMENT_MONTHS + 1;
-  const step = Math.max(BREAK_STEP, Math.ceil(possible / MAX_BREAK_TRIES));
+  const fine = Math.max(BREAK_STEP, Math.ceil(possible / MAX_BREAK_TRIES));
   const start = withSecondSegment(unbroken.q, posterior.dimension);
   const modes: LocalMode[] = [];
-  for (let month = SEGMENT_MONTHS; month <= months - SEGMENT_MONTHS; month += step) {
-    posterior.breakMonth = month;
-    const mode = findLocalMode(posterior, start, information);
-    if (mode) modes.push(mode);
-    if (modes.length % 8 === 0) yield;
+  function* tryFrom(first: number, step: number): Generator<undefined> {
+    for (let month = first; month <= months - SEGMENT_MONTHS; month += step) {
+      posterior.breakMonth = month;
+      const mode = findLocalMode(posterior, start, information, TRY_ROUNDS);
+      if (mode) modes.push(mode);
+      if (modes.length % TRIES_PER_SLICE === 0) yield;
+    }
   }
-  return { modes, step, possible };
+  yield* tryFrom(SEGMENT_MONTHS, 2 * fine);
+  const coarse = { modes, step: 2 * fine, possible };
+  if (chanceOfBreak(unbroken, coarse) < HOPELESS) return coarse;
+  yield* tryFrom(SEGMENT_MONTHS + fine, 2 * fine);
+  return { modes: modes.sort((a, b) => a.breakMonth! - b.breakMonth!), step: fine, possible };
+}
+
+function chanceOfBreak(unbroken: LocalMode, tries: BreakTries): number {
+  const broken = logPriorOfTry(tries) + logSumExp(tries.modes.map((mode) => mode.logEvidence));
+  const without = Math.log1p(-BREAK_PRIOR) + unbroken.logEvidence;
+  return Math.exp(broken - logSumExp([broken, without]));
+}
+
+/** Each try stands for `step` of the months in which a break is possible. */
+function logPriorOfTry({ step, possible }: BreakTries): number {
+  return Math.log(BREAK_PRIOR) + Math.log(step / possible);
 }
 
 /** q with the six parameters of the segment doubled before the seasonal coefficients. */
@@ -188,34 +212,36 @@ const PLAIN_DIMENSION = 12;
 function weighBreaks(
   plain: ModelComponent,
   broken: StatePosterior,
-  { modes, step, possible }: BreakTries,
+  tries: BreakTries,
+  information: Float64Array,
 ): Pick<ModelChoice, 'components' | 'breakChance'> {
   const unbroken = Math.log1p(-BREAK_PRIOR) + plain.modes[0].logEvidence;
-  const perTry = Math.log(BREAK_PRIOR) + Math.log(step / possible);
-  const groups = groupMonths(modes);
-  const logs = groups.map((group) => perTry + logSumExp(group.map((mode) => mode.logEvidence)));
+  const groups = groupMonths(tries.modes);
+  const logs = groups.map((group) => logPriorOfTry(tries) + logSumExp(group.map((mode) => mode.logEvidence)));
   const total = logSumExp([unbroken, ...logs]);
-  const components: ModelComponent[] = groups.map((group, k) => ({
-    posterior: broken,
-    modes: [group.reduce((a, b) => (b.logEvidence > a.logEvidence ? b : a))],
-    weight: Math.exp(logs[k] - total),
-    breakMonths: {
-      first: Math.max(group[0].breakMonth! - step + 1, SEGMENT_MONTHS),
-      last: Math.min(
-        group[group.length - 1].breakMonth! + step - 1,
-        broken.observations.months - SEGMENT_MONTHS,
-      ),
-    },
-  }));
-  const unbrokenWeight = Math.exp(unbroken - total);
-  const kept = [{ ...plain, weight: unbrokenWeight }, ...components].filter(
-    ({ weight }) => weight >= MIN_WEIGHT,
-  );
+  const weight = Math.exp(unbroken - total);
+  const kept: ModelComponent[] = weight >= MIN_WEIGHT ? [{ ...plain, weight }] : [];
+  groups.forEach((group, k) => {
+    const share = Math.exp(logs[k] - total);
+    if (!(share >= MIN_WEIGHT)) return;
+    const best = group.reduce((a, b) => (b.logEvidence > a.logEvidence ? b : a));
+    broken.breakMonth = best.breakMonth;
+    const months = broken.observations.months - SEGMENT_MONTHS;
+    kept.push({
+      posterior: broken,
+      modes: [findLocalMode(broken, best.q, information) ?? best],
+      weight: share,
+      breakMonths: {
+        first: Math.max(group[0].breakMonth! - tries.step + 1, SEGMENT_MONTHS),
+        last: Math.min(group[group.length - 1].breakMonth! + tries.step - 1, months),
+      },
+    });
+  });
   if (kept.length === 0) return { components: [plain], breakChance: 0 };
-  const sum = kept.reduce((all, { weight }) => all + weight, 0);
+  const sum = kept.reduce((all, component) => all + component.weight, 0);
   return {
     components: kept.map((component) => ({ ...component, weight: component.weight / sum })),
-    breakChance: 1 - unbrokenWeight,
+    breakChance: 1 - weight,
   };
 }
 

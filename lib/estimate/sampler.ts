@@ -4,8 +4,7 @@
  *
  * Warm-up: windows of growing length; after each the metric is the covariance of the window's positions over all chains (shrunk
  * towards the one before), and the step is tuned all along. Sampling goes on in rounds until split R-hat and bulk ESS of the watched
- * quantities pass, or to a stated limit. Trajectory lengths are drawn anew each time, so no length resonates. Where parameters may jump, the
- * month of the break moves by Metropolis steps between trajectories.
+ * quantities pass, or to a stated limit. Where parameters may jump, the month of the break moves by Metropolis steps between trajectories.
  * A generator: each `yield` ends a bounded slice of work; the driver owns the clock.
  */
 import { choleskyOrNull, sampleCovariance } from '../numeric/cholesky';
@@ -50,9 +49,10 @@ const ROUND = 250;
 const FIRST_LOOK = 2 * ROUND;
 /** Draws per chain at which a fit that has not converged stops. */
 export const DRAW_LIMIT = 4000;
-const WANTED_ACCEPTANCE = 0.8;
-/** Mean length of a trajectory in units of the metric: a quarter turn of a standard normal. */
+const WANTED_ACCEPTANCE = 0.75;
+/** Mean length of a trajectory in units of the metric: a quarter turn of a standard normal. Drawn anew each time, so that no length resonates. */
 const MEAN_LENGTH = 1.6;
+const LENGTH_SPREAD = 0.4;
 const MAX_STEPS = 40;
 const FIRST_STEP = 0.5;
 /** Weight of the metric before, in draws, when a window's covariance is taken. */
@@ -212,8 +212,9 @@ function placeWalker(
     stream,
     move(currentMetric, stepSize) {
       posterior.breakMonth = breakMonth;
-      const steps = Math.ceil((2 * MEAN_LENGTH * stream.uniform()) / stepSize);
-      const acceptance = chain.move(currentMetric, stepSize, Math.min(steps, MAX_STEPS));
+      const length = MEAN_LENGTH * (1 + LENGTH_SPREAD * (2 * stream.uniform() - 1));
+      const steps = Math.min(Math.max(Math.round(length / stepSize), 1), MAX_STEPS);
+      const acceptance = chain.move(currentMetric, stepSize, steps);
       for (let k = 0; breakMonths && k < BREAK_MOVES; k++) moveBreak(breakMonths.first, breakMonths.last);
       posterior.breakMonth = breakMonth;
       return acceptance;

@@ -1,7 +1,7 @@
 /**
  * Quantile bands per future month: 5, 25, 50, 75, 95 % of users of each firm, their total and the focal firm's share.
  */
-import { quantileSorted } from '../numeric/quantile';
+import { quantilesInPlace } from '../numeric/quantile';
 import type { Bands, SeriesBands } from './report';
 import type { Futures } from './simulate';
 
@@ -30,11 +30,14 @@ export function computeBands(
   values: Float64Array,
   { months, count }: { months: number; count: number },
 ): Bands {
+  const ids = Object.keys(LEVELS) as (keyof Bands)[];
+  const levels = ids.map((id) => LEVELS[id]);
   const bands: Bands = { q05: [], q25: [], q50: [], q75: [], q95: [] };
   for (let h = 0; h < months; h++) {
-    const sorted = values.slice(h * count, (h + 1) * count).sort();
-    for (const id of Object.keys(LEVELS) as (keyof Bands)[])
-      bands[id].push(quantileSorted(sorted, LEVELS[id]));
+    const row = quantilesInPlace(values.slice(h * count, (h + 1) * count), levels);
+    ids.forEach((id, k) => {
+      bands[id].push(row[k]);
+    });
   }
   return bands;
 }

@@ -1,32 +1,30 @@
 /**
  * Each parameter as the data leave it beside what was believed before, and how much the data taught.
  */
-import { drawFromPrior, type Priors } from '../estimate/priors';
-import { createStream } from '../numeric/random';
+import { type MixturePart, mixtureQuantile, varianceOfLog } from '../estimate/log-normal-mixture';
+import type { Priors } from '../estimate/priors';
+import type { LogNormalPrior } from '../estimate/types';
 import type { DrawTable } from './draw-table';
 import { intervalOf } from './interval';
-import type { ParameterRow } from './report';
+import type { Interval, ParameterRow } from './report';
 
-const PRIOR_DRAWS = 4000;
-/** Stream of seed 0: the prior rows do not depend on the seed of a fit. */
-const PRIOR_STREAM = 50;
-
-type Values = Record<ParameterRow['id'], Float64Array>;
+type RowId = ParameterRow['id'];
 
 export function computeParameterRows(table: DrawTable, priors: Priors): ParameterRow[] {
-  const posterior = withPerUserEffects(table);
-  const prior = withPerUserEffects(drawPriorTable(priors));
-  return (Object.keys(posterior) as ParameterRow['id'][]).map((id) => ({
-    id,
-    posterior: intervalOf(posterior[id]),
-    prior: intervalOf(prior[id]),
-    contraction: contractionOf(posterior[id], prior[id]),
-  }));
+  const prior = describePriors(priors);
+  return Object.entries(withPerUserEffects(table)).map(([key, values]) => {
+    const id = key as RowId;
+    return {
+      id,
+      posterior: intervalOf(values),
+      prior: priorInterval(prior[id]),
+      contraction: contractionOf(values, varianceOfLog(prior[id])),
+    };
+  });
 }
 
 /** Adds a12 = alpha K1/K2 and a21 = beta K2/K1: places of one firm taken by one user of the other. */
-function withPerUserEffects(table: Omit<DrawTable, 'count' | 'n1' | 'n2'>): Values {
-  const { r1, r2, k1, k2, alpha, beta } = table;
+function withPerUserEffects({ r1, r2, k1, k2, alpha, beta }: DrawTable): Record<RowId, Float64Array> {
   return {
     r1,
     r2,
@@ -39,30 +37,43 @@ function withPerUserEffects(table: Omit<DrawTable, 'count' | 'n1' | 'n2'>): Valu
   };
 }
 
-function drawPriorTable(priors: Priors): Omit<DrawTable, 'count' | 'n1' | 'n2'> {
-  const stream = createStream(0, PRIOR_STREAM);
-  const theta = new Float64Array(8);
-  const columns = Array.from({ length: 6 }, () => new Float64Array(PRIOR_DRAWS));
-  for (let i = 0; i < PRIOR_DRAWS; i++) {
-    drawFromPrior(priors, stream, theta);
-    columns.forEach((column, j) => {
-      column[i] = Math.exp(theta[j]);
-    });
-  }
-  const [r1, r2, k1, k2, alpha, beta] = columns;
-  return { r1, r2, k1, k2, alpha, beta };
+function describePriors({ parameters, noCompetition }: Priors): Record<RowId, MixturePart[]> {
+  const { k1, k2 } = parameters;
+  const alone = (prior: LogNormalPrior): MixturePart[] => [{ ...prior, weight: 1 }];
+  const mixed = (prior: LogNormalPrior): MixturePart[] => [
+    { ...prior, weight: 1 - noCompetition.weight },
+    noCompetition,
+  ];
+  /** A coefficient times K of one firm over K of the other: logarithms add. */
+  const perUser = (parts: MixturePart[], own: LogNormalPrior, other: LogNormalPrior): MixturePart[] =>
+    parts.map((part) => ({
+      weight: part.weight,
+      meanLog: part.meanLog + own.meanLog - other.meanLog,
+      sdLog: Math.hypot(part.sdLog, own.sdLog, other.sdLog),
+    }));
+  const alpha = mixed(parameters.alpha);
+  const beta = mixed(parameters.beta);
+  return {
+    r1: alone(parameters.r1),
+    r2: alone(parameters.r2),
+    k1: alone(k1),
+    k2: alone(k2),
+    alpha,
+    beta,
+    a12: perUser(alpha, k1, k2),
+    a21: perUser(beta, k2, k1),
+  };
+}
+
+function priorInterval(parts: MixturePart[]): Interval {
+  const at = (p: number) => mixtureQuantile(parts, p);
+  return { q05: at(0.05), q50: at(0.5), q95: at(0.95) };
 }
 
 /** 1 - var(posterior of ln) / var(prior of ln), clipped to 0 .. 1. */
-function contractionOf(posterior: Float64Array, prior: Float64Array): number {
-  const ratio = varianceOfLog(posterior) / varianceOfLog(prior);
-  return Math.min(Math.max(1 - ratio, 0), 1) || 0;
-}
-
-function varianceOfLog(values: Float64Array): number {
-  let mean = 0;
-  for (const value of values) mean += Math.log(value) / values.length;
-  let sum = 0;
-  for (const value of values) sum += (Math.log(value) - mean) ** 2;
-  return sum / (values.length - 1);
+function contractionOf(values: Float64Array, priorVariance: number): number {
+  const logs = values.map(Math.log);
+  const mean = logs.reduce((sum, value) => sum + value, 0) / logs.length;
+  const variance = logs.reduce((sum, value) => sum + (value - mean) ** 2, 0) / (logs.length - 1);
+  return Math.min(Math.max(1 - variance / priorVariance, 0), 1) || 0;
 }

@@ -25,6 +25,53 @@ export function quantileSorted(sorted: ArrayLike<number>, p: number): number {
  * @throws RangeError as `quantileSorted`
  */
 export function quantiles(values: ArrayLike<number>, ps: readonly number[]): number[] {
-  const sorted = Float64Array.from(values).sort();
-  return ps.map((p) => quantileSorted(sorted, p));
+  return quantilesInPlace(Float64Array.from(values), ps);
+}
+
+/**
+ * Quantiles of values that may be put in another order: only the order statistics asked for are brought into place (Hoare's selection,
+ * 1961), which for a few quantiles of thousands of values is several times faster than sorting.
+ * @param ps ascending probabilities
+ * @throws RangeError as `quantileSorted`
+ */
+export function quantilesInPlace(values: Float64Array, ps: readonly number[]): number[] {
+  if (values.length === 0) throw new RangeError('values must hold at least one value, got none');
+  // a NaN has no rank: the whole answer is unknown
+  for (let i = 0; i < values.length; i++) if (Number.isNaN(values[i])) return ps.map(() => Number.NaN);
+  let from = 0;
+  return ps.map((p) => {
+    if (!(p >= 0 && p <= 1)) throw new RangeError(`p must be between 0 and 1, got ${p}`);
+    const position = (values.length - 1) * p;
+    const below = Math.floor(position);
+    selectRank(values, below, Math.min(from, below), values.length - 1);
+    from = below;
+    const low = values[below];
+    const fraction = position - below;
+    if (fraction === 0) return low;
+    let high = Number.POSITIVE_INFINITY;
+    for (let i = below + 1; i < values.length; i++) if (values[i] < high) high = values[i];
+    return low === high ? low : low + (high - low) * fraction;
+  });
+}
+
+/** Puts the value of a rank in its place, smaller ones before it and larger ones after it, within first .. last. */
+function selectRank(values: Float64Array, rank: number, first: number, last: number): void {
+  let low = first;
+  let high = last;
+  while (low < high) {
+    const pivot = values[(low + high) >> 1];
+    let i = low;
+    let j = high;
+    while (i <= j) {
+      while (values[i] < pivot) i++;
+      while (values[j] > pivot) j--;
+      if (i > j) break;
+      const kept = values[i];
+      values[i++] = values[j];
+      values[j--] = kept;
+    }
+    if (rank <= j) high = j;
+    else if (rank >= i) low = i;
+    else return;
+  }
 }

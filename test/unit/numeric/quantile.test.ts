@@ -1,5 +1,6 @@
 import { describe, expect, it } from 'vitest';
-import { quantileSorted, quantiles } from '@/lib/numeric/quantile';
+import { quantileSorted, quantiles, quantilesInPlace } from '@/lib/numeric/quantile';
+import { createStream } from '@/lib/numeric/random';
 
 describe('quantiles of type R-7', () => {
   it('interpolate between order statistics', () => {
@@ -14,6 +15,25 @@ describe('quantiles of type R-7', () => {
     const values = [3, 1, 2];
     expect(quantiles(values, [0, 0.5, 1])).toEqual([1, 2, 3]);
     expect(values).toEqual([3, 1, 2]);
+  });
+
+  it('by selection are those of the sorted values, ties and all', () => {
+    const stream = createStream(3, 0);
+    const ps = [0, 0.05, 0.25, 0.5, 0.75, 0.95, 1];
+    for (const size of [1, 2, 3, 10, 500, 4001]) {
+      const values = Float64Array.from(
+        { length: size },
+        () => Math.round(20 * stream.normal()) / (1 + (size % 3)),
+      );
+      const sorted = values.slice().sort();
+      expect(quantilesInPlace(values, ps)).toEqual(ps.map((p) => quantileSorted(sorted, p)));
+      // nothing is lost or made up
+      expect(values.sort()).toEqual(sorted);
+    }
+  });
+
+  it('of values with one that is no number are no numbers', () => {
+    expect(quantiles([1, Number.NaN, 3], [0.5])).toEqual([Number.NaN]);
   });
 
   it('allow infinite values without NaN', () => {
