@@ -19,8 +19,9 @@ import { computeOdds, computePriorOdds, decideOutcome, outcomeOf } from './odds'
 import type { Cloud, FitReport, Outlook } from './report';
 import { simulateLevels, simulateObservations } from './simulate';
 
-/** Draws that bands and milestones are taken from. */
+/** Draws that bands are taken from, and those that are followed to their ends for milestones and maps. */
 export const OUTLOOK_DRAWS = 2000;
+const FOLLOWED_DRAWS = 1000;
 /** Observations per draw. */
 const REPLICATES = 2;
 /** Draws shown on the maps. */
@@ -39,7 +40,7 @@ export function computeOutlook({ fit, seed, horizonMonths, lastMonth }: OutlookI
   cloud: Cloud;
 } {
   const draws = thinDraws(fit.draws, OUTLOOK_DRAWS);
-  const table = readDrawTable(draws);
+  const table = readDrawTable(thinDraws(draws, FOLLOWED_DRAWS));
   const ends = findDrawEnds(table);
   const levels = simulateLevels(draws, horizonMonths, seed);
   const observations = simulateObservations(draws, levels, seed, REPLICATES);
