@@ -36,7 +36,7 @@ const SMALLEST_WEIGHT = 0.005;
 
 export function describeBacktest(words: Words, report: BacktestReport): BacktestPart {
   const horizon = longestHorizon(report);
-  const rows = report.scores.filter((row) => row.horizonMonths === horizon);
+  const rows = report.scores.filter((row) => row.horizonMonths === horizon && isShown(report, row));
   return {
     verdict: writeVerdict(words, report),
     details: [
@@ -51,6 +51,11 @@ export function describeBacktest(words: Words, report: BacktestReport): Backtest
     rows: rows.map((row) => toRow(words, report, row)),
     table: buildTable(words, report),
   };
+}
+
+/** A combination that did not do better stays in the folded table. */
+function isShown({ combination }: BacktestReport, row: ScoreRow): boolean {
+  return row.method !== 'combination' || combination?.isBetter === true;
 }
 
 /** For beside the main verdict: one sentence where a simple method did better, else none. */

@@ -5,6 +5,7 @@ import { axisAroundZero, monthTicks } from './axis-ticks';
 import type { BriefFacts } from './facts';
 import { spellOdds } from './odds-strip';
 import { labelOutcome, toneOfOutcome } from './outcomes';
+import { alignOdds } from './push-odds';
 import { namePushes, writeEffect } from './push-words';
 import { plainText, possessive, sentence } from './text';
 import type {
@@ -23,11 +24,12 @@ import { createWords, DEFAULT_LOCALE, intervalAt, type Words } from './words';
 const LEAST_REACH = 0.01;
 
 export function buildPushBrief(
-  comparison: ScenarioComparison,
+  sampled: ScenarioComparison,
   facts: BriefFacts,
   locale: string = DEFAULT_LOCALE,
 ): PushBrief {
   const words = createWords(facts, locale);
+  const comparison = { ...sampled, odds: alignOdds(facts.report.outlook.odds, sampled.odds) };
   const sentences = writeEffect(words, comparison);
   return {
     sentences,

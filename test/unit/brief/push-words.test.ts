@@ -52,11 +52,13 @@ describe('a push in words', () => {
 const sample = makeSample('coexistence');
 const scenario = prepareScenario(sample.draws, { horizonMonths: 24, seed: 1 });
 
-/** A true comparison whose effect is overwritten. */
+/** A true comparison whose effect is overwritten, beside an outlook with the same odds where those are overwritten too. */
 function say(effect: Partial<ScenarioEffect>, change: Partial<ScenarioComparison> = {}): string {
   const comparison = scenario.compare([pushOf()]);
+  const outlook = { ...facts.report.outlook, odds: change.odds?.before ?? facts.report.outlook.odds };
+  const told = { ...facts, report: { ...facts.report, outlook } };
   return spaced(
-    buildPushBrief({ ...comparison, ...change, effect: { ...comparison.effect, ...effect } }, facts).plain,
+    buildPushBrief({ ...comparison, ...change, effect: { ...comparison.effect, ...effect } }, told).plain,
   );
 }
 
