@@ -37,6 +37,12 @@ async function uploadSeries(page: Page, path: string) {
   await (await chooser).setFiles(path);
 }
 
+/** All text of a page with a brief, once its figures, which load late, are there. */
+async function readWhole(page: Page): Promise<string | null> {
+  await page.getByText('Arrow keys move by a month').first().waitFor({ state: 'attached' });
+  return page.getByRole('main').textContent();
+}
+
 describe.sequential('from a file to a link', () => {
   test('somebody signed out is sent to the sign-in page', async () => {
     const { page, context, errors } = await openPage(browser);
@@ -164,7 +170,7 @@ describe.sequential('from a file to a link', () => {
     const { page } = analyst;
     const reader = await openPage(browser);
     await reader.page.goto(linkUrl);
-    const frozen = await reader.page.getByRole('main').textContent();
+    const frozen = await readWhole(reader.page);
     await page.goto(`${marketUrl}/data`);
     expect(await findViolations(page)).toEqual([]);
     const rows = readFileSync(SERIES_FILE, 'utf8').trimEnd();
@@ -172,7 +178,7 @@ describe.sequential('from a file to a link', () => {
     await page.getByRole('button', { name: /Store revision 2/ }).click();
     await page.waitForURL(marketUrl);
     await reader.page.reload();
-    expect(await reader.page.getByRole('main').textContent()).toBe(frozen);
+    expect(await readWhole(reader.page)).toBe(frozen);
     await reader.context.close();
   });
 

@@ -25,6 +25,8 @@ import { createFakeRun } from './fake-run';
 import { asMember, makeViewer } from './people';
 import { marketForm, SAMPLE_SERIES, toCsv, uploadMarket } from './sample-market';
 
+type FakeEnd = ReturnType<NonNullable<FakeAnalysisOptions['end']>>;
+
 getLogger().level = 'silent';
 
 describeOnDatabases('analyses', () => {
@@ -81,7 +83,7 @@ describeOnDatabases('analyses', () => {
     const page = await readMarket(viewer, marketId);
     expect(page).toMatchObject({
       ok: true,
-      value: { backtest: { state: 'done' }, facts: { backtest: FAKE_BACKTEST } },
+      value: { analyses: { backtest: { state: 'done' } }, facts: { backtest: FAKE_BACKTEST } },
     });
     const issued = await issueForecast(viewer, marketId, { pushes: null });
     if (!issued.ok) throw new Error(issued.code);
@@ -202,7 +204,7 @@ describeOnDatabases('analyses', () => {
   });
 
   it.each([
-    ['its code', () => ({ done: true, failure: 'too-few-origins' }) as const, 'too-few-origins'],
+    ['its code', (): FakeEnd => ({ done: true, failure: 'too-few-origins' }), 'too-few-origins'],
     [
       'a fault of the engine',
       () => {
@@ -212,7 +214,7 @@ describeOnDatabases('analyses', () => {
     ],
     [
       'a fault, where the result is no result',
-      () => ({ done: true, result: { ...FAKE_BACKTEST, horizons: [] } }) as const,
+      (): FakeEnd => ({ done: true, result: { ...FAKE_BACKTEST, horizons: [] } }),
       'engine-error',
     ],
   ])('end as failed with %s', async (_name, end, failureCode) => {
