@@ -6,6 +6,7 @@ export function slimFacts(facts: BriefFacts): BriefFacts {
   return {
     ...facts,
     backtest: undefined,
+    identifiability: undefined,
     report: {
       ...report,
       cloud: [],

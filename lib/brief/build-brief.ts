@@ -4,6 +4,7 @@ import { describeBacktest, warnOfSimpler } from './backtest-words';
 import { writeCautions } from './cautions';
 import type { BriefFacts } from './facts';
 import { buildForecastFigure } from './forecast-figure';
+import { describeIdentifiability } from './identifiability-words';
 import { writeMilestones } from './milestones';
 import { buildOddsMap } from './odds-map';
 import { buildOddsStrip, spellOdds } from './odds-strip';
@@ -11,8 +12,17 @@ import { labelOutcome } from './outcomes';
 import { buildParameterTable } from './parameters';
 import { buildPhaseMap } from './phase-map';
 import { describeSampler } from './sampler-health';
+import { buildSensitivity } from './sensitivity-words';
 import { listWords, sentence } from './text';
-import type { Brief, Sentence, TrustSection, Verdict, WhereSection, WhySection } from './types';
+import type {
+  Brief,
+  ChangeSection,
+  Sentence,
+  TrustSection,
+  Verdict,
+  WhereSection,
+  WhySection,
+} from './types';
 import { writeUnknowns } from './unknowns';
 import { writeVerdict } from './verdict';
 import { createWords, DEFAULT_LOCALE, type Words } from './words';
@@ -37,10 +47,7 @@ export function buildBrief(facts: BriefFacts, options: BriefOptions = {}): Brief
     locale,
     where: buildWhere(words),
     why: buildWhy(words),
-    change: {
-      question: 'What would change it?',
-      note: sentence('Gains and losses against no push, on the same draws and the same luck.'),
-    },
+    change: buildChange(words),
     trust: buildTrust(words),
     cautions: writeCautions(words, hasScenario),
   };
@@ -94,14 +101,24 @@ function buildWhy(words: Words): WhySection {
   };
 }
 
+function buildChange(words: Words): ChangeSection {
+  const sensitivity = words.facts.identifiability?.sensitivity;
+  return {
+    question: 'What would change it?',
+    note: sentence('Gains and losses against no push, on the same draws and the same luck.'),
+    sensitivity: sensitivity ? buildSensitivity(words, sensitivity) : null,
+  };
+}
+
 function buildTrust(words: Words): TrustSection {
-  const { backtest } = words.facts;
+  const { backtest, identifiability } = words.facts;
   return {
     question: 'How far can I trust it?',
     note: sentence('What the history cannot tell, and how the numbers were got.'),
     unknowns: writeUnknowns(words),
     sampler: describeSampler(words),
     backtest: backtest ? describeBacktest(words, backtest) : null,
+    identifiability: identifiability ? describeIdentifiability(words, identifiability) : null,
     leftOut: sentence(
       `Left out: a third firm, prices, seasons, and every change of strengths after ${words.months.long(words.lastMonth)}.`,
     ),

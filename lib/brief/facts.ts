@@ -3,6 +3,7 @@
  * Nothing else is consulted, so the same facts always give the same brief, on the server, in the browser and from a frozen forecast.
  */
 import type { BacktestReport } from '../forecast/backtest/report';
+import type { IdentifiabilityReport } from '../forecast/identifiability/report';
 import type { FitReport } from '../forecast/report';
 import type { MonthlySeries } from '../series/types';
 
@@ -30,4 +31,6 @@ export interface BriefFacts {
   report: FitReport;
   /** How past forecasts of these counts did; absent: not known yet. */
   backtest?: BacktestReport;
+  /** What the data can and cannot tell; absent: not known yet. */
+  identifiability?: IdentifiabilityReport;
 }

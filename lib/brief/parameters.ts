@@ -38,6 +38,8 @@ export function nameParameter(words: Words, id: string): string {
     beta: `the room that ${focal} takes from ${rival}`,
     a12: `what one ${rival} user takes from ${focal}`,
     a21: `what one ${focal} user takes from ${rival}`,
+    n1Start: `${possessive(focal)} level at the start`,
+    n2Start: `${possessive(rival)} level at the start`,
   };
   return names[id] ?? id;
 }

@@ -331,6 +331,33 @@ export interface ParameterLine {
 export interface ChangeSection {
   question: string;
   note: Sentence;
+  /** What share and odds hang on; null: not analysed. */
+  sensitivity: SensitivityFigure | null;
+}
+
+export interface SensitivityFigure {
+  headline: Sentence;
+  /** Accessible name of the figure. */
+  title: string;
+  /** Most telling strength first. */
+  rows: SensitivityLine[];
+  /** Shares, fractions of 1. */
+  domain: [number, number];
+  ticks: Tick[];
+  caption: Sentence;
+  table: FigureTable;
+}
+
+export interface SensitivityLine {
+  id: string;
+  label: string;
+  tone: Tone;
+  /** Ends in shares, fractions of 1; null: not known. */
+  bar: { low: number; high: number } | null;
+  /** "50 % to 28 %": at the low end, at the high end. */
+  text: string;
+  /** Part of the share's spread: "91 %". */
+  explained: string;
 }
 
 // --- 4. How far can I trust it? ---------------------------------------------------------------------------------
@@ -346,6 +373,50 @@ export interface TrustSection {
   leftOut: Sentence;
   /** How past forecasts did; null: there is no backtest. */
   backtest: BacktestPart | null;
+  /** What more months and other values would tell; null: not analysed. */
+  identifiability: IdentifiabilityPart | null;
+}
+
+export interface IdentifiabilityPart {
+  decision: DecisionFigure | null;
+  profiles: ProfileTable | null;
+  /** Trade-offs, signs, error scales. */
+  findings: UnknownLine[];
+}
+
+/** Months until the data decide. */
+export interface DecisionFigure {
+  headline: Sentence;
+  rows: DecisionLine[];
+  /** Reads the bars out. */
+  description: string;
+  caption: Sentence;
+  table: FigureTable;
+}
+
+export interface DecisionLine {
+  months: number;
+  /** "6 more months". */
+  label: string;
+  /** Percent, unrounded. */
+  decided: number;
+  sure: number;
+  decidedText: string;
+  sureText: string;
+}
+
+export interface ProfileTable {
+  caption: Sentence;
+  rows: ProfileLine[];
+  table: FigureTable;
+}
+
+export interface ProfileLine {
+  id: string;
+  label: string;
+  best: string;
+  /** "46 to 95 %", "above 230,000, with no upper limit". */
+  interval: string;
 }
 
 export interface BacktestPart {

@@ -5,6 +5,7 @@
  */
 import { z } from 'zod';
 import { backtestReportSchema } from '../forecast/backtest/report';
+import { identifiabilityReportSchema } from '../forecast/identifiability/report';
 import { fitReportSchema } from '../forecast/report';
 import { scenarioComparisonSchema } from '../scenario/comparison';
 import { pushesSchema } from '../scenario/push-schema';
@@ -45,6 +46,8 @@ export const issuedForecastSchema = z.object({
   report: fitReportSchema,
   /** Absent in forecasts issued before there were backtests, or before theirs was done. */
   backtest: backtestReportSchema.optional(),
+  /** Likewise. */
+  identifiability: identifiabilityReportSchema.optional(),
   scenario: z
     .object({ name: z.string(), pushes: pushesSchema, comparison: scenarioComparisonSchema })
     .nullable(),

@@ -17,8 +17,15 @@ export interface OpenedForecast {
   stamp: string;
 }
 
-export function factsOfIssued({ market, revision, series, report, backtest }: IssuedForecast): BriefFacts {
-  return { market, revision, series, report, backtest };
+export function factsOfIssued({
+  market,
+  revision,
+  series,
+  report,
+  backtest,
+  identifiability,
+}: IssuedForecast): BriefFacts {
+  return { market, revision, series, report, backtest, identifiability };
 }
 
 export function openIssued(

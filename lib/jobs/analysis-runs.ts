@@ -1,6 +1,7 @@
 /** How each kind of analysis is made, and whether a fit that ended well starts it by itself. */
 import type { AnalysisInput, AnalysisRun } from '../forecast/analysis-run';
 import { createBacktestRun } from '../forecast/backtest/backtest-run';
+import { createIdentifiabilityRun } from '../forecast/identifiability/identifiability-run';
 import type { AnalysisKind, AnalysisResult } from '../store/analysis-kinds';
 
 export type CreateAnalysisRun<Kind extends AnalysisKind = AnalysisKind> = (
@@ -11,5 +12,6 @@ export type CreateAnalysisRun<Kind extends AnalysisKind = AnalysisKind> = (
 export type AnalysisRuns = { readonly [Kind in AnalysisKind]?: CreateAnalysisRun<Kind> };
 
 export const ANALYSIS_RUNS = {
+  identifiability: createIdentifiabilityRun,
   backtest: createBacktestRun,
 } satisfies Required<AnalysisRuns>;

@@ -14,7 +14,7 @@ import { type IssueForm, issueFormSchema } from './forms';
 import { toBriefFacts } from './market-facts';
 import { type Refusal, refuse, type Success, succeed } from './outcome';
 import { type InvalidInput, type NotAllowed, type NotFound, parseWrite } from './parse-form';
-import { readAnalysisOf } from './read-analysis';
+import { readOutlookAnalyses, toAnalysisFacts } from './read-outlook-analyses';
 import { listStaleReasons, type StaleReason } from './staleness';
 import type { Viewer } from './viewer';
 
@@ -46,9 +46,9 @@ export async function issueForecast(
   const reasons = listStaleReasons({ ...fit, engineVersion: fit.report.engineVersion }, market, revision.id);
   if (reasons.length > 0) return refuse('is-stale', { reasons });
   const scenario = await compareForIssue(viewer, fit, parsed.value);
-  const backtest = await readAnalysisOf(viewer, fit.revisionId, 'backtest');
+  const analyses = await readOutlookAnalyses(viewer, fit.revisionId);
   const content = freezeForecast({
-    facts: toBriefFacts(market, revision, fit, backtest.result),
+    facts: toBriefFacts(market, revision, fit, toAnalysisFacts(analyses)),
     scenario,
     issuedAt: new Date().toISOString(),
     issuedBy: viewer.userName,

@@ -1,6 +1,5 @@
 /** The facts that a brief is written from: a market's newest outlook with the very series that it was made from. */
 import type { BriefFacts } from '../brief/facts';
-import type { BacktestReport } from '../forecast/backtest/report';
 import type { DoneFit } from '../store/fits';
 import type { Market } from '../store/markets';
 import type { Revision } from '../store/revisions';
@@ -10,7 +9,7 @@ export function toBriefFacts(
   market: Market,
   revision: Revision,
   fit: DoneFit,
-  backtest: BacktestReport | null,
+  analyses: Pick<BriefFacts, 'backtest' | 'identifiability'>,
 ): BriefFacts {
   const { name, unit, focalName, rivalName } = market;
   const { number, createdAt, fileName, series } = revision;
@@ -19,6 +18,6 @@ export function toBriefFacts(
     revision: { number, createdAt: createdAt.toISOString(), fileName },
     series,
     report: fit.report,
-    ...(backtest && { backtest }),
+    ...analyses,
   };
 }

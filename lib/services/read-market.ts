@@ -1,7 +1,6 @@
 /** Everything that the page of one market shows. */
 import type { BriefFacts } from '../brief/facts';
 import type { FitProgress } from '../estimate/types';
-import type { BacktestReport } from '../forecast/backtest/report';
 import type { MonthlySeries } from '../series/types';
 import { type DoneFit, type FitState, type FitView, latestDoneFit, latestFit } from '../store/fits';
 import { type IssuedForecastSummary, listIssuedForecasts } from '../store/issued-forecasts';
@@ -11,7 +10,7 @@ import { listScenarios, type Scenario } from '../store/scenarios';
 import { toBriefFacts } from './market-facts';
 import { refuse, type Success, succeed } from './outcome';
 import type { NotFound } from './parse-form';
-import { type AnalysisStanding, readAnalysisOf } from './read-analysis';
+import { type OutlookAnalyses, readOutlookAnalyses, toAnalysisFacts } from './read-outlook-analyses';
 import { listStaleReasons, type StaleReason } from './staleness';
 import type { Viewer } from './viewer';
 
@@ -28,8 +27,8 @@ export interface MarketPage {
   outlook: { fitId: string; staleReasons: StaleReason[] } | null;
   /** null: no fit has ended well yet. They may be of an earlier revision; `outlook.staleReasons` says so. */
   facts: BriefFacts | null;
-  /** Standing of the backtest of that outlook; null: no outlook. */
-  backtest: AnalysisStanding<'backtest'> | null;
+  /** How the analyses of that outlook stand; null: no outlook. */
+  analyses: OutlookAnalyses | null;
   issued: IssuedSummary[];
   scenarios: Scenario[];
 }
@@ -57,8 +56,8 @@ export async function readMarket(viewer: Viewer, marketId: string): Promise<Succ
   ]);
   if (!market || !newest) return refuse('not-found');
   const { series, ...revision } = newest;
-  const backtest = done && (await readAnalysisOf(viewer, done.revisionId, 'backtest'));
-  const facts = done && (await readFacts(viewer, market, newest, done, backtest?.result ?? null));
+  const analyses = done && (await readOutlookAnalyses(viewer, done.revisionId));
+  const facts = done && analyses && (await readFacts(viewer, market, newest, done, analyses));
   const outlook = done && { fitId: done.id, staleReasons: listReasons(done, market, newest) };
   const isStale = outlook !== null && outlook.staleReasons.length > 0;
   return succeed({
@@ -68,7 +67,7 @@ export async function readMarket(viewer: Viewer, marketId: string): Promise<Succ
     fit: fit && toStanding(fit, isStale),
     outlook,
     facts,
-    backtest,
+    analyses,
     issued,
     scenarios,
   });
@@ -79,11 +78,11 @@ async function readFacts(
   market: Market,
   newest: Revision,
   done: DoneFit,
-  backtest: BacktestReport | null,
+  analyses: OutlookAnalyses,
 ): Promise<BriefFacts | null> {
   const { revisionId } = done;
   const fitted = revisionId === newest.id ? newest : await readRevision({ workspaceId, revisionId });
-  return fitted && toBriefFacts(market, fitted, done, backtest);
+  return fitted && toBriefFacts(market, fitted, done, toAnalysisFacts(analyses));
 }
 
 function listReasons(done: DoneFit, market: Market, newest: Revision): StaleReason[] {

@@ -1,9 +1,11 @@
 /** The kinds of analysis and what each gives. `lib/jobs/analysis-runs.ts` has how each is made. */
 import type { z } from 'zod';
 import { backtestReportSchema } from '../forecast/backtest/report';
+import { identifiabilityReportSchema } from '../forecast/identifiability/report';
 
 const RESULTS = {
   backtest: backtestReportSchema,
+  identifiability: identifiabilityReportSchema,
 } satisfies Record<string, z.ZodType>;
 
 export type AnalysisKind = keyof typeof RESULTS;

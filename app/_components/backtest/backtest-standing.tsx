@@ -11,8 +11,9 @@ interface BacktestStandingProps {
 }
 
 export function BacktestStanding({ page, canWrite }: BacktestStandingProps) {
-  const { backtest, market, outlook } = page;
-  if (!backtest || !outlook) return null;
+  const { analyses, market, outlook } = page;
+  if (!analyses || !outlook) return null;
+  const { backtest } = analyses;
   const again = canWrite ? <BacktestButton marketId={market.id} /> : null;
   switch (backtest.state) {
     case 'absent':
@@ -46,7 +47,7 @@ export function BacktestStanding({ page, canWrite }: BacktestStandingProps) {
 }
 
 function Waiting({ page, canWrite }: BacktestStandingProps) {
-  const { state, progress, isCancelling } = page.backtest!;
+  const { state, progress, isCancelling } = page.analyses!.backtest;
   return (
     <div className={`${styles.block} ${styles.waiting}`} data-screen-only>
       <BacktestProgress

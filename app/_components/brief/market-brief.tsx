@@ -11,6 +11,7 @@ import { readPushMarket } from '../change/push-market';
 import { PushProvider } from '../change/push-state';
 import { FitStanding } from '../fit/fit-standing';
 import { PageFrame } from '../frame/page-frame';
+import { IdentifiabilityStanding } from '../identifiability/identifiability-standing';
 import { IssueSection } from '../issue/issue-section';
 import { TrustSection } from './trust-section';
 import { WhereSection } from './where-section';
@@ -45,13 +46,26 @@ export function MarketBrief({ viewer, page, facts }: MarketBriefProps) {
             canWrite={canWrite}
           />
         ) : null}
-        <TrustSection trust={brief.trust} cautions={brief.cautions}>
+        <TrustSection
+          trust={brief.trust}
+          cautions={brief.cautions}
+          decisionStanding={<DecisionStanding page={page} />}
+        >
           <BacktestStanding page={page} canWrite={canWrite} />
         </TrustSection>
         <IssueSection page={page} canWrite={canWrite} />
       </PushProvider>
     </PageFrame>
   );
+}
+
+/** An outlook that is out of date gets its analysis with the next fit; a fresh one is about to get it. */
+function DecisionStanding({ page }: { page: MarketPage }) {
+  const { analyses, outlook, market } = page;
+  if (!analyses || !outlook) return null;
+  const { state, progress } = analyses.identifiability;
+  if (state === 'absent' && outlook.staleReasons.length > 0) return null;
+  return <IdentifiabilityStanding marketId={market.id} start={{ state, progress }} />;
 }
 
 function DataFacts({ page, dataLine }: { page: MarketPage; dataLine: string }) {

@@ -5,17 +5,20 @@ import { plainText } from '@/lib/brief/text';
 import type { Caution, TrustSection as TrustSectionData } from '@/lib/brief/types';
 import { BacktestResult } from '../backtest/backtest-result';
 import { Question } from '../frame/question';
+import { IdentifiabilityResult } from '../identifiability/identifiability-result';
 import { SentenceText } from '../text/sentence-text';
 import styles from './sections.module.css';
 
 interface TrustSectionProps {
   trust: TrustSectionData;
   cautions: Caution[];
+  /** Stands in the place of what more months would tell, while that is not known. */
+  decisionStanding?: ReactNode;
   /** Stands in the place of the backtest while there is none. */
   children?: ReactNode;
 }
 
-export function TrustSection({ trust, cautions, children }: TrustSectionProps) {
+export function TrustSection({ trust, cautions, decisionStanding, children }: TrustSectionProps) {
   return (
     <Question id="trust" question={trust.question} note={<SentenceText sentence={trust.note} />}>
       <ul className={styles.unknowns}>
@@ -25,6 +28,7 @@ export function TrustSection({ trust, cautions, children }: TrustSectionProps) {
           </li>
         ))}
       </ul>
+      {trust.identifiability ? <IdentifiabilityResult part={trust.identifiability} /> : decisionStanding}
       <p className={styles.leftOut}>
         <SentenceText sentence={trust.leftOut} />
       </p>

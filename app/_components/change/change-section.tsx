@@ -5,6 +5,7 @@ import dynamic from 'next/dynamic';
 import type { BriefFacts } from '@/lib/brief/facts';
 import type { ChangeSection as ChangeSectionData } from '@/lib/brief/types';
 import { Question } from '../frame/question';
+import { SensitivityFigure } from '../identifiability/sensitivity-figure';
 import { SentenceText } from '../text/sentence-text';
 import styles from './change.module.css';
 import type { KeptScenario } from './save-scenario';
@@ -29,6 +30,7 @@ export function ChangeSection({ change, ...trial }: ChangeSectionProps) {
       <div className={styles.trial}>
         <PushTrial {...trial} />
       </div>
+      {change.sensitivity ? <SensitivityFigure figure={change.sensitivity} /> : null}
     </Question>
   );
 }

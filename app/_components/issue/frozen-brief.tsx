@@ -14,6 +14,7 @@ import { PushAnswer } from '../change/push-answer';
 import { PushFigures } from '../change/push-figures';
 import { PageFrame, type PageViewer } from '../frame/page-frame';
 import { Question } from '../frame/question';
+import { SensitivityFigure } from '../identifiability/sensitivity-figure';
 
 interface FrozenBriefProps {
   forecast: IssuedForecast;
@@ -25,15 +26,25 @@ export function FrozenBrief({ forecast, viewer }: FrozenBriefProps) {
   const facts = factsOfIssued(forecast);
   const brief = buildBrief(facts, { hasScenario: scenario !== null });
   const push = scenario && buildPushBrief(scenario.comparison, facts);
+  const { sensitivity } = brief.change;
   const issued = `issued ${formatDay(new Date(forecast.issuedAt))} by ${forecast.issuedBy}`;
   return (
     <PageFrame title={market.name} facts={`${issued} · ${brief.dataLine}`} viewer={viewer}>
       <WhereSection where={brief.where} />
       <WhySection why={brief.why} />
-      {scenario && push ? (
-        <Question id="change" question={brief.change.question} note={<p>{scenario.name}.</p>}>
-          <PushAnswer push={push} />
-          <PushFigures push={push} />
+      {(scenario && push) || sensitivity ? (
+        <Question
+          id="change"
+          question={brief.change.question}
+          note={scenario ? <p>{scenario.name}.</p> : undefined}
+        >
+          {push ? (
+            <>
+              <PushAnswer push={push} />
+              <PushFigures push={push} />
+            </>
+          ) : null}
+          {sensitivity ? <SensitivityFigure figure={sensitivity} /> : null}
         </Question>
       ) : null}
       <TrustSection trust={brief.trust} cautions={brief.cautions} />

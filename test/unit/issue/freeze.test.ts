@@ -4,6 +4,7 @@ import { freezeForecast } from '@/lib/issue/freeze';
 import { factsOfIssued } from '@/lib/issue/open';
 import { readIssuedForecast } from '@/lib/issue/read';
 import { sampleBacktest } from '../brief/sample-backtest';
+import { sampleIdentifiability } from '../brief/sample-identifiability';
 import { comparison, issuedOf, sample } from './issued-cases';
 
 /** What storing as JSON does to a value. */
@@ -18,9 +19,9 @@ describe('freezeForecast', () => {
     expect(issued.scenario).toEqual({ name: 'Their autumn campaign', pushes: comparison.pushes, comparison });
   });
 
-  it('takes the backtest with it where there is one; a forecast without one reads as before', () => {
-    const backtest = sampleBacktest();
-    const facts = { ...sample.facts, backtest };
+  it('takes the analyses with it where there are any; a forecast without them reads as before', () => {
+    const analyses = { backtest: sampleBacktest(), identifiability: sampleIdentifiability() };
+    const facts = { ...sample.facts, ...analyses };
     const frozen = freezeForecast({
       facts,
       scenario: null,
@@ -29,10 +30,11 @@ describe('freezeForecast', () => {
     });
     const read = readIssuedForecast(store(frozen));
     if (!read.ok) throw new Error(read.code);
-    expect(factsOfIssued(read.value).backtest).toEqual(backtest);
+    expect(factsOfIssued(read.value)).toMatchObject(analyses);
     const without = readIssuedForecast(store(issuedOf(false)));
     if (!without.ok) throw new Error(without.code);
-    expect(factsOfIssued(without.value).backtest).toBeUndefined();
+    const bare = factsOfIssued(without.value);
+    expect([bare.backtest, bare.identifiability]).toEqual([undefined, undefined]);
   });
 
   it('is untouched by what happens to the facts afterwards', () => {
