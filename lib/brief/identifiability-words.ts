@@ -24,13 +24,18 @@ type Profile = NonNullable<IdentifiabilityReport['profiles']>[number];
 
 /** Futures of which more than this part had too few draws to be counted directly: the caption says so. */
 const MOSTLY_EXTRAPOLATED = 0.5;
+/** Half-width, relative, of a value without an interval, for its digits. */
+const VAGUE = 0.2;
 
 export function describeIdentifiability(words: Words, report: IdentifiabilityReport): IdentifiabilityPart {
   const findings: UnknownLine[] = [];
   const add = (code: string, text: Sentence | null) => text && findings.push({ code, sentence: text });
+  const scales = report.errorScales && writeErrorScales(words, report.errorScales);
+  // an answer that turns comes before everything else
+  if (report.errorScales?.disagree) add('error-scales', scales);
   add('trade-off', report.collinearity && writeTradeOff(words, report.collinearity));
   add('sign-pattern', report.signPattern && writeSignPattern(words, report.signPattern));
-  add('error-scales', report.errorScales && writeErrorScales(words, report.errorScales));
+  if (!report.errorScales?.disagree) add('error-scales', scales);
   return {
     decision: report.decision && report.decision.futures > 0 ? buildDecision(words, report.decision) : null,
     profiles: report.profiles && buildProfiles(words, report.profiles),
@@ -159,9 +164,11 @@ function spellEnd(words: Words, profile: Profile, end: number | null): string {
   return end === null ? 'no limit' : spellValue(words, profile, end);
 }
 
+/** Without two ends nothing says how many digits are known: two of them are shown. */
 function spellValue(words: Words, profile: Profile, value: number): string {
   const { low, high } = profile;
-  const width = low !== null && high !== null && high > low ? { q05: low, q95: high } : undefined;
+  const isClosed = low !== null && high !== null && high > low;
+  const width = isClosed ? { q05: low, q95: high } : { q05: (1 - VAGUE) * value, q95: (1 + VAGUE) * value };
   return isLevel(profile) ? words.numbers.users(value, width) : words.numbers.percent(value, width);
 }
 
@@ -178,7 +185,7 @@ function writeTradeOff(
   if (weakest.length === 1)
     return sentence(`Of all strengths the history tells ${names[0]} least${measure}.`);
   const move = weakest.every(({ weight }) => weight > 0)
-    ? 'all raised together'
+    ? `${weakest.length === 2 ? 'both' : 'all'} raised together`
     : `moved against each other (${weakest.map(({ weight }, i) => `${names[i]} ${weight > 0 ? 'up' : 'down'}`).join(', ')})`;
   return sentence(
     `What the history tells apart least: ${listWords(names)}. ${capitalise(move)}, they leave the past nearly as it was${measure}.`,

@@ -11,7 +11,10 @@ export function DecisionFigure({ figure }: { figure: DecisionFigureData }) {
         <SentenceText sentence={figure.headline} />
       </p>
       <FigureFrame caption={figure.caption} table={figure.table}>
-        <div className={styles.bars} role="img" aria-label={figure.description}>
+        <div className={styles.bars} data-short-labels role="img" aria-label={figure.description}>
+          <div className={styles.barRow} data-head>
+            <span className={styles.barHead}>likely · very likely</span>
+          </div>
           {figure.rows.map((row) => (
             <div key={row.months} className={styles.barRow}>
               <span className={styles.barLabel}>{row.label}</span>

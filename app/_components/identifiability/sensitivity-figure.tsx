@@ -15,6 +15,9 @@ export function SensitivityFigure({ figure }: { figure: SensitivityFigureData })
       </p>
       <FigureFrame caption={figure.caption} table={figure.table}>
         <div className={styles.bars} role="img" aria-label={`${figure.title}. ${spoken.join('. ')}`}>
+          <div className={styles.barRow} data-head>
+            <span className={styles.barHead}>of the spread</span>
+          </div>
           {figure.rows.map((row) => (
             <div key={row.id} className={styles.barRow}>
               <span className={styles.barLabel}>{row.label}</span>

@@ -74,7 +74,7 @@ describe('trade-offs', () => {
     expect(finding('trade-off')).toContain(
       `${rivalName}’s saturation level and the room that ${rivalName} takes`,
     );
-    expect(finding('trade-off')).toContain('All raised together, they leave the past nearly as it was');
+    expect(finding('trade-off')).toContain('Both raised together, they leave the past nearly as it was');
     const weakest = [
       { id: 'k2' as const, weight: 1 },
       { id: 'r2' as const, weight: -0.8 },
@@ -125,6 +125,7 @@ describe('error scales', () => {
     const errorScales = { log: verdict('coexistence'), raw: verdict('exclusionByRival'), disagree: true };
     const text = finding('error-scales', { errorScales });
     expect(text).toMatch(/^The kind of counting error turns the answer/);
+    expect(describeFor(facts, { errorScales }).findings[0].code).toBe('error-scales');
     expect(text).toContain('both firms staying');
     expect(text).toContain(`${rivalName} alone staying`);
   });
