@@ -13,6 +13,7 @@ import { buildParameterTable } from './parameters';
 import { buildPhaseMap } from './phase-map';
 import { describeSampler } from './sampler-health';
 import { buildSensitivity } from './sensitivity-words';
+import { writeLeftOut } from './structure-words';
 import { listWords, sentence } from './text';
 import type {
   Brief,
@@ -119,8 +120,6 @@ function buildTrust(words: Words): TrustSection {
     sampler: describeSampler(words),
     backtest: backtest ? describeBacktest(words, backtest) : null,
     identifiability: identifiability ? describeIdentifiability(words, identifiability) : null,
-    leftOut: sentence(
-      `Left out: a third firm, prices, seasons, and every change of strengths after ${words.months.long(words.lastMonth)}.`,
-    ),
+    leftOut: writeLeftOut(words),
   };
 }
