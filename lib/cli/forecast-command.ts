@@ -45,7 +45,9 @@ export function forecast(request: ForecastRequest, asJson: boolean, terminal: Te
   if ('failure' in end) return explainFailure(end.failure, reading.problems);
 
   if (end.report.diagnostics.status === 'not-converged') {
-    terminal.warn('The sampler stopped short of its target; the numbers are rough. More months or another --seed may help.');
+    terminal.warn(
+      'The sampler stopped short of its target; the numbers are rough. More months or another --seed may help.',
+    );
   }
   const milliseconds = performance.now() - startedAt;
   const output = asJson

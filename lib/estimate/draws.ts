@@ -11,7 +11,7 @@ import type { DrawSet, ErrorModel } from './types';
  * sd of ln users per root month, breakMonth as month of the grid or -1. r to beta are those in force in the last month. With a yearly cycle
  * come its offsets of ln users, see `seasonColumn`.
  */
-export const DRAW_COLUMNS: Readonly<Record<ErrorModel, readonly string[]>> = {
+const DRAW_COLUMNS: Readonly<Record<ErrorModel, readonly string[]>> = {
   ar1: AR1_COLUMNS,
   'process-noise': STATE_COLUMNS,
 };

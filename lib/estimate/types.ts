@@ -63,8 +63,3 @@ export type FitStatus =
   | 'too-short' // fewer than MIN_MONTHS usable months
   | 'no-usable-data' // a firm has no positive count, or nothing varies
   | 'failed'; // no start gave a finite value
-
-/** Statuses whose draws may be shown. */
-export function isUsable(status: FitStatus): boolean {
-  return status === 'converged' || status === 'not-converged';
-}

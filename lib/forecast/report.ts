@@ -110,7 +110,6 @@ export const startRowSchema = z.object({
   /** Reason for stopping, an id of the termination table in lib/numeric. */
   stopped: z.string(),
 });
-export type StartRow = z.infer<typeof startRowSchema>;
 
 export const diagnosticsSchema = z.object({
   status: z.enum(['converged', 'not-converged', 'too-short', 'no-usable-data', 'failed']),

@@ -29,7 +29,15 @@ function predict(market: Market) {
   while (!step.done) step = run.next();
   const seconds = (performance.now() - started) / 1000;
   if ('failure' in step) {
-    return { id: market.id, probs: NO_OPINION, q: null, seconds, status: step.failure, rhat: null, ess: null };
+    return {
+      id: market.id,
+      probs: NO_OPINION,
+      q: null,
+      seconds,
+      status: step.failure,
+      rhat: null,
+      ess: null,
+    };
   }
   const { outlook, diagnostics } = step.report;
   const { coexistence, exclusionByFocal, exclusionByRival, headStartDecides } = outlook.odds;

@@ -102,8 +102,12 @@ describe('the path', () => {
   });
 
   it('needs a grid with a month and a firm in it', () => {
-    expect(() => createTrajectory({ months: 0, entry1: 0, entry2: 0 })).toThrow('months must be a positive integer, got 0');
-    expect(() => createTrajectory({ months: 5, entry1: 1, entry2: 2 })).toThrow('one firm must enter in month 0');
+    expect(() => createTrajectory({ months: 0, entry1: 0, entry2: 0 })).toThrow(
+      'months must be a positive integer, got 0',
+    );
+    expect(() => createTrajectory({ months: 5, entry1: 1, entry2: 2 })).toThrow(
+      'one firm must enter in month 0',
+    );
   });
 });
 
@@ -146,7 +150,8 @@ describe('the derivatives', () => {
     trajectory.pullBack(weights[0], weights[1], gradient);
     for (let j = 0; j < PARAMETER_COUNT; j++) {
       let sum = 0;
-      for (let i = 0; i < 2 * months; i++) sum += weights[i < months ? 0 : 1][i % months] * out[i * PARAMETER_COUNT + j];
+      for (let i = 0; i < 2 * months; i++)
+        sum += weights[i < months ? 0 : 1][i % months] * out[i * PARAMETER_COUNT + j];
       expect(Math.abs(gradient[j] - sum)).toBeLessThan(1e-9 * (1 + Math.abs(sum)));
     }
   });
