@@ -1,20 +1,12 @@
 /**
  * Posterior draws as one table of numbers: built by the sampler, thinned for storage, read by column name.
- */
-import { AR1_COLUMNS } from './ar1-posterior';
-import { STATE_COLUMNS } from './state-posterior';
-import type { DrawSet, ErrorModel } from './types';
-
-/**
- * Columns that every set of an error model has. Natural units: r per month, k, n and n..Start in users (n: level in the last month of the
- * series), alpha, beta and persistence without unit, size as sd of ln users, residual as ln count minus ln level in the last month, noise as
+ *
+ * Columns of a set: AR1_COLUMNS in ar1-posterior.ts, STATE_COLUMNS in state-posterior.ts. Natural units: r per month, k, n and n..Start
+ * in users (n: level in the last month of the series), alpha, beta and persistence without unit, size as sd of ln users, residual as ln count minus ln level in the last month, noise as
  * sd of ln users per root month, breakMonth as month of the grid or -1. r to beta are those in force in the last month. With a yearly cycle
  * come its offsets of ln users, see `seasonColumn`.
  */
-const DRAW_COLUMNS: Readonly<Record<ErrorModel, readonly string[]>> = {
-  ar1: AR1_COLUMNS,
-  'process-noise': STATE_COLUMNS,
-};
+import type { DrawSet } from './types';
 
 /**
  * At most `count` rows, evenly spaced over the whole set (which holds the chains interleaved, so every chain keeps its share).

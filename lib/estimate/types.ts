@@ -30,7 +30,7 @@ export interface FitInput {
 
 /**
  * Posterior draws, row-major: draw i, column c is values[i * columns.length + c].
- * Columns are named in `columns` (see DRAW_COLUMNS in draws.ts): natural units, the state at the last observed month included,
+ * Columns are named in `columns` (see draws.ts): natural units, the state at the last observed month included,
  * so a forecast needs nothing but a draw.
  */
 export interface DrawSet {
