@@ -7,7 +7,6 @@ import type { MarketPage } from '@/lib/services/read-market';
 import { canWrite as canWriteMarkets, type Viewer } from '@/lib/services/viewer';
 import { BacktestStanding } from '../backtest/backtest-standing';
 import { ChangeSection } from '../change/change-section';
-import { readPushMarket } from '../change/push-market';
 import { PushProvider } from '../change/push-state';
 import { FitStanding } from '../fit/fit-standing';
 import { PageFrame } from '../frame/page-frame';
@@ -35,11 +34,10 @@ export function MarketBrief({ viewer, page, facts }: MarketBriefProps) {
       <FitStanding page={page} canWrite={canWrite} />
       <WhereSection where={brief.where} />
       <WhySection why={brief.why} />
-      <PushProvider market={readPushMarket(facts)}>
+      <PushProvider facts={slimFacts(facts)}>
         {page.outlook ? (
           <ChangeSection
             change={brief.change}
-            facts={slimFacts(facts)}
             marketId={page.market.id}
             fitId={page.outlook.fitId}
             scenarios={page.scenarios.map(({ id, name, pushes }) => ({ id, name, pushes }))}

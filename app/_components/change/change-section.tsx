@@ -2,7 +2,6 @@
 
 /** What would change it? A push to try, what it does, and the scenarios that were kept. The trial loads after the page. */
 import dynamic from 'next/dynamic';
-import type { BriefFacts } from '@/lib/brief/facts';
 import type { ChangeSection as ChangeSectionData } from '@/lib/brief/types';
 import { Question } from '../frame/question';
 import { SensitivityFigure } from '../identifiability/sensitivity-figure';
@@ -17,7 +16,6 @@ const PushTrial = dynamic(() => import('./push-trial').then((module) => module.P
 
 interface ChangeSectionProps {
   change: ChangeSectionData;
-  facts: BriefFacts;
   marketId: string;
   fitId: string;
   scenarios: KeptScenario[];

@@ -1,12 +1,12 @@
 'use client';
 
 /** Plain ranges with their values beside them: who pushes, what, from when, how long, how much, with what echo. */
-import { LOCALE } from '@/app/_lib/locale';
-import { createMonthFormat } from '@/lib/brief/month-words';
+import { spellPushField } from '@/lib/brief/push-words';
+import type { Range } from '@/lib/scenario/push-limits';
 import { RangeField } from '../controls/range-field';
 import { ViewSwitch } from '../controls/view-switch';
 import styles from './change.module.css';
-import { type DraftKind, type PushDraft, RANGES, rangeOfRecruits } from './push-draft';
+import { type DraftKind, limitsOf, type PushDraft } from './push-draft';
 import { usePush } from './push-state';
 
 const KINDS = [
@@ -19,13 +19,11 @@ const LENGTHS = [
   { id: 'good', label: 'For good' },
 ] as const;
 
-const months = createMonthFormat(LOCALE);
-
 export function PushControls({ isDisabled }: { isDisabled: boolean }) {
-  const { market, draft, change } = usePush();
+  const { words, scale, draft, change, push } = usePush();
   const firms = [
-    { id: 'rival', label: market.rivalName },
-    { id: 'focal', label: market.focalName },
+    { id: 'rival', label: words.rival },
+    { id: 'focal', label: words.focal },
   ] as const satisfies { id: PushDraft['firm']; label: string }[];
   return (
     <fieldset className={styles.controls} data-firm={draft.firm} disabled={isDisabled}>
@@ -40,9 +38,9 @@ export function PushControls({ isDisabled }: { isDisabled: boolean }) {
       <SizeField isDisabled={isDisabled} />
       <RangeField
         label="Starts after"
-        suffix={`months: ${months.short(market.lastMonth + draft.startMonth)}`}
+        suffix={push ? `months: ${spellPushField(words, 'startMonth', push)}` : 'months'}
         value={draft.startMonth}
-        {...RANGES.startMonth}
+        {...rangeOf(limitsOf(draft, scale).startMonth)}
         isDisabled={isDisabled}
         onChange={(startMonth) => change({ startMonth })}
       />
@@ -57,38 +55,46 @@ export function PushControls({ isDisabled }: { isDisabled: boolean }) {
   );
 }
 
+/** @param factor units of the control in one unit of the range: 100 for percent of a fraction */
+function rangeOf({ min, max, step }: Range, factor = 1): Omit<Range, 'first'> {
+  return { min: min * factor, max: max * factor, step: step * factor };
+}
+
 function SizeField({ isDisabled }: { isDisabled: boolean }) {
-  const { market, draft, change } = usePush();
+  const { scale, draft, change } = usePush();
+  const { size } = limitsOf(draft, scale);
+  const set = (value: number) => change({ sizes: { ...draft.sizes, [draft.kind]: value } });
   return draft.kind === 'recruits' ? (
     <RangeField
       label="Recruits"
       suffix="a month"
-      value={draft.recruits}
-      {...rangeOfRecruits(market)}
+      value={draft.sizes.recruits}
+      {...rangeOf(size)}
       isDisabled={isDisabled}
-      onChange={(recruits) => change({ recruits })}
+      onChange={set}
     />
   ) : (
     <RangeField
       label="Growth is higher by"
       suffix="%"
-      value={Math.round(100 * draft.lift)}
-      {...RANGES.liftPercent}
+      value={Math.round(100 * draft.sizes['growth-lift'])}
+      {...rangeOf(size, 100)}
       isDisabled={isDisabled}
-      onChange={(percent) => change({ lift: percent / 100 })}
+      onChange={(percent) => set(percent / 100)}
     />
   );
 }
 
 function TimeFields({ isDisabled }: { isDisabled: boolean }) {
-  const { draft, change } = usePush();
+  const { scale, draft, change } = usePush();
+  const limits = limitsOf(draft, scale);
   return (
     <>
       <RangeField
         label="Lasts"
         suffix="months"
         value={draft.lengthMonths}
-        {...RANGES.lengthMonths}
+        {...rangeOf(limits.lengthMonths)}
         isDisabled={isDisabled}
         onChange={(lengthMonths) => change({ lengthMonths })}
       />
@@ -96,7 +102,7 @@ function TimeFields({ isDisabled }: { isDisabled: boolean }) {
         label="Then halves every"
         suffix="months"
         value={draft.carryOverHalfLifeMonths}
-        {...RANGES.carryOverHalfLifeMonths}
+        {...rangeOf(limits.carryOverHalfLifeMonths)}
         isDisabled={isDisabled}
         onChange={(carryOverHalfLifeMonths) => change({ carryOverHalfLifeMonths })}
       />

@@ -3,14 +3,17 @@
 /** The push that is being tried: one draft for the controls, the figures, saving and issuing. */
 import { createContext, type ReactNode, useContext, useMemo, useState } from 'react';
 import { LOCALE } from '@/app/_lib/locale';
-import { createMonthFormat } from '@/lib/brief/month-words';
-import { createNumberFormat } from '@/lib/brief/number-format';
+import type { BriefFacts } from '@/lib/brief/facts';
+import { createWords, type Words } from '@/lib/brief/words';
 import type { Push } from '@/lib/dynamics/push';
-import { firstDraft, type PushDraft, toPush, wordPush } from './push-draft';
-import type { PushMarket } from './push-market';
+import type { MarketScale } from '@/lib/scenario/push-limits';
+import { readMarketScale } from './market-scale';
+import { firstDraft, namePush, type PushDraft, toPush } from './push-draft';
 
 interface PushState {
-  market: PushMarket;
+  facts: BriefFacts;
+  words: Words;
+  scale: MarketScale;
   draft: PushDraft;
   change: (change: Partial<PushDraft>) => void;
   /** null: nothing is pushed. */
@@ -22,22 +25,26 @@ interface PushState {
 const PushContext = createContext<PushState | null>(null);
 
 interface PushProviderProps {
-  market: PushMarket;
+  facts: BriefFacts;
   children: ReactNode;
 }
 
-export function PushProvider({ market, children }: PushProviderProps) {
-  const [draft, setDraft] = useState(() => firstDraft(market));
-  const state = useMemo<PushState>(
-    () => ({
-      market,
+export function PushProvider({ facts, children }: PushProviderProps) {
+  const words = useMemo(() => createWords(facts, LOCALE), [facts]);
+  const scale = useMemo(() => readMarketScale(facts), [facts]);
+  const [draft, setDraft] = useState(() => firstDraft(scale));
+  const state = useMemo<PushState>(() => {
+    const push = toPush(draft);
+    return {
+      facts,
+      words,
+      scale,
       draft,
       change: (change) => setDraft((known) => ({ ...known, ...change })),
-      push: toPush(draft),
-      name: wordPush(draft, market, createNumberFormat(LOCALE), createMonthFormat(LOCALE)),
-    }),
-    [market, draft],
-  );
+      push,
+      name: push ? namePush(words, push) : '',
+    };
+  }, [facts, words, scale, draft]);
   return <PushContext value={state}>{children}</PushContext>;
 }
 

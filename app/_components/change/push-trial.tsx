@@ -2,7 +2,6 @@
 
 /** The push being tried: controls, what it does, its figures. Computed in the browser on the posterior draws, fetched once. */
 import { useMemo } from 'react';
-import type { BriefFacts } from '@/lib/brief/facts';
 import { buildPushBrief } from '@/lib/brief/push-brief';
 import { Button } from '../controls/button';
 import { NumberLocale } from '../controls/number-locale';
@@ -16,15 +15,14 @@ import { useComparison } from './use-comparison';
 import { useDraws } from './use-draws';
 
 interface PushTrialProps {
-  facts: BriefFacts;
   marketId: string;
   fitId: string;
   scenarios: KeptScenario[];
   canWrite: boolean;
 }
 
-export function PushTrial({ facts, marketId, fitId, scenarios, canWrite }: PushTrialProps) {
-  const { push } = usePush();
+export function PushTrial({ marketId, fitId, scenarios, canWrite }: PushTrialProps) {
+  const { facts, push } = usePush();
   const [fetched, retry] = useDraws(marketId, fitId);
   const draws = fetched.state === 'ready' ? fetched.draws : null;
   const options = { horizonMonths: facts.report.outlook.horizonMonths, seed: facts.report.seed };

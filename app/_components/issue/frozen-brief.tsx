@@ -2,11 +2,9 @@
  * An issued forecast as it was frozen: the brief written from its own numbers, its date, who issued it, its data months and
  * its cautions. It reads nothing but the record, so it stays as it was whatever happens to the market.
  */
-import { formatDay } from '@/app/_lib/locale';
-import { buildBrief } from '@/lib/brief/build-brief';
-import { buildPushBrief } from '@/lib/brief/push-brief';
+import { formatDay, LOCALE } from '@/app/_lib/locale';
 import type { IssuedForecast } from '@/lib/issue/format';
-import { factsOfIssued } from '@/lib/issue/open';
+import { openIssued } from '@/lib/issue/open';
 import { TrustSection } from '../brief/trust-section';
 import { WhereSection } from '../brief/where-section';
 import { WhySection } from '../brief/why-section';
@@ -22,32 +20,52 @@ interface FrozenBriefProps {
 }
 
 export function FrozenBrief({ forecast, viewer }: FrozenBriefProps) {
-  const { market, scenario } = forecast;
-  const facts = factsOfIssued(forecast);
-  const brief = buildBrief(facts, { hasScenario: scenario !== null });
-  const push = scenario && buildPushBrief(scenario.comparison, facts);
+  const { brief, scenario, stamp } = openIssued(forecast, { locale: LOCALE });
   const { sensitivity } = brief.change;
-  const issued = `issued ${formatDay(new Date(forecast.issuedAt))} by ${forecast.issuedBy}`;
   return (
-    <PageFrame title={market.name} facts={`${issued} · ${brief.dataLine}`} viewer={viewer}>
+    <PageFrame
+      title={brief.market.name}
+      facts={<IssuedFacts forecast={forecast} dataLine={brief.dataLine} />}
+      viewer={viewer}
+    >
       <WhereSection where={brief.where} />
       <WhySection why={brief.why} />
-      {(scenario && push) || sensitivity ? (
+      {scenario || sensitivity ? (
         <Question
           id="change"
           question={brief.change.question}
-          note={scenario ? <p>{scenario.name}.</p> : undefined}
+          note={scenario?.pushes.map((push) => <p key={push}>{push}.</p>)}
         >
-          {push ? (
+          {scenario ? (
             <>
-              <PushAnswer push={push} />
-              <PushFigures push={push} />
+              <PushAnswer push={scenario.push} />
+              <PushFigures push={scenario.push} />
             </>
           ) : null}
           {sensitivity ? <SensitivityFigure figure={sensitivity} /> : null}
         </Question>
       ) : null}
-      <TrustSection trust={brief.trust} cautions={brief.cautions} />
+      <TrustSection trust={brief.trust} cautions={[{ id: 'stamp', text: stamp }, ...brief.cautions]} />
     </PageFrame>
+  );
+}
+
+function IssuedFacts({ forecast, dataLine }: { forecast: IssuedForecast; dataLine: string }) {
+  return (
+    <>
+      issued <time dateTime={forecast.issuedAt}>{formatDay(new Date(forecast.issuedAt))}</time> by{' '}
+      {forecast.issuedBy} · {dataLine}
+    </>
+  );
+}
+
+function ScenarioNote({ name, pushes }: { name: string; pushes: string[] }) {
+  return (
+    <>
+      <p>Scenario: {name}</p>
+      {pushes.map((push) => (
+        <p key={push}>{push}.</p>
+      ))}
+    </>
   );
 }
