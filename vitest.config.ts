@@ -12,7 +12,13 @@ export default defineConfig({
     projects: [
       {
         ...shared,
-        test: { name: 'unit', include: ['test/unit/**/*.test.{ts,tsx}'], env: { TZ: 'Asia/Kathmandu' } },
+        test: {
+          name: 'unit',
+          include: ['test/unit/**/*.test.{ts,tsx}'],
+          env: { TZ: 'Asia/Kathmandu' },
+          // Seconds of work stay seconds; a machine that does three other things needs patience.
+          testTimeout: 60_000,
+        },
       },
       {
         ...shared,
