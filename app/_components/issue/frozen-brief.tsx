@@ -34,7 +34,26 @@ export function FrozenBrief({ forecast, viewer }: FrozenBriefProps) {
         <Question
           id="change"
           question={brief.change.question}
-          note={scenario ? <ScenarioNote name={scenario.name} pushes={scenario.pushes} /> : undefined}</time> by{' '}
+          note={scenario ? <ScenarioNote name={scenario.name} pushes={scenario.pushes} /> : undefined}
+        >
+          {scenario ? (
+            <>
+              <PushAnswer push={scenario.push} />
+              <PushFigures push={scenario.push} />
+            </>
+          ) : null}
+          {sensitivity ? <SensitivityFigure figure={sensitivity} /> : null}
+        </Question>
+      ) : null}
+      <TrustSection trust={brief.trust} cautions={[{ id: 'stamp', text: stamp }, ...brief.cautions]} />
+    </PageFrame>
+  );
+}
+
+function IssuedFacts({ forecast, dataLine }: { forecast: IssuedForecast; dataLine: string }) {
+  return (
+    <>
+      issued <time dateTime={forecast.issuedAt}>{formatDay(new Date(forecast.issuedAt))}</time> by{' '}
       {forecast.issuedBy} · {dataLine}
     </>
   );
