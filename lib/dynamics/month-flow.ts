@@ -3,18 +3,23 @@
  *
  * Scaled state x = N1/K1, y = N2/K2 (K leaves the right-hand side):
  *   x' = r1 x (1 - x - alpha y),   y' = r2 y (1 - y - beta x)              (Murray, Mathematical Biology I, 3.5)
- * Classical Runge-Kutta of order 4 (Kutta 1901); each month is cut into as many equal steps as its fastest rate asks for, so that
- * rate x step <= MAX_RATE_STEP. The stage states go on a tape, so that derivatives are those of the discrete map itself:
+ * Classical Runge-Kutta of order 4 (Kutta 1901); each month is cut into as many equal steps as its fastest rate asks for
+ * (`countSteps`). The stage states go on a tape, so that derivatives are those of the discrete map itself:
  *   forward  S' = J S + df/dp, variational equations                                 (pushForward)
  *   reverse  lambda' = -J^T lambda along the stored stages (Griewank & Walther 2008)  (pullBack)
  * Time unit: month. Nothing is allocated after creation but a longer tape when a path needs one.
  */
 
-/** Largest (rate x step): the local error of a step is then about (0.2)^5 / 120 = 3e-6 of the level, mostly far less. */
-export const MAX_RATE_STEP = 0.2;
+/**
+ * Largest (rate x step): RATE_STEP (1 + rate), at most LARGEST_RATE_STEP. At the rates of markets, below 0.3 a month, a step errs by
+ * (0.2)^5 / 120 = 3e-6 of the level or less. A rate above 1 runs its course within a month or two and leaves the firm on a slow path, which
+ * longer steps follow as well; up to 2.8 they stay stable.
+ */
+const RATE_STEP = 0.17;
+const LARGEST_RATE_STEP = 0.8;
 
-/** More steps than this in one month: parameters far outside anything a market shows; the path is refused. */
-export const MAX_STEPS_PER_MONTH = 200;
+/** A rate above 16 per month is none that a monthly count can show: the path is refused. */
+export const MAX_STEPS_PER_MONTH = 20;
 
 /** Steps per month the tape has room for at first. */
 const FIRST_TAPE_STEPS = 4;
@@ -35,6 +40,8 @@ export interface MonthFlow {
   readonly adjoint: Float64Array;
   /** Sums of the adjoint with d f / d ln r1, ln r2, ln alpha, ln beta; cleared by `clearGradient`. */
   readonly gradient: Float64Array;
+  /** Steps taken since creation: the measure of work. */
+  readonly steps: number;
   setParameters(r1: number, r2: number, alpha: number, beta: number): void;
   /** Moves `state` on by month `slot`, the months of a path being taped in ascending order. @returns false when too fast or not finite */
   advance(slot: number): boolean;
@@ -57,6 +64,7 @@ export function createMonthFlow(slots: number): MonthFlow {
   const stepsOf = new Int32Array(slots);
   const tapeStart = new Int32Array(slots + 1);
   let tape = new Float64Array(slots * FIRST_TAPE_STEPS * TAPE_WIDTH);
+  let stepsTaken = 0;
   let r1 = 0;
   let r2 = 0;
   let alpha = 0;
@@ -69,6 +77,7 @@ export function createMonthFlow(slots: number): MonthFlow {
     if (steps === 0) return false;
     let at = tapeStart[slot];
     const end = at + steps * TAPE_WIDTH;
+    stepsTaken += steps;
     stepsOf[slot] = steps;
     tapeStart[slot + 1] = end;
     if (tape.length < end) tape = lengthen(tape, end);
@@ -267,6 +276,9 @@ export function createMonthFlow(slots: number): MonthFlow {
     tangent,
     adjoint,
     gradient,
+    get steps() {
+      return stepsTaken;
+    },
     setParameters(growth1, growth2, onFirst, onSecond) {
       r1 = growth1;
       r2 = growth2;
@@ -290,7 +302,8 @@ export function createMonthFlow(slots: number): MonthFlow {
 function countSteps(r1: number, r2: number, alpha: number, beta: number, x: number, y: number): number {
   const rate1 = r1 * Math.max(1, 2 * x + alpha * y - 1);
   const rate2 = r2 * Math.max(1, 2 * y + beta * x - 1);
-  const steps = Math.ceil(Math.max(rate1, rate2) / MAX_RATE_STEP);
+  const rate = Math.max(rate1, rate2);
+  const steps = Math.ceil(rate / Math.min(RATE_STEP * (1 + rate), LARGEST_RATE_STEP));
   return steps <= MAX_STEPS_PER_MONTH ? Math.max(steps, 1) : 0;
 }
 

@@ -19,6 +19,8 @@ export interface TrajectoryGrid {
 
 export interface Trajectory {
   readonly grid: TrajectoryGrid;
+  /** Integration steps taken since creation: the measure of work. */
+  readonly steps: number;
   /** ln users of each firm per month after `run`; -Infinity before its entry. */
   readonly logLevel1: Float64Array;
   readonly logLevel2: Float64Array;
@@ -120,7 +122,17 @@ export function createTrajectory(grid: TrajectoryGrid): Trajectory {
     return true;
   };
 
-  return { grid, logLevel1, logLevel2, run, pullBack, fillSensitivities };
+  return {
+    grid,
+    get steps() {
+      return flow.steps;
+    },
+    logLevel1,
+    logLevel2,
+    run,
+    pullBack,
+    fillSensitivities,
+  };
 }
 
 function checkGrid({ months, entry1, entry2 }: TrajectoryGrid): void {

@@ -145,6 +145,9 @@ export function createAr1Posterior(
     get evaluations() {
       return evaluations;
     },
+    get steps() {
+      return trajectory.steps;
+    },
     logDensity,
     place,
     addInformation,

@@ -51,6 +51,8 @@ export interface KalmanFilter {
   readonly mean: Float64Array;
   readonly covariance: Float64Array;
   readonly history: FilterHistory;
+  /** Integration steps taken since creation. */
+  readonly steps: number;
   /** 1 where the count of a month is flagged, firm-major; may be changed between runs. */
   readonly flags: Uint8Array;
   /** Log likelihood up to a constant; -Infinity where the path cannot be followed. */
@@ -360,7 +362,17 @@ export function createKalmanFilter(observations: Observations): KalmanFilter {
     gradient.process[1] += byProcess2;
   };
 
-  return { mean, covariance, history, flags, run, sweepBack };
+  return {
+    mean,
+    covariance,
+    history,
+    flags,
+    get steps() {
+      return flow.steps;
+    },
+    run,
+    sweepBack,
+  };
 }
 
 /** exp for the small moves of a filter: a polynomial within 2e-13 of it up to SMALL_MOVE, where Math.exp takes over. */

@@ -17,6 +17,8 @@ export interface Posterior {
   readonly columns: readonly string[];
   /** Calls of `logDensity` so far. */
   readonly evaluations: number;
+  /** Integration steps taken so far, at least one per month and evaluation: the measure of work. */
+  readonly steps: number;
   /** First month of the second segment; null when there is one segment. Set it before a call; `logDensity` is given that month. */
   breakMonth: number | null;
   /**

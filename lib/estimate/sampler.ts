@@ -4,7 +4,7 @@
  *
  * Warm-up: windows of growing length; after each the metric is the covariance of the window's positions over all chains (shrunk
  * towards the one before), and the step is tuned all along. Sampling goes on in rounds until split R-hat and bulk ESS of the watched
- * quantities pass, or to a stated limit. Where parameters may jump, the month of the break moves by Metropolis steps between trajectories.
+ * quantities pass, or to a stated limit of draws or of work. Where parameters may jump, the month of the break moves by Metropolis steps between trajectories.
  * A generator: each `yield` ends a bounded slice of work; the driver owns the clock.
  */
 import { choleskyOrNull, sampleCovariance } from '../numeric/cholesky';
@@ -53,6 +53,10 @@ const WANTED_ACCEPTANCE = 0.75;
 /** Mean length of a trajectory in units of the metric: a quarter turn of a standard normal. Drawn anew each time, so that no length resonates. */
 const MEAN_LENGTH = 1.6;
 const LENGTH_SPREAD = 0.4;
+/** Share of trajectories with a far smaller step: they lead a chain out of a corner that is sharper than the metric knows. */
+const CAREFUL_SHARE = 0.15;
+const CAREFUL_STEP = 0.2;
+const CAREFUL_STEPS = 8;
 const MAX_STEPS = 40;
 const FIRST_STEP = 0.5;
 /** Weight of the metric before, in draws, when a window's covariance is taken. */
@@ -60,8 +64,12 @@ const METRIC_SHRINKAGE = 40;
 /** Moves of the month of the break per trajectory, and the longest of them. */
 const BREAK_MOVES = 2;
 const LONGEST_BREAK_MOVE = 8;
-/** Evaluations x months of one slice: some 30 ms. */
-const SLICE_WORK = 100_000;
+/** Fewest draws per chain, and visits of a warm-up window, that a fit at its limit still takes. */
+const FEWEST_DRAWS = 100;
+const FEWEST_VISITS = 10;
+/** Integration steps of one slice: some 30 ms; and those after which a component that has not converged stops: some four seconds. */
+const SLICE_STEPS = 100_000;
+export const STEP_LIMIT = 15_000_000;
 
 export function* runSampler(
   component: ModelComponent,
@@ -74,7 +82,9 @@ export function* runSampler(
     const stream = createStream(options.seed, options.firstStream + c);
     return placeWalker(component, coordinates, metric, modes[c % modes.length], stream);
   });
+  const firstStep = posterior.steps;
   const tuner = createStepSizeTuner(FIRST_STEP, WANTED_ACCEPTANCE);
+  const isOverspent = () => posterior.steps - firstStep > STEP_LIMIT;
   const slice = createSlice(posterior);
   const warmUp: SamplerProgress = {
     stage: 'warm-up',
@@ -83,9 +93,10 @@ export function* runSampler(
     rHat: null,
     ess: null,
   };
+  const isWarmUpDear = () => posterior.steps - firstStep > STEP_LIMIT / 2;
   for (const length of WARM_UP_WINDOWS) {
     const visited: Float64Array[] = [];
-    for (let i = 0; i < length; i++) {
+    for (let i = 0; i < length && !(isWarmUpDear() && i >= FEWEST_VISITS); i++) {
       for (const walker of walkers) {
         tuner.update(walker.move(metric, tuner.current));
         visited.push(walker.chain.position.slice());
@@ -106,9 +117,12 @@ export function* runSampler(
   let rHat = Number.POSITIVE_INFINITY;
   let ess = 0;
   const hasConverged = () => rHat <= options.rHatLimit && ess >= options.essLimit;
-  while (store.perChain < DRAW_LIMIT && !hasConverged()) {
+  while (
+    store.perChain < FEWEST_DRAWS ||
+    !(isOverspent() || store.perChain >= DRAW_LIMIT || hasConverged())
+  ) {
     const until = Math.max(store.perChain + ROUND, FIRST_LOOK);
-    while (store.perChain < until) {
+    while (store.perChain < until && !(isOverspent() && store.perChain >= FEWEST_DRAWS)) {
       walkers.forEach((walker, c) => {
         walker.move(metric, stepSize);
         coordinates.toParameters(walker.chain.position, parameters);
@@ -128,12 +142,11 @@ function judged(rHat: number, ess: number): { rHat: number | null; ess: number |
 }
 
 function createSlice(posterior: Posterior): { isOver(): boolean } {
-  const evaluations = SLICE_WORK / posterior.observations.months;
-  let next = posterior.evaluations + evaluations;
+  let next = posterior.steps + SLICE_STEPS;
   return {
     isOver() {
-      if (posterior.evaluations < next) return false;
-      next = posterior.evaluations + evaluations;
+      if (posterior.steps < next) return false;
+      next = posterior.steps + SLICE_STEPS;
       return true;
     },
   };
@@ -157,7 +170,7 @@ function blendMetric(before: Float64Array, visited: readonly Float64Array[], n: 
 interface Walker {
   chain: HmcChain;
   stream: RandomStream;
-  /** One trajectory and the moves of the break; leaves the posterior at the walker's month. @returns the acceptance of the trajectory */
+  /** One trajectory and the moves of the break; leaves the posterior at the walker's month. @returns what the tuning of the step hears */
   move(metric: Float64Array, stepSize: number): number;
 }
 
@@ -214,10 +227,14 @@ function placeWalker(
       posterior.breakMonth = breakMonth;
       const length = MEAN_LENGTH * (1 + LENGTH_SPREAD * (2 * stream.uniform() - 1));
       const steps = Math.min(Math.max(Math.round(length / stepSize), 1), MAX_STEPS);
-      const acceptance = chain.move(currentMetric, stepSize, steps);
+      const isCareful = stream.uniform() < CAREFUL_SHARE;
+      const acceptance = isCareful
+        ? chain.move(currentMetric, CAREFUL_STEP * stepSize, Math.min(steps, CAREFUL_STEPS))
+        : chain.move(currentMetric, stepSize, steps);
       for (let k = 0; breakMonths && k < BREAK_MOVES; k++) moveBreak(breakMonths.first, breakMonths.last);
       posterior.breakMonth = breakMonth;
-      return acceptance;
+      // the step is tuned on full steps alone
+      return isCareful ? WANTED_ACCEPTANCE : acceptance;
     },
   };
 }

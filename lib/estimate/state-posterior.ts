@@ -245,6 +245,9 @@ export function createStatePosterior(
     get evaluations() {
       return evaluations;
     },
+    get steps() {
+      return filter.steps;
+    },
     get breakMonth() {
       return model.hasBreak ? input.breakMonth : null;
     },

@@ -8,10 +8,10 @@ import type { FitReport, ParameterRow, Unknown } from './report';
 
 /** Fewer months than this are a short series (common practice: two years). */
 export const SHORT_SERIES_MONTHS = 24;
-/** A saturation level whose prior variance shrank by less than this share is a guess. */
-export const UNSEEN_SATURATION_BELOW = 0.5;
-/** A coefficient whose 90 % interval spans a larger factor is not identified; its prior's spans a factor of about 14. */
-export const UNIDENTIFIED_FACTOR = 6;
+/** A saturation level whose prior variance shrank by less than this share is a guess: its 90 % interval still spans a factor of five. */
+export const UNSEEN_SATURATION_BELOW = 0.7;
+/** A coefficient whose prior variance shrank by less than this share is not identified. */
+export const UNIDENTIFIED_BELOW = 0.5;
 /** A median further than this from the prior mean, in prior sd, is a conflict. */
 export const CONFLICT_SDS = 2;
 /** Month-to-month correlation of the errors above which the months are fewer than they look. */
@@ -40,10 +40,7 @@ export function listUnknowns(
     if (observed.entry > 0) add('late-launch', firm);
     if (onlyFalls(observed)) add('flat-incumbent', firm, saturation.id);
     else if (saturation.contraction < UNSEEN_SATURATION_BELOW) add('saturation-unseen', firm, saturation.id);
-    if (
-      coefficient.posterior.q95 > UNIDENTIFIED_FACTOR * coefficient.posterior.q05 &&
-      !isClearlyWeak(coefficient)
-    ) {
+    if (coefficient.contraction < UNIDENTIFIED_BELOW && !isClearlyWeak(coefficient)) {
       add('competition-unidentified', firm, coefficient.id);
     }
     const persistence = firm === 1 ? errors.persistenceFocal : errors.persistenceRival;
