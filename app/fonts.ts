@@ -1,7 +1,8 @@
 /**
  * The two bundled typefaces, from the packages that carry them (SIL Open Font License):
  * Literata (optical size and weight axes) for sentences and questions, Public Sans (weight axis) for figures and controls.
- * Latin is preloaded; extended Latin loads only when a page needs a letter from it (unicode ranges as published with the files).
+ * Latin is preloaded and used when it is there in time for the first paint (the browser waits a moment for it), so that no line breaks anew;
+ * extended Latin loads only when a page needs a letter from it (unicode ranges as published with the files).
  */
 import localFont from 'next/font/local';
 
@@ -20,7 +21,7 @@ export const literata = localFont({
   ],
   variable: '--font-literata',
   adjustFontFallback: 'Times New Roman',
-  display: 'swap',
+  display: 'optional',
 });
 
 export const literataExtended = localFont({
@@ -39,7 +40,7 @@ export const literataExtended = localFont({
   variable: '--font-literata-ext',
   preload: false,
   adjustFontFallback: false,
-  display: 'swap',
+  display: 'optional',
   declarations: [
     {
       prop: 'unicode-range',
@@ -59,7 +60,7 @@ export const publicSans = localFont({
   ],
   variable: '--font-public-sans',
   adjustFontFallback: 'Arial',
-  display: 'swap',
+  display: 'optional',
 });
 
 export const publicSansExtended = localFont({
@@ -73,7 +74,7 @@ export const publicSansExtended = localFont({
   variable: '--font-public-sans-ext',
   preload: false,
   adjustFontFallback: false,
-  display: 'swap',
+  display: 'optional',
   declarations: [
     {
       prop: 'unicode-range',

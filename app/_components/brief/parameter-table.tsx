@@ -25,7 +25,7 @@ export function ParameterTable({ parameters }: { parameters: ParameterTableData 
                 {row.label}
               </th>
               <td className={styles.value}>{row.value}</td>
-              <td>{row.interval}</td>
+              <td className={styles.interval}>{row.interval}</td>
               <td>
                 {row.meaning} <span className={styles.learnt}>{row.learnt}</span>
               </td>
