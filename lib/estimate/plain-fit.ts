@@ -12,7 +12,7 @@
  */
 import { classifyOutcome, type Outcome } from '../dynamics/outcome';
 import { type CrowdingForm, fromCrowdingForm } from '../dynamics/system';
-import { fitNonNegativeInSteps, type NonNegativeFit } from '../numeric/non-negative-fit';
+import { fitNonNegative, type NonNegativeFit } from '../numeric/non-negative-fit';
 import type { Termination } from '../numeric/termination';
 import {
   createPlainProblem,
@@ -71,24 +71,13 @@ const SAME_VALUE = 1e-4;
 /** First pass: the value to about 1e-6 of itself, enough to tell which starts go on. */
 const FIRST_PASS = { noise: 'estimated', gradientTolerance: 1e-3, maxIterations: 40 } as const;
 /** Second pass: integration at 1e-10 leaves a rounding of about this in the gradient. */
-const SECOND_PASS = { noise: 'estimated', gradientTolerance: 1e-7, bursts: 0, maxIterations: 120 } as const;
+const SECOND_PASS = { noise: 'estimated', gradientTolerance: 1e-7, bursts: 0 } as const;
 
 /**
  * Fits from several starts and polishes the best.
  * @throws RangeError when times do not rise, a firm has no positive count, or there are fewer counts than parameters
  */
 export function fitPlain(series: PlainSeries, options: Partial<PlainFitOptions> = {}): PlainFit {
-  const steps = fitPlainInSteps(series, options);
-  let step = steps.next();
-  while (!step.done) step = steps.next();
-  return step.value;
-}
-
-/** The same as a generator that yields after every bounded piece of work. */
-export function* fitPlainInSteps(
-  series: PlainSeries,
-  options: Partial<PlainFitOptions> = {},
-): Generator<void, PlainFit> {
   const { errorScale, starts, seed } = { ...DEFAULT_PLAIN_FIT_OPTIONS, ...options };
   const problem = createPlainProblem(series, errorScale);
   if (!(problem.residualCount >= PLAIN_PARAMETER_COUNT)) {
@@ -97,12 +86,11 @@ export function* fitPlainInSteps(
     );
   }
   const isBounded = IDS.map((_, j) => j >= FIRST_CROWDING);
-  const ends: NonNegativeFit[] = [];
-  for (const start of createPlainStarts(series, problem.scales, starts, seed)) {
-    ends.push(yield* fitNonNegativeInSteps(problem, start, isBounded, FIRST_PASS));
-  }
+  const ends = createPlainStarts(series, problem.scales, starts, seed).map((start) =>
+    fitNonNegative(problem, start, isBounded, FIRST_PASS),
+  );
   const first = ends.reduce((a, b) => (b.fit.cost < a.fit.cost ? b : a));
-  const best = yield* fitNonNegativeInSteps(problem, first.theta, isBounded, SECOND_PASS);
+  const best = fitNonNegative(problem, first.theta, isBounded, SECOND_PASS);
   return describe(best, ends, problem);
 }
 
@@ -151,15 +139,14 @@ function readMarket(
   scales: readonly [number, number],
 ): Pick<PlainFit, 'k1' | 'k2' | 'alpha' | 'beta' | 'outcome'> {
   const { r1, r2, b11, b12, b21, b22 } = form;
-  // a rate that has run to 0 knows no saturation level either
-  const isBent1 = r1 > 0 && b11 * scales[0] * MAX_SATURATION_RATIO > r1;
-  const isBent2 = r2 > 0 && b22 * scales[1] * MAX_SATURATION_RATIO > r2;
+  const isBent1 = b11 * scales[0] * MAX_SATURATION_RATIO > r1;
+  const isBent2 = b22 * scales[1] * MAX_SATURATION_RATIO > r2;
   const system = isBent1 && isBent2 ? fromCrowdingForm(form) : null;
   return {
     k1: isBent1 ? r1 / b11 : null,
     k2: isBent2 ? r2 / b22 : null,
-    alpha: isBent2 && r1 > 0 ? (r2 * b12) / (r1 * b22) : null,
-    beta: isBent1 && r2 > 0 ? (r1 * b21) / (r2 * b11) : null,
+    alpha: isBent2 ? (r2 * b12) / (r1 * b22) : null,
+    beta: isBent1 ? (r1 * b21) / (r2 * b11) : null,
     outcome: system ? classifyOutcome(system) : 'notIdentified',
   };
 }
