@@ -2,7 +2,7 @@
 
 /** The two figures of a push: the forecast with and without it, and the difference that it makes. */
 import dynamic from 'next/dynamic';
-import { useMemo, useState } from 'react';
+import { memo, useMemo, useState } from 'react';
 import { useElementSize } from '@/app/_lib/use-element-size';
 import { sentence } from '@/lib/brief/text';
 import type { DifferenceView, PushBrief } from '@/lib/brief/types';
@@ -23,7 +23,8 @@ const VIEWS = [
   { id: 'users', label: 'Users' },
 ] as const;
 
-export function PushFigures({ push }: { push: PushBrief }) {
+/** Drawn anew only for another push brief: while a slider moves, the controls are drawn more often than the figures. */
+export const PushFigures = memo(function PushFigures({ push }: { push: PushBrief }) {
   const [viewId, setViewId] = useState<'users' | 'share'>('share');
   const view = push.difference[viewId];
   return (
@@ -35,7 +36,7 @@ export function PushFigures({ push }: { push: PushBrief }) {
       </div>
     </div>
   );
-}
+});
 
 interface PushFigureProps {
   push: PushBrief;
