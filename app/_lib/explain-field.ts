@@ -1,7 +1,7 @@
 /** Sentences for what is wrong with a form's fields, by field name; one for each. */
 
 import type { FieldProblem } from '@/lib/services/field-problems';
-import { MAX_NAME_LENGTH, MIN_PASSWORD_LENGTH } from '@/lib/services/forms';
+import { MAX_NAME_LENGTH, MIN_PASSWORD_LENGTH } from '@/lib/services/form-limits';
 
 const BY_FIELD: Record<string, Partial<Record<FieldProblem['code'], string>>> = {
   email: { 'wrong-format': 'This is not an e-mail address.' },

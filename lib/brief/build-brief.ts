@@ -1,5 +1,5 @@
 /** The brief of one market from its facts: five questions, read top to bottom. Pure: the same facts give the same brief. */
-import { OUTCOMES } from '../forecast/report';
+import { OUTCOMES } from '../forecast/outcomes';
 import { describeBacktest, warnOfSimpler } from './backtest-words';
 import { writeCautions } from './cautions';
 import type { BriefFacts } from './facts';

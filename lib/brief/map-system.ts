@@ -5,7 +5,8 @@
 import { type Outcome as ClassifiedOutcome, classifyOutcome } from '../dynamics/outcome';
 import type { CompetitionSystem, State } from '../dynamics/system';
 import { decideOutcome } from '../forecast/odds';
-import type { FitReport, Outcome } from '../forecast/report';
+import type { Outcome } from '../forecast/outcomes';
+import type { FitReport } from '../forecast/report';
 
 export type MapOutcome = Outcome | 'boundary';
 

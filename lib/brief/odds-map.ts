@@ -4,7 +4,7 @@
  */
 
 import { decideOutcome } from '../forecast/odds';
-import { OUTCOMES, type Outcome } from '../forecast/report';
+import { OUTCOMES, type Outcome } from '../forecast/outcomes';
 import { logTicks } from './axis-ticks';
 import { captionOddsMap } from './captions';
 import { spellOdds } from './odds-strip';

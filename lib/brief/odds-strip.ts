@@ -2,7 +2,8 @@
  * The odds strip: four outcomes, their odds, the words for them and what they were before the data. Whole percents are shared out by
  * largest remainder, so they add to 100; a chance below 1 % is printed "<1 %" (and may stand for the missing or a surplus percent).
  */
-import { type Odds, OUTCOMES, type Outcome } from '../forecast/report';
+import { OUTCOMES, type Outcome } from '../forecast/outcomes';
+import type { Odds } from '../forecast/report';
 import { labelOutcome, toneOfOutcome } from './outcomes';
 import { wordProbability } from './probability-words';
 import { listWords } from './text';

@@ -1,5 +1,6 @@
 /** The four outcomes: which one is decided, who wins, what each is called and coloured. */
-import { type Odds, OUTCOMES, type Outcome, type Outlook } from '../forecast/report';
+import { OUTCOMES, type Outcome } from '../forecast/outcomes';
+import type { Odds, Outlook } from '../forecast/report';
 import type { Tone } from './types';
 import type { FirmRole, Words } from './words';
 

@@ -1,5 +1,6 @@
 /** What one scenario does, ready to draw beside the brief: sentences, odds before and after, overlay rows, difference rows, a table. */
-import { type Bands, OUTCOMES } from '../forecast/report';
+import { OUTCOMES } from '../forecast/outcomes';
+import type { Bands } from '../forecast/report';
 import type { ScenarioComparison } from '../scenario/comparison';
 import { axisAroundZero, monthTicks } from './axis-ticks';
 import type { BriefFacts } from './facts';

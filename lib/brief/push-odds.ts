@@ -3,7 +3,8 @@
  * of the outlook; the change between them does not suffer from that, since both come from the same draws (a control variate:
  * Owen 2013, Monte Carlo theory, section 8.9). So: odds of the outlook plus the change.
  */
-import { type Odds, OUTCOMES } from '../forecast/report';
+import { OUTCOMES } from '../forecast/outcomes';
+import type { Odds } from '../forecast/report';
 
 /** @returns before: `outlook` as it stands; after: the same plus the change, cut to [0, 1] and summing to 1 */
 export function alignOdds(

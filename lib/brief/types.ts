@@ -4,7 +4,7 @@
  *
  * Numbers for drawing are plain numbers (users, months as year * 12 + month - 1, fractions of 1); strings are for reading.
  */
-import type { Outcome } from '../forecast/report';
+import type { Outcome } from '../forecast/outcomes';
 
 /** Colour token by role. `both`: the two firms stay; `headStart`: the head start decides; `ink`: no firm. */
 export type Tone = 'focal' | 'rival' | 'both' | 'headStart' | 'ink' | 'quiet';

@@ -1,5 +1,6 @@
 /** Parts of the verdict that do not depend on which outcome it names: overtaking, where the share settles, the share at the horizon. */
-import type { Interval, Outcome } from '../forecast/report';
+import type { Outcome } from '../forecast/outcomes';
+import type { Interval } from '../forecast/report';
 import { overtakingSentence } from './milestones';
 import { winnerOf } from './outcomes';
 import { LIKELY_ABOVE, wordProbability } from './probability-words';

@@ -1,7 +1,7 @@
 /** The verdict when no outcome passes "likely": what leads, what is not settled, what can be said all the same. */
 
 import { outcomeOf } from '../forecast/odds';
-import type { Outcome } from '../forecast/report';
+import type { Outcome } from '../forecast/outcomes';
 import { spellOdds } from './odds-strip';
 import {
   chancesOfBeingAlone,

@@ -4,7 +4,7 @@
  */
 
 import { decideOutcome } from '../forecast/odds';
-import type { Outcome } from '../forecast/report';
+import type { Outcome } from '../forecast/outcomes';
 import { spellOdds } from './odds-strip';
 import { labelOutcome, winnerOf } from './outcomes';
 import { LIKELY_ABOVE, likelyVerb, wordProbability } from './probability-words';

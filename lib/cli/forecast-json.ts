@@ -3,10 +3,10 @@
  * Months are "2024-03"; users are plain counts; shares and odds are fractions of 1. Fields may be added; none changes its meaning.
  */
 import { z } from 'zod';
+import { OUTCOMES } from '../forecast/outcomes';
 import {
   bandsSchema,
   type FitReport,
-  OUTCOMES,
   oddsSchema,
   type ParameterRow,
   startRowSchema,

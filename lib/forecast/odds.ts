@@ -2,7 +2,8 @@
  * The odds of the four outcomes: shares of draws in the four quarters of the (alpha, beta) plane, and of the prior.
  */
 import { computePriorCells, type Priors } from '../estimate/priors';
-import { type Odds, OUTCOMES, type Outcome } from './report';
+import { OUTCOMES, type Outcome } from './outcomes';
+import type { Odds } from './report';
 
 /** An outcome is called decided when its odds pass this ("likely" on the IPCC scale); below it the data do not decide yet. */
 export const DECIDED_ABOVE = 0.66;

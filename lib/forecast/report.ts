@@ -3,9 +3,7 @@
  * Firm 1 is the focal firm, firm 2 the rival. Months are integers (year * 12 + month - 1); users are plain counts.
  */
 import { z } from 'zod';
-
-export const OUTCOMES = ['coexistence', 'exclusionByFocal', 'exclusionByRival', 'headStartDecides'] as const;
-export type Outcome = (typeof OUTCOMES)[number];
+import { OUTCOMES } from './outcomes';
 
 const probability = z.number().min(0).max(1);
 const row = z.array(z.number());

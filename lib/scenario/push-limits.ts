@@ -1,11 +1,11 @@
 /**
  * Ranges and first values of the controls of a push, by kind and by the market's size. The numbers are starting points for an analyst,
- * chosen to be plausible and easy to move, not findings; `push-schema.ts` holds the outer limits of what is accepted.
+ * chosen to be plausible and easy to move, not findings; `push-bounds.ts` holds the outer limits of what is accepted.
  */
 
 import type { Push, PushKind } from '../dynamics/push';
 import type { Firm } from '../dynamics/system';
-import { MAX_CARRY_OVER_HALF_LIFE, MAX_PUSH_MONTHS } from './push-schema';
+import { MAX_CARRY_OVER_HALF_LIFE, MAX_PUSH_MONTHS } from './push-bounds';
 
 export interface Range {
   min: number;

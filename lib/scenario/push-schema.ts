@@ -4,19 +4,14 @@
  */
 import { z } from 'zod';
 import type { Push } from '../dynamics/push';
-
-export const PUSH_KINDS = ['recruits', 'growth-lift', 'pull', 'room'] as const;
-
-/** Furthest month that a push may reach: ten years. */
-export const MAX_PUSH_MONTHS = 120;
-/** Largest relative push: six times as strong. */
-export const MAX_RELATIVE_SIZE = 5;
-/** Largest recruits per month: more than people live. */
-export const MAX_RECRUITS_PER_MONTH = 1e10;
-/** Longest carry-over half-life, months. */
-export const MAX_CARRY_OVER_HALF_LIFE = 24;
-/** Most pushes in one scenario. */
-export const MAX_PUSHES = 12;
+import {
+  MAX_CARRY_OVER_HALF_LIFE,
+  MAX_PUSH_MONTHS,
+  MAX_PUSHES,
+  MAX_RECRUITS_PER_MONTH,
+  MAX_RELATIVE_SIZE,
+  PUSH_KINDS,
+} from './push-bounds';
 
 const months = z.number().min(0).max(MAX_PUSH_MONTHS);
 

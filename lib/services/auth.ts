@@ -9,7 +9,7 @@ import { betterAuth } from 'better-auth/minimal';
 import { getPrisma } from '../store/client';
 import { readAuthSecret } from './auth-secret';
 import { getSettings } from './env';
-import { MAX_PASSWORD_LENGTH, MIN_PASSWORD_LENGTH } from './forms';
+import { MAX_PASSWORD_LENGTH, MIN_PASSWORD_LENGTH } from './form-limits';
 
 /** A session ends this long after sign-in, used or not: a page of a server component cannot prolong its cookie. */
 const SESSION_SECONDS = 30 * 24 * 60 * 60;

@@ -5,12 +5,8 @@
 import { z } from 'zod';
 import { pushesSchema } from '../scenario/push-schema';
 import type { SeriesMapping } from '../series/types';
+import { MAX_NAME_LENGTH, MAX_NOTE_LENGTH, MAX_PASSWORD_LENGTH, MIN_PASSWORD_LENGTH } from './form-limits';
 
-export const MIN_PASSWORD_LENGTH = 10;
-/** Longer ones only cost hashing time. */
-export const MAX_PASSWORD_LENGTH = 128;
-export const MAX_NAME_LENGTH = 80;
-export const MAX_NOTE_LENGTH = 500;
 /** RFC 5321: 254 characters fit in a mail path. */
 const MAX_EMAIL_LENGTH = 254;
 /** Characters; some 100,000 rows, where a century of months is 1,200. */

@@ -1,6 +1,7 @@
 /** The markets of the workspace, each with how its newest outlook reads and how its newest fit is doing. */
 import type { FitProgress } from '../estimate/types';
-import type { Odds, Outcome } from '../forecast/report';
+import type { Outcome } from '../forecast/outcomes';
+import type { Odds } from '../forecast/report';
 import type { Month } from '../series/types';
 import type { FitState } from '../store/fits';
 import { listMarkets as listStoredMarkets, type MarketListRow } from '../store/markets';

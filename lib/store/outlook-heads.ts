@@ -1,7 +1,8 @@
 /** The few numbers of each market's newest outlook that a list shows, without reading whole results. */
 import { z } from 'zod';
 import type { FitOptions } from '../estimate/types';
-import { type Odds, OUTCOMES, type Outcome, oddsSchema } from '../forecast/report';
+import { OUTCOMES, type Outcome } from '../forecast/outcomes';
+import { type Odds, oddsSchema } from '../forecast/report';
 import { getPrisma } from './client';
 import { fitOptionsSchema, readJson } from './json-columns';
 

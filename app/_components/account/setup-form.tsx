@@ -2,7 +2,7 @@
 
 import { useActionState } from 'react';
 import { acceptSetupLinkAction, type SetupState } from '@/app/_actions/accept-setup-link';
-import { MIN_PASSWORD_LENGTH } from '@/lib/services/forms';
+import { MIN_PASSWORD_LENGTH } from '@/lib/services/form-limits';
 import { Button } from '../controls/button';
 import { ProblemNote } from '../controls/problem-note';
 import { TextField } from '../controls/text-field';

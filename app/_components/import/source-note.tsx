@@ -2,7 +2,7 @@
 
 /** Where the rival's figures come from, in the analyst's words, beside what the law asks of them. */
 import { useId } from 'react';
-import { MAX_NOTE_LENGTH } from '@/lib/services/forms';
+import { MAX_NOTE_LENGTH } from '@/lib/services/form-limits';
 import styles from './source-note.module.css';
 
 export function SourceNote({ value, onChange }: { value: string; onChange: (note: string) => void }) {

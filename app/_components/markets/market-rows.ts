@@ -6,7 +6,8 @@ import { labelOutcome, rankOutcomes, toneOfOutcome } from '@/lib/brief/outcomes'
 import { wordProbability } from '@/lib/brief/probability-words';
 import { capitalise } from '@/lib/brief/text';
 import type { Tone } from '@/lib/brief/types';
-import { type Odds, OUTCOMES, type Outcome } from '@/lib/forecast/report';
+import { OUTCOMES, type Outcome } from '@/lib/forecast/outcomes';
+import type { Odds } from '@/lib/forecast/report';
 import type { MarketSummary } from '@/lib/services/list-markets';
 
 export interface StripPart {

@@ -10,7 +10,7 @@ import type { DrawSet } from '../../estimate/types';
 import { quantiles } from '../../numeric/quantile';
 import { readDrawTable } from '../draw-table';
 import { DECIDED_ABOVE } from '../odds';
-import { OUTCOMES } from '../report';
+import { OUTCOMES } from '../outcomes';
 import { simulateLevels, simulateObservations } from '../simulate';
 import { createFutureLikelihood } from './future-likelihood';
 import { createReweighter, MIN_EFFECTIVE, type ReweightedOdds } from './reweighted-odds';

@@ -3,7 +3,7 @@
  * where it could not be computed. Users are plain counts, rates are per month, intervals of profiles are at 95 %.
  */
 import { z } from 'zod';
-import { OUTCOMES } from '../report';
+import { OUTCOMES } from '../outcomes';
 
 const probability = z.number().min(0).max(1);
 const outcome = z.enum(OUTCOMES);

@@ -16,7 +16,7 @@ import type { DrawSet } from '../../estimate/types';
 import { quantiles } from '../../numeric/quantile';
 import { type DrawTable, fillTheta, readDrawTable } from '../draw-table';
 import { computeOdds, outcomeOf } from '../odds';
-import { OUTCOMES } from '../report';
+import { OUTCOMES } from '../outcomes';
 import type { Sensitivity, SensitivityRow } from './report';
 
 export const SENSITIVITY_PARAMETERS = ['r1', 'r2', 'k1', 'k2', 'alpha', 'beta'] as const;

@@ -5,7 +5,7 @@ import { describeIdentifiability } from '@/lib/brief/identifiability-words';
 import { plainText } from '@/lib/brief/text';
 import { createWords } from '@/lib/brief/words';
 import { EFFECTS, type IdentifiabilityReport } from '@/lib/forecast/identifiability/report';
-import { OUTCOMES } from '@/lib/forecast/report';
+import { OUTCOMES } from '@/lib/forecast/outcomes';
 import { factsOf, factsWith, oddsOf } from './brief-cases';
 import { sampleIdentifiability as report, signPattern } from './sample-identifiability';
 

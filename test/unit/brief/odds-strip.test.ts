@@ -2,7 +2,7 @@ import fc from 'fast-check';
 import { describe, expect, it } from 'vitest';
 import { buildOddsStrip, sharePercents, spellOdds } from '@/lib/brief/odds-strip';
 import { createWords } from '@/lib/brief/words';
-import { OUTCOMES } from '@/lib/forecast/report';
+import { OUTCOMES } from '@/lib/forecast/outcomes';
 import { factsOf, factsWith, oddsOf, spaced } from './brief-cases';
 
 const weights = fc

@@ -6,15 +6,8 @@
 
 import type { BriefFacts } from '@/lib/brief/facts';
 import type { DrawSet } from '@/lib/estimate/types';
-import {
-  type Bands,
-  type FitReport,
-  type Interval,
-  type Odds,
-  OUTCOMES,
-  type Outcome,
-  type SeriesBands,
-} from '@/lib/forecast/report';
+import { OUTCOMES, type Outcome } from '@/lib/forecast/outcomes';
+import type { Bands, FitReport, Interval, Odds, SeriesBands } from '@/lib/forecast/report';
 import type { MonthlySeries } from '@/lib/series/types';
 
 export interface SampleOptions {

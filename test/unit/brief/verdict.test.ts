@@ -6,7 +6,8 @@ import { plainText } from '@/lib/brief/text';
 import { writeVerdict } from '@/lib/brief/verdict';
 import { createWords } from '@/lib/brief/words';
 import { DECIDED_ABOVE } from '@/lib/forecast/odds';
-import { type Odds, OUTCOMES } from '@/lib/forecast/report';
+import { OUTCOMES } from '@/lib/forecast/outcomes';
+import type { Odds } from '@/lib/forecast/report';
 import { briefWith, factsOf, factsWith, headlineOf, oddsOf, proseOf, spaced, supportOf } from './brief-cases';
 import { SAMPLES, type SampleName } from './sample-report';
 

@@ -2,8 +2,9 @@ import fc from 'fast-check';
 import { describe, expect, it } from 'vitest';
 import { DEFAULT_FIT_OPTIONS } from '@/lib/estimate/defaults';
 import type { FitOptions } from '@/lib/estimate/types';
+import { OUTCOMES } from '@/lib/forecast/outcomes';
 import { createOutlookRun } from '@/lib/forecast/outlook-run';
-import { type FitReport, fitReportSchema, OUTCOMES } from '@/lib/forecast/report';
+import { type FitReport, fitReportSchema } from '@/lib/forecast/report';
 import type { MonthlySeries } from '@/lib/series/types';
 import {
   COEXISTING,

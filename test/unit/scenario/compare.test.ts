@@ -2,7 +2,7 @@ import fc from 'fast-check';
 import { describe, expect, it } from 'vitest';
 import type { Push, PushKind } from '@/lib/dynamics/push';
 import { outcomeOf } from '@/lib/forecast/odds';
-import { OUTCOMES } from '@/lib/forecast/report';
+import { OUTCOMES } from '@/lib/forecast/outcomes';
 import { compareScenario } from '@/lib/scenario/compare';
 import { type ScenarioComparison, scenarioComparisonSchema } from '@/lib/scenario/comparison';
 import { prepareScenario } from '@/lib/scenario/prepare-scenario';

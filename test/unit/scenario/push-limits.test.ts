@@ -1,7 +1,8 @@
 import fc from 'fast-check';
 import { describe, expect, it } from 'vitest';
+import { PUSH_KINDS } from '@/lib/scenario/push-bounds';
 import { firstPush, limitsForPush } from '@/lib/scenario/push-limits';
-import { PUSH_KINDS, pushesSchema, pushSchema } from '@/lib/scenario/push-schema';
+import { pushesSchema, pushSchema } from '@/lib/scenario/push-schema';
 import { pushOf } from './draw-cases';
 
 const scale = { focalUsers: 320_000, rivalUsers: 180_000, horizonMonths: 24 };
