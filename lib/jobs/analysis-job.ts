@@ -7,7 +7,7 @@ import { analysisWork, type ClaimedAnalysis, claimAnalysis, finishAnalysis } fro
 import type { WorkItem } from '../store/claimed-work';
 import type { FitJob } from '../store/fit-work';
 import { readDoneFit, readDraws } from '../store/fits';
-import { readRevision } from '../store/revisions';
+import { readRevision, seriesForFit } from '../store/revisions';
 import type { AnalysisRuns } from './analysis-runs';
 import { driveRun, type JobEnd, type JobTools } from './drive-run';
 
@@ -46,7 +46,7 @@ async function readInput(claim: ClaimedAnalysis): Promise<AnalysisInput | null> 
     readDraws(claim),
   ]);
   if (!revision || !fit || !draws) return null;
-  return { series: revision.series, options: fit.options, report: fit.report, draws };
+  return { series: seriesForFit(revision), options: fit.options, report: fit.report, draws };
 }
 
 /** Has everything made that follows a fit that ended well. @returns what a worker must be sent for */

@@ -13,7 +13,7 @@ import {
   releaseFit,
   saveProgress,
 } from '../store/fit-work';
-import { readRevision } from '../store/revisions';
+import { readRevision, seriesForFit } from '../store/revisions';
 import { driveRun, type JobEnd, type JobTools } from './drive-run';
 import type { FailureCode } from './failure';
 
@@ -32,7 +32,7 @@ export async function runFitJob(job: FitJob, tools: FitJobTools): Promise<JobEnd
   return driveRun<OutlookStep>(
     {
       id: claim.fitId,
-      createRun: () => tools.createRun({ series: revision.series, options: claim.options }),
+      createRun: () => tools.createRun({ series: seriesForFit(revision), options: claim.options }),
       readEnd: (end) => {
         if ('failure' in end) return { failure: end.failure satisfies FailureCode };
         const report = fitReportSchema.parse(end.report);

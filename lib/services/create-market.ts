@@ -14,17 +14,27 @@ export async function createMarket(
 ): Promise<Success<{ marketId: string; fitId: string }> | NotAllowed | InvalidInput | UnreadableSeries> {
   const parsed = parseWrite(viewer, marketFormSchema, form);
   if (!parsed.ok) return parsed;
-  const series = readFormSeries(parsed.value);
-  if (!series.ok) return series;
-  const { workspaceId, userId } = viewer;
-  const { text: _text, mapping: _mapping, fileName, sourceNote, ...market } = parsed.value;
+  const content = readFormSeries(parsed.value, parsed.value);
+  if (!content.ok) return content;
+  const { workspaceId, userId, userName } = viewer;
+  const {
+    canonicalText: _text,
+    exclusions: _exclusions,
+    fileName,
+    fileHash,
+    readingNotes,
+    sourceNote,
+    note,
+    ...market
+  } = parsed.value;
+  const source = { fileName, fileHash, readingNotes, sourceNote, note };
   const fit = newFit(viewer, market);
   const { marketId } = await storeMarket({
     workspaceId,
     market,
-    revision: { series: series.value, fileName, sourceNote, createdById: userId },
+    revision: { ...content.value, ...source, createdById: userId, createdByName: userName },
     fit,
-    audit: { userId, action: 'create-market', detail: { months: series.value.focal.length } },
+    audit: { userId, action: 'create-market', detail: { months: content.value.series.focal.length } },
   });
   await enqueueFit({ fitId: fit.id, workspaceId });
   return succeed({ marketId, fitId: fit.id });

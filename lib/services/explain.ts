@@ -27,13 +27,18 @@ const EXPLANATIONS = {
   },
   'unreadable-series': {
     what: 'The counts were not stored.',
-    why: 'Some rows cannot be read without guessing.',
-    tryThis: 'Correct the listed rows and upload the table again.',
+    why: 'What was sent is no series that can be fitted: at least twelve months in a row of two firms, none left out.',
+    tryThis: 'Look at what is listed, correct it, and send the counts again.',
   },
   'same-series': {
     what: 'Nothing was stored.',
     why: 'These counts are the same as in the current revision.',
-    tryThis: 'Upload a table with new or corrected months.',
+    tryThis: 'Bring a table with new or corrected months.',
+  },
+  'newer-revision': {
+    what: 'Nothing was stored yet: somebody else stored a revision meanwhile.',
+    why: 'Your counts were made from an older one. They are still here, compared with the newest.',
+    tryThis: 'Look at the difference, then store your counts on top, or bring both together.',
   },
   'nothing-running': {
     what: 'There is nothing to cancel.',

@@ -4,23 +4,42 @@
  */
 import { z } from 'zod';
 import { pushesSchema } from '../scenario/push-schema';
-import type { SeriesMapping } from '../series/types';
-import { MAX_NAME_LENGTH, MAX_NOTE_LENGTH, MAX_PASSWORD_LENGTH, MIN_PASSWORD_LENGTH } from './form-limits';
+import { MAX_CANONICAL_LENGTH } from '../series/canonical-text';
+import { cleanName } from '../series/clean-name';
+import { MAX_SERIES_MONTHS, MAX_YEAR, MIN_YEAR } from '../series/limits';
+import { makeMonth } from '../series/month';
+import { cleanNote } from './clean-note';
+import {
+  MAX_EVENT_LENGTH,
+  MAX_NAME_LENGTH,
+  MAX_NOTE_LENGTH,
+  MAX_PASSWORD_LENGTH,
+  MAX_REASON_LENGTH,
+  MIN_PASSWORD_LENGTH,
+} from './form-limits';
 
 /** RFC 5321: 254 characters fit in a mail path. */
 const MAX_EMAIL_LENGTH = 254;
-/** Characters; some 100,000 rows, where a century of months is 1,200. */
-const MAX_TABLE_LENGTH = 4_000_000;
 const MAX_FILE_NAME_LENGTH = 255;
+const SHA_256 = /^[0-9a-f]{64}$/;
+/** Sentences about how a file was read. */
+const MAX_READING_NOTES = 40;
+const MAX_READING_NOTE_LENGTH = 300;
 /** Measurement error of a firm's counts, sd of ln users: 1 is "anything from a third to three times". */
 const MAX_MEASUREMENT_ERROR = 1;
 /** Ten years: a link that should outlive that has no expiry. */
 const MAX_LINK_DAYS = 3653;
 
-const name = z.string().trim().min(1).max(MAX_NAME_LENGTH);
+const name = z.string().trim().max(MAX_NAME_LENGTH).transform(cleanName).pipe(z.string().min(1));
+const line = (longest: number) => z.string().trim().max(longest).transform(cleanName).pipe(z.string().min(1));
+const note = z
+  .string()
+  .max(MAX_NOTE_LENGTH)
+  .transform((text) => cleanNote(text) || null)
+  .nullable();
+const month = z.int().min(makeMonth(MIN_YEAR, 1)).max(makeMonth(MAX_YEAR, 12));
 const email = z.string().trim().toLowerCase().max(MAX_EMAIL_LENGTH).pipe(z.email());
 const measurementError = z.number().min(0).max(MAX_MEASUREMENT_ERROR);
-const columnHeader = z.string().min(1);
 
 export const signInFormSchema = z.object({ email, password: z.string().min(1).max(MAX_PASSWORD_LENGTH) });
 export type SignInForm = z.infer<typeof signInFormSchema>;
@@ -35,20 +54,45 @@ export type SetupForm = z.infer<typeof setupFormSchema>;
 export const memberLinkFormSchema = z.object({ role: z.enum(['analyst', 'reader']) });
 export type MemberLinkForm = z.infer<typeof memberLinkFormSchema>;
 
-export const revisionFormSchema = z.object({
-  fileName: z.string().trim().max(MAX_FILE_NAME_LENGTH).nullable(),
-  text: z.string().max(MAX_TABLE_LENGTH),
-  /** Headers of the columns to read, and how to read a table that could be read two ways. */
-  mapping: z.object({
-    month: columnHeader,
-    focal: columnHeader,
-    rival: columnHeader,
-    decimalMark: z.enum(['point', 'comma']).optional(),
-    dateOrder: z.enum(['day-first', 'month-first']).optional(),
-  }) satisfies z.ZodType<SeriesMapping>,
-  sourceNote: z.string().trim().max(MAX_NOTE_LENGTH).nullable(),
+/** A series as it was understood, and how it came about. The service reads `canonicalText` again, strictly. */
+const contentFields = z.object({
+  canonicalText: z.string().max(MAX_CANONICAL_LENGTH),
+  /** Months that the fit leaves out. */
+  exclusions: z.array(z.object({ month, reason: line(MAX_REASON_LENGTH) })).max(MAX_SERIES_MONTHS),
+  fileName: z
+    .string()
+    .max(MAX_FILE_NAME_LENGTH)
+    .transform((text) => cleanNote(text) || null)
+    .nullable(),
+  /** Of the file's bytes as they were given. */
+  fileHash: z.string().regex(SHA_256).nullable(),
+  readingNotes: z.array(z.string().max(MAX_READING_NOTE_LENGTH).transform(cleanNote)).max(MAX_READING_NOTES),
+  /** Where the rival's figures come from. */
+  sourceNote: note,
+  /** Why there is this revision. */
+  note,
 });
-export type RevisionForm = z.infer<typeof revisionFormSchema>;
+
+export const revisionFormSchema = contentFields.extend({
+  /** Number of the revision that the change was made from. */
+  basedOn: z.int().min(1),
+});
+export type RevisionForm = z.input<typeof revisionFormSchema>;
+
+export const restoreFormSchema = z.object({
+  /** The revision to bring back. */
+  number: z.int().min(1),
+  basedOn: z.int().min(1),
+});
+export type RestoreForm = z.infer<typeof restoreFormSchema>;
+
+export const eventFormSchema = z.object({
+  month,
+  note: line(MAX_EVENT_LENGTH),
+  /** The firms may behave otherwise from this month on. */
+  changesParameters: z.boolean(),
+});
+export type EventForm = z.input<typeof eventFormSchema>;
 
 const marketFields = z.object({
   name,
@@ -60,11 +104,11 @@ const marketFields = z.object({
   rivalError: measurementError,
 });
 
-export const marketFormSchema = marketFields.extend(revisionFormSchema.shape);
-export type MarketForm = z.infer<typeof marketFormSchema>;
+export const marketFormSchema = marketFields.extend(contentFields.shape);
+export type MarketForm = z.input<typeof marketFormSchema>;
 
 export const marketEditSchema = marketFields.partial();
-export type MarketEdit = z.infer<typeof marketEditSchema>;
+export type MarketEdit = z.input<typeof marketEditSchema>;
 
 export const scenarioFormSchema = z.object({
   /** An existing scenario to change; absent: a new one. */

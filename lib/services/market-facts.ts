@@ -2,7 +2,7 @@
 import type { BriefFacts } from '../brief/facts';
 import type { DoneFit } from '../store/fits';
 import type { Market } from '../store/markets';
-import type { Revision } from '../store/revisions';
+import { type Revision, seriesForFit } from '../store/revisions';
 
 /** @param revision the one that the fit was made from, which need not be the newest */
 export function toBriefFacts(
@@ -12,11 +12,11 @@ export function toBriefFacts(
   analyses: Pick<BriefFacts, 'backtest' | 'identifiability'>,
 ): BriefFacts {
   const { name, unit, focalName, rivalName } = market;
-  const { number, createdAt, fileName, series } = revision;
+  const { number, createdAt, fileName } = revision;
   return {
     market: { name, unit, focalName, rivalName, measurementError: fit.options.measurementFloor },
     revision: { number, createdAt: createdAt.toISOString(), fileName },
-    series,
+    series: seriesForFit(revision),
     report: fit.report,
     ...analyses,
   };

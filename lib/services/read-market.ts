@@ -1,7 +1,9 @@
 /** Everything that the page of one market shows. */
 import type { BriefFacts } from '../brief/facts';
 import type { FitProgress } from '../estimate/types';
+import type { Exclusion } from '../series/exclusions';
 import type { MonthlySeries } from '../series/types';
+import { listEvents, type MarketEvent } from '../store/events';
 import { type DoneFit, type FitState, type FitView, latestDoneFit, latestFit } from '../store/fits';
 import { type IssuedForecastSummary, listIssuedForecasts } from '../store/issued-forecasts';
 import { type Market, readMarket as readStoredMarket } from '../store/markets';
@@ -21,6 +23,10 @@ export interface MarketPage {
   /** The newest one, with its counts in `series`. */
   revision: RevisionSummary;
   series: MonthlySeries;
+  /** Months of it that the fit leaves out. */
+  exclusions: readonly Exclusion[];
+  /** In order of their months. */
+  events: MarketEvent[];
   /** The newest fit, in whatever state; null: never fitted. */
   fit: FitStanding | null;
   /** The newest fit that ended well: what `facts` tell of and draws are read from. */
@@ -46,16 +52,17 @@ interface FitStanding {
 
 export async function readMarket(viewer: Viewer, marketId: string): Promise<Success<MarketPage> | NotFound> {
   const scope = { workspaceId: viewer.workspaceId, marketId };
-  const [market, newest, fit, done, issued, scenarios] = await Promise.all([
+  const [market, newest, fit, done, issued, scenarios, events] = await Promise.all([
     readStoredMarket(scope),
     latestRevision(scope),
     latestFit(scope),
     latestDoneFit(scope),
     listIssuedForecasts(scope),
     listScenarios(scope),
+    listEvents(scope),
   ]);
   if (!market || !newest) return refuse('not-found');
-  const { series, ...revision } = newest;
+  const { series, exclusions, ...revision } = newest;
   const analyses = done && (await readOutlookAnalyses(viewer, done.revisionId));
   const facts = done && analyses && (await readFacts(viewer, market, newest, done, analyses));
   const outlook = done && { fitId: done.id, staleReasons: listReasons(done, market, newest) };
@@ -64,6 +71,8 @@ export async function readMarket(viewer: Viewer, marketId: string): Promise<Succ
     market,
     revision,
     series,
+    exclusions,
+    events,
     fit: fit && toStanding(fit, isStale),
     outlook,
     facts,

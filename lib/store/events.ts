@@ -1,4 +1,5 @@
 /** Events: dated notes on a market. */
+import { type Deed, insertAuditEntry } from './audit';
 import { getPrisma } from './client';
 import { createId } from './ids';
 
@@ -12,16 +13,13 @@ export interface MarketEvent {
   createdAt: Date;
 }
 
+export type EventContent = Pick<MarketEvent, 'month' | 'note' | 'changesParameters'>;
+
 /** @returns null when the workspace has no such market */
-export async function addEvent(args: {
-  workspaceId: string;
-  marketId: string;
-  id?: string;
-  month: number;
-  note: string;
-  changesParameters: boolean;
-}): Promise<{ eventId: string } | null> {
-  const { workspaceId, marketId, id = createId(), month, note, changesParameters } = args;
+export async function addEvent(
+  args: { workspaceId: string; marketId: string; id?: string; audit?: Deed } & EventContent,
+): Promise<{ eventId: string } | null> {
+  const { workspaceId, marketId, id = createId(), month, note, changesParameters, audit } = args;
   return getPrisma().$transaction(async (db) => {
     const found = await db.market.count({ where: { id: marketId, workspaceId } });
     if (found !== 1) return null;
@@ -29,6 +27,7 @@ export async function addEvent(args: {
       data: { id, workspaceId, marketId, month, note, changesParameters },
       select: { id: true },
     });
+    if (audit) await insertAuditEntry(db, workspaceId, { ...audit, subjectType: 'event', subjectId: id });
     return { eventId: id };
   });
 }
@@ -42,10 +41,34 @@ export async function listEvents(args: { workspaceId: string; marketId: string }
   });
 }
 
-/** @returns false when the workspace has no such event */
-export async function removeEvent(args: { workspaceId: string; eventId: string }): Promise<boolean> {
-  const { count } = await getPrisma().event.deleteMany({
-    where: { id: args.eventId, workspaceId: args.workspaceId },
+/** @returns false when the market has no such event */
+export async function changeEvent(
+  args: { workspaceId: string; marketId: string; eventId: string; audit?: Deed } & EventContent,
+): Promise<boolean> {
+  const { workspaceId, marketId, eventId, month, note, changesParameters, audit } = args;
+  return getPrisma().$transaction(async (db) => {
+    const { count } = await db.event.updateMany({
+      where: { id: eventId, marketId, workspaceId },
+      data: { month, note, changesParameters },
+    });
+    if (count === 1 && audit)
+      await insertAuditEntry(db, workspaceId, { ...audit, subjectType: 'event', subjectId: eventId });
+    return count === 1;
   });
-  return count === 1;
+}
+
+/** @returns false when the market has no such event */
+export async function removeEvent(args: {
+  workspaceId: string;
+  marketId: string;
+  eventId: string;
+  audit?: Deed;
+}): Promise<boolean> {
+  const { workspaceId, marketId, eventId, audit } = args;
+  return getPrisma().$transaction(async (db) => {
+    const { count } = await db.event.deleteMany({ where: { id: eventId, marketId, workspaceId } });
+    if (count === 1 && audit)
+      await insertAuditEntry(db, workspaceId, { ...audit, subjectType: 'event', subjectId: eventId });
+    return count === 1;
+  });
 }

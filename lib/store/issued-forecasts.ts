@@ -21,6 +21,8 @@ export interface IssuedForecastSummary {
   issuedAt: Date;
   issuedByName: string;
   formatVersion: number;
+  /** Of the counts that it was made from. */
+  revisionNumber: number;
   /** Newest first, revoked ones included. */
   links: ForecastLink[];
 }
@@ -76,7 +78,7 @@ export async function listIssuedForecasts(args: {
   workspaceId: string;
   marketId: string;
 }): Promise<IssuedForecastSummary[]> {
-  return getPrisma().issuedForecast.findMany({
+  const rows = await getPrisma().issuedForecast.findMany({
     where: { marketId: args.marketId, workspaceId: args.workspaceId },
     orderBy: [{ issuedAt: 'desc' }, { id: 'asc' }],
     select: {
@@ -85,7 +87,9 @@ export async function listIssuedForecasts(args: {
       issuedAt: true,
       issuedByName: true,
       formatVersion: true,
+      fit: { select: { revision: { select: { number: true } } } },
       links: { orderBy: [{ createdAt: 'desc' }, { id: 'asc' }], select: FORECAST_LINK_COLUMNS },
     },
   });
+  return rows.map(({ fit, ...row }) => ({ ...row, revisionNumber: fit.revision.number }));
 }

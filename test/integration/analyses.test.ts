@@ -23,7 +23,7 @@ import { describeOnDatabases } from './database';
 import { FAKE_BACKTEST, type FakeAnalysisOptions, fakeAnalyses } from './fake-analysis';
 import { createFakeRun } from './fake-run';
 import { asMember, makeViewer } from './people';
-import { marketForm, SAMPLE_SERIES, toCsv, uploadMarket } from './sample-market';
+import { revisionForm, SAMPLE_SERIES, uploadMarket } from './sample-market';
 
 type FakeEnd = ReturnType<NonNullable<FakeAnalysisOptions['end']>>;
 
@@ -118,14 +118,7 @@ describeOnDatabases('analyses', () => {
   it('of an older revision are cancelled by new counts', async () => {
     await fitAndAsk();
     const focal = SAMPLE_SERIES.focal.map((count) => count && count + 1);
-    const { mapping } = marketForm();
-    const text = toCsv({ ...SAMPLE_SERIES, focal });
-    const added = await addRevision(viewer, marketId, {
-      fileName: 'new.csv',
-      text,
-      mapping,
-      sourceNote: null,
-    });
+    const added = await addRevision(viewer, marketId, revisionForm({ ...SAMPLE_SERIES, focal }));
     expect(added).toMatchObject({ ok: true });
     expect(await readRows()).toMatchObject([{ state: 'cancelled' }]);
   });

@@ -40,7 +40,7 @@ describe('schema and migrations', () => {
   });
 
   it('would be seen to differ: leaving out the last migration is a difference', async () => {
-    expect(await findSchemaDifference(withoutLast(1))).toContain('CREATE');
+    expect(await findSchemaDifference(withoutLast(1))).toMatch(/CREATE|ALTER/);
   });
 
   it('would be seen to differ: a changed delete rule and a new column are a difference', async () => {
@@ -97,7 +97,8 @@ function defineMigrationTests(kind: DatabaseKind): void {
     const end = await applyMigrations(database.url);
     expect(end).toMatchObject({ code: 'migrated', applied: [expect.any(String)] });
     const after = await readEverything(ask);
-    for (const [table, rows] of Object.entries(before)) expect(after[table], table).toEqual(rows);
+    // A later migration may add columns; what was there stays.
+    for (const [table, rows] of Object.entries(before)) expect(after[table], table).toMatchObject(rows);
   });
 
   it('stop whole at a broken script, name it, and go on once it is taken back', async () => {

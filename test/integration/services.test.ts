@@ -5,6 +5,7 @@ import { issuedForecastSchema } from '@/lib/issue/format';
 import { runFitJob } from '@/lib/jobs/fit-job';
 import { getLogger } from '@/lib/jobs/log';
 import { closeSender } from '@/lib/jobs/sender';
+import { toCanonicalText } from '@/lib/series/canonical-text';
 import { addRevision } from '@/lib/services/add-revision';
 import { cancelFit } from '@/lib/services/cancel-fit';
 import { TRY_LIMITS } from '@/lib/services/count-tries';
@@ -27,7 +28,7 @@ import { getPrisma } from '@/lib/store/client';
 import { describeOnDatabases } from './database';
 import { createFakeRun, sampleResult } from './fake-run';
 import { asMember, makeViewer, visitorHeaders } from './people';
-import { marketForm, SAMPLE_SERIES, toCsv, uploadMarket } from './sample-market';
+import { marketForm, revisionForm, SAMPLE_SERIES, uploadMarket } from './sample-market';
 
 const PUSH: Push = {
   firm: 2,
@@ -87,10 +88,7 @@ describeOnDatabases('services', () => {
     focal: [...SAMPLE_SERIES.focal, 400_000],
     rival: [...SAMPLE_SERIES.rival, 250_000],
   });
-  const revision = (series = longer()) => {
-    const { fileName, mapping, sourceNote } = marketForm();
-    return { fileName, mapping, sourceNote, text: toCsv(series) };
-  };
+  const revision = (series = longer()) => revisionForm(series);
 
   it('an upload is stored as revision 1 and fitted with the measurement errors of the market', async () => {
     const page = await readPage();
@@ -105,12 +103,12 @@ describeOnDatabases('services', () => {
   });
 
   it('a table that cannot be fitted is refused with its problems, and nothing is stored', async () => {
-    const text = toCsv({
+    const canonicalText = toCanonicalText({
       ...SAMPLE_SERIES,
       focal: SAMPLE_SERIES.focal.slice(0, 5),
       rival: SAMPLE_SERIES.rival.slice(0, 5),
     });
-    const outcome = await createMarket(viewer, marketForm({ text }));
+    const outcome = await createMarket(viewer, marketForm({ canonicalText }));
     expect(outcome).toMatchObject({ ok: false, code: 'unreadable-series' });
     expect(!outcome.ok && 'problems' in outcome && outcome.problems.map((problem) => problem.code)).toContain(
       'too-short-to-fit',

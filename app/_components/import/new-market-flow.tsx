@@ -4,6 +4,7 @@
 import { useState, useTransition } from 'react';
 import { createMarketAction } from '@/app/_actions/create-market';
 import type { FieldSentences } from '@/app/_lib/explain-field';
+import { toCanonicalText } from '@/lib/series/canonical-text';
 import { Button } from '../controls/button';
 import { type Explanation, ProblemNote } from '../controls/problem-note';
 import { Question } from '../frame/question';
@@ -28,7 +29,8 @@ export function NewMarketFlow() {
   const rivalName = details.rivalName ?? series?.rivalName ?? '';
 
   function store() {
-    if (!mapping) return;
+    if (!series?.series) return;
+    const canonicalText = toCanonicalText(series.series);
     startTransition(async () => {
       const refusal = await createMarketAction({
         name: details.name,
@@ -38,9 +40,12 @@ export function NewMarketFlow() {
         focalError: Number(details.focalError),
         rivalError: Number(details.rivalError),
         fileName: reading.source.fileName,
-        text: reading.source.text,
-        mapping,
-        sourceNote: sourceNote.trim() || null,
+        fileHash: null,
+        canonicalText,
+        exclusions: [],
+        readingNotes: [],
+        sourceNote,
+        note: null,
       });
       setFields(refusal.fields);
       setExplanation(refusal.explanation);

@@ -3,6 +3,7 @@
 /** The next revision of a market's counts: the table, its columns, what was understood. Earlier revisions stay as they are. */
 import { useState, useTransition } from 'react';
 import { addRevisionAction } from '@/app/_actions/add-revision';
+import { toCanonicalText } from '@/lib/series/canonical-text';
 import { Button } from '../controls/button';
 import { type Explanation, ProblemNote } from '../controls/problem-note';
 import { Question } from '../frame/question';
@@ -78,16 +79,21 @@ function StoreRevision({
   const [sourceNote, setSourceNote] = useState('');
   const [explanation, setExplanation] = useState<Explanation | null>(null);
   const [isPending, startTransition] = useTransition();
-  const { mapping, source } = reading;
+  const { series, source } = reading;
 
   function store() {
-    if (!mapping) return;
+    if (!series?.series) return;
+    const canonicalText = toCanonicalText(series.series);
     startTransition(async () => {
       const form = {
+        basedOn: nextNumber - 1,
         fileName: source.fileName,
-        text: source.text,
-        mapping,
-        sourceNote: sourceNote.trim() || null,
+        fileHash: null,
+        canonicalText,
+        exclusions: [],
+        readingNotes: [],
+        sourceNote,
+        note: null,
       };
       setExplanation((await addRevisionAction(marketId, form)).explanation);
     });

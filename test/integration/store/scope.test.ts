@@ -1,7 +1,7 @@
 /** Nothing crosses a workspace; and where the database is, is told by one variable. */
 import { beforeEach, describe, expect, it } from 'vitest';
 import { getDatabaseUrl } from '@/lib/store/client';
-import { addEvent, listEvents, removeEvent } from '@/lib/store/events';
+import { addEvent, changeEvent, listEvents, removeEvent } from '@/lib/store/events';
 import * as work from '@/lib/store/fit-work';
 import * as fits from '@/lib/store/fits';
 import * as links from '@/lib/store/forecast-links';
@@ -34,6 +34,7 @@ describeOnDatabases('the scope of a workspace', () => {
       editMarket: await markets.editMarket({ ...stranger, marketId, changes: { name: 'x' } }),
       archiveMarket: await markets.archiveMarket({ ...stranger, marketId }),
       readRevision: await revisions.readRevision({ ...stranger, revisionId }),
+      readRevisionByNumber: await revisions.readRevisionByNumber({ ...stranger, marketId, number: 1 }),
       latestRevision: await revisions.latestRevision({ ...stranger, marketId }),
       addRevision: await revisions.addRevision({ ...stranger, marketId, revision: REVISION, fit: NEW_FIT }),
       createFit: await fits.createFit({ ...stranger, marketId, revisionId, fit: NEW_FIT }),
@@ -56,7 +57,15 @@ describeOnDatabases('the scope of a workspace', () => {
       changeScenario: await scenarios.changeScenario({ ...stranger, scenarioId, name: 'y', pushes: [] }),
       removeScenario: await scenarios.removeScenario({ ...stranger, scenarioId }),
       addEvent: await addEvent({ ...stranger, marketId, month: 1, note: 'x', changesParameters: false }),
-      removeEvent: await removeEvent({ ...stranger, eventId: event!.eventId }),
+      changeEvent: await changeEvent({
+        ...stranger,
+        marketId,
+        eventId: event!.eventId,
+        month: 2,
+        note: 'y',
+        changesParameters: true,
+      }),
+      removeEvent: await removeEvent({ ...stranger, marketId, eventId: event!.eventId }),
     };
     for (const [name, answer] of Object.entries(refusals)) expect(answer || null, name).toBeNull();
 
