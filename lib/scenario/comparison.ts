@@ -4,6 +4,7 @@
  */
 import { z } from 'zod';
 import { bandsSchema, intervalSchema, oddsSchema } from '../forecast/report';
+import { moneyResultSchema } from './money';
 import { pushesSchema } from './push-schema';
 
 const probability = z.number().min(0).max(1);
@@ -69,6 +70,13 @@ export const checkpointSchema = z.object({
 });
 export type Checkpoint = z.infer<typeof checkpointSchema>;
 
+/** Draws in which the head start decides with and without the pushes, and how many of them end on the other side of the separatrix. */
+export const crossingSchema = z.object({
+  draws: z.number().int().nonnegative(),
+  crossed: z.number().int().nonnegative(),
+});
+export type Crossing = z.infer<typeof crossingSchema>;
+
 export const scenarioComparisonSchema = z.object({
   horizonMonths: z.number().int().positive(),
   draws: z.number().int().positive(),
@@ -83,5 +91,9 @@ export const scenarioComparisonSchema = z.object({
   odds: z.object({ before: oddsSchema, after: oddsSchema }),
   destinations: z.object({ before: destinationsSchema, after: destinationsSchema }),
   effect: effectSchema,
+  /** Absent in comparisons that were made before it was counted. */
+  crossing: crossingSchema.optional(),
+  /** Where money was assumed. */
+  money: moneyResultSchema.optional(),
 });
 export type ScenarioComparison = z.infer<typeof scenarioComparisonSchema>;

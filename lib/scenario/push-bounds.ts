@@ -11,3 +11,9 @@ export const MAX_RECRUITS_PER_MONTH = 1e10;
 export const MAX_CARRY_OVER_HALF_LIFE = 24;
 /** Most pushes in one scenario. */
 export const MAX_PUSHES = 12;
+/** Most money of one kind, in whatever currency: more than any market is worth. */
+export const MAX_MONEY = 1e15;
+/** Longest name of a scenario. */
+export const MAX_SCENARIO_NAME_LENGTH = 80;
+/** Most scenarios side by side. */
+export const MAX_SIDE_BY_SIDE = 4;
