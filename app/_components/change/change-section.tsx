@@ -2,6 +2,8 @@
 
 /** What would change it? A push to try, what it does, and the scenarios that were kept. The trial loads after the page. */
 import dynamic from 'next/dynamic';
+import { useRef } from 'react';
+import { useIsWanted } from '@/app/_lib/use-is-wanted';
 import type { ChangeSection as ChangeSectionData } from '@/lib/brief/types';
 import { Question } from '../frame/question';
 import { SensitivityFigure } from '../identifiability/sensitivity-figure';
@@ -11,7 +13,7 @@ import type { KeptScenario } from './save-scenario';
 
 const PushTrial = dynamic(() => import('./push-trial').then((module) => module.PushTrial), {
   ssr: false,
-  loading: () => <p className={styles.loading}>Getting ready to try a push.</p>,
+  loading: Loading,
 });
 
 interface ChangeSectionProps {
@@ -23,12 +25,18 @@ interface ChangeSectionProps {
 }
 
 export function ChangeSection({ change, ...trial }: ChangeSectionProps) {
+  const place = useRef<HTMLDivElement>(null);
+  const isWanted = useIsWanted(place);
   return (
     <Question id="change" question={change.question} note={<SentenceText sentence={change.note} />}>
-      <div className={styles.trial}>
-        <PushTrial {...trial} />
+      <div className={styles.trial} ref={place}>
+        {isWanted ? <PushTrial {...trial} /> : <Loading />}
       </div>
       {change.sensitivity ? <SensitivityFigure figure={change.sensitivity} /> : null}
     </Question>
   );
+}
+
+function Loading() {
+  return <p className={styles.loading}>Getting ready to try a push.</p>;
 }

@@ -2,9 +2,8 @@
 
 /**
  * The main figure: users or share, history and forecast, with a read-out of any month by pointer, touch or arrow keys.
- * The chart itself loads after the page; its place is reserved, so nothing moves when it comes.
+ * The chart is drawn for the size its frame has; its place is reserved, so nothing moves when it comes.
  */
-import dynamic from 'next/dynamic';
 import { useMemo, useState } from 'react';
 import { useElementSize } from '@/app/_lib/use-element-size';
 import type { ForecastFigure as ForecastFigureData, ForecastRow, ForecastView } from '@/lib/brief/types';
@@ -12,12 +11,9 @@ import { ViewSwitch } from '../controls/view-switch';
 import { FigureFrame } from './figure-frame';
 import styles from './forecast-figure.module.css';
 import { layOutForecast } from './forecast-layout';
+import { ForecastPlot } from './forecast-plot';
 import { ForecastReadOut } from './forecast-read-out';
 import { MonthReader, type MonthReading } from './month-reader';
-
-const ForecastPlot = dynamic(() => import('./plots').then((module) => module.ForecastPlot), {
-  ssr: false,
-});
 
 const VIEWS = [
   { id: 'users', label: 'Users' },

@@ -1,12 +1,9 @@
-'use client';
-
-/** Custom layers of the forecast chart: the line where the forecast begins, and the firms' names at the line ends. */
-import { usePlotArea, useXAxisScale, useYAxisScale, ZIndexLayer } from 'recharts';
+/** What stands around the lines of the forecast chart: axes, the line where the forecast begins, the firms' names at the line ends. */
 import { textColour } from '@/app/_lib/tone';
-import type { ForecastSeries } from '@/lib/brief/types';
+import type { ForecastSeries, ForecastView } from '@/lib/brief/types';
 import styles from './forecast-figure.module.css';
-import type { ForecastLayout } from './forecast-layout';
-import { ABOVE_MARKS } from './map-layout';
+import { type ForecastLayout, type PlotBox, thinTicks } from './forecast-layout';
+import type { PlotScale } from './forecast-paths';
 
 /** Room for a letter of the label: Literata italic, 14 px. */
 const LETTER_WIDTH = 7;
@@ -14,11 +11,66 @@ const LABEL_GAP = 7;
 const NAME_GAP = 8;
 /** Inside the plot a name stands this far above its line. */
 const NAME_LIFT = 9;
+const TICK_LENGTH = 6;
+const X_LABEL_DROP = 22;
+const Y_LABEL_GAP = 8;
 
-export function ForecastFromLine({ month, label }: { month: number; label: string }) {
-  const x = useXAxisScale()?.(month);
-  const plot = usePlotArea();
-  if (x === undefined || !plot) return null;
+interface ForecastAxesProps {
+  view: ForecastView;
+  layout: ForecastLayout;
+  scale: PlotScale;
+}
+
+export function ForecastAxes({ view, layout: { plot }, scale }: ForecastAxesProps) {
+  const bottom = plot.y + plot.height;
+  return (
+    <g>
+      {view.ticks.map(({ value, label }) => (
+        <g key={value}>
+          <line
+            x1={plot.x}
+            x2={plot.x + plot.width}
+            y1={scale.y(value)}
+            y2={scale.y(value)}
+            className={styles.grid}
+          />
+          <text
+            x={plot.x - Y_LABEL_GAP}
+            y={scale.y(value)}
+            dy="0.35em"
+            textAnchor="end"
+            className={styles.tick}
+          >
+            {label}
+          </text>
+        </g>
+      ))}
+      {thinTicks(view.monthTicks, view.monthDomain, plot.width).map(({ value, label }) => (
+        <g key={value}>
+          <line
+            x1={scale.x(value)}
+            x2={scale.x(value)}
+            y1={bottom}
+            y2={bottom + TICK_LENGTH}
+            className={styles.tickMark}
+          />
+          <text x={scale.x(value)} y={bottom + X_LABEL_DROP} textAnchor="middle" className={styles.tick}>
+            {label}
+          </text>
+        </g>
+      ))}
+    </g>
+  );
+}
+
+interface FromLineProps {
+  mark: ForecastView['forecastFrom'];
+  plot: PlotBox;
+  scale: PlotScale;
+}
+
+export function ForecastFromLine({ mark: { month, label }, plot, scale }: FromLineProps) {
+  const x = scale.x(month);
   const isLeft = x + LABEL_GAP + label.length * LETTER_WIDTH > plot.x + plot.width;
   return (
     <g>
@@ -38,16 +90,14 @@ export function ForecastFromLine({ month, label }: { month: number; label: strin
 interface LineEndNamesProps {
   series: ForecastSeries[];
   layout: ForecastLayout;
+  scale: PlotScale;
   lastMonth: number;
 }
 
-export function LineEndNames({ series, layout, lastMonth }: LineEndNamesProps) {
-  const x = useXAxisScale()?.(lastMonth);
-  const scaleY = useYAxisScale();
-  if (x === undefined || !scaleY) return null;
-  const names = series.map((line) => {
-    const y = scaleY(line.end.labelValue);
-    if (y === undefined) return null;
+export function LineEndNames({ series, layout, scale, lastMonth }: LineEndNamesProps) {
+  const x = scale.x(lastMonth);
+  return series.map((line) => {
+    const y = scale.y(line.end.labelValue);
     return (
       <text
         key={line.key}
@@ -62,5 +112,4 @@ export function LineEndNames({ series, layout, lastMonth }: LineEndNamesProps) {
       </text>
     );
   });
-  return <ZIndexLayer zIndex={ABOVE_MARKS}>{names}</ZIndexLayer>;
 }

@@ -1,16 +1,14 @@
-'use client';
-
 /**
- * The forecast chart, drawn with Recharts from rows that `lib/brief` prepared. The focal firm has a solid line, round marks
- * and plain bands; the rival a dashed line, open squares and hatched bands.
+ * The forecast chart as plain SVG from rows that `lib/brief` prepared: the first thing a reader sees, so it waits for no chart library.
+ * The focal firm has a solid line, round marks and plain bands; the rival a dashed line, open squares and hatched bands.
  */
-import { useId, useMemo } from 'react';
-import { Area, CartesianGrid, ComposedChart, type DotItemDotProps, Line, XAxis, YAxis } from 'recharts';
+import { useId } from 'react';
 import { markColour } from '@/app/_lib/tone';
 import type { ForecastSeries, ForecastView } from '@/lib/brief/types';
-import { labelOf, TICK_STYLE } from './axis-style';
-import { type ForecastLayout, thinTicks } from './forecast-layout';
-import { ForecastFromLine, LineEndNames } from './forecast-marks';
+import styles from './forecast-figure.module.css';
+import { type ForecastLayout, placeOn } from './forecast-layout';
+import { ForecastAxes, ForecastFromLine, LineEndNames } from './forecast-marks';
+import { bandPath, linePath, type PlotScale, readPlaces } from './forecast-paths';
 import { HatchPattern } from './hatch-pattern';
 
 /** Marks closer than this (pixels) are drawn smaller. */
@@ -24,158 +22,98 @@ interface ForecastPlotProps {
 }
 
 export function ForecastPlot({ view, layout, size }: ForecastPlotProps) {
-  const patternId = useId();
-  const rows = useMemo(() => flattenRows(view), [view]);
+  const id = useId();
+  const { plot } = layout;
+  const scale: PlotScale = {
+    x: (month) => placeOn(view.monthDomain, plot.x, plot.x + plot.width, month),
+    y: (value) => placeOn(view.domain, plot.y + plot.height, plot.y, value),
+  };
   const months = view.monthDomain[1] - view.monthDomain[0];
-  const isCrowded = layout.plot.width / months < CROWDED_BELOW;
-  const monthTicks = thinTicks(view.monthTicks, view.monthDomain, layout.plot.width);
+  const isCrowded = plot.width / months < CROWDED_BELOW;
+  const drawn = view.series.map((series) => ({ series, hatch: `${id}-${series.key}` }));
   return (
-    <ComposedChart
-      width={size.width}
-      height={size.height}
-      data={rows}
-      margin={{ top: layout.top, right: layout.right, bottom: 0, left: 0 }}
-      accessibilityLayer={false}
-    >
+    <svg width={size.width} height={size.height} viewBox={`0 0 ${size.width} ${size.height}`} aria-hidden>
       <defs>
-        {view.series
-          .filter((series) => series.isHatched)
-          .map((series) => (
-            <HatchPattern key={series.key} id={`${patternId}-${series.key}`} tone={series.tone} />
+        <clipPath id={`${id}-plot`}>
+          <rect x={plot.x} y={plot.y} width={plot.width} height={plot.height} />
+        </clipPath>
+        {drawn
+          .filter(({ series }) => series.isHatched)
+          .map(({ series, hatch }) => (
+            <HatchPattern key={series.key} id={hatch} tone={series.tone} />
           ))}
       </defs>
-      <CartesianGrid vertical={false} stroke="var(--rule)" />
-      <XAxis
-        dataKey="month"
-        type="number"
-        domain={view.monthDomain}
-        ticks={monthTicks.map((tick) => tick.value)}
-        tickFormatter={labelOf(monthTicks)}
-        height={layout.xAxisHeight}
-        tick={TICK_STYLE}
-        axisLine={false}
-        tickLine={{ stroke: 'var(--rule-strong)' }}
-        tickMargin={5}
-        interval={0}
-      />
-      <YAxis
-        type="number"
-        domain={view.domain}
-        ticks={view.ticks.map((tick) => tick.value)}
-        tickFormatter={labelOf(view.ticks)}
-        width={layout.yAxisWidth}
-        tick={TICK_STYLE}
-        axisLine={false}
-        tickLine={false}
-        interval={0}
-        allowDataOverflow
-      />
-      {view.series.flatMap((series) => renderBands(series, `url(#${patternId}-${series.key})`))}
-      <ForecastFromLine month={view.forecastFrom.month} label={view.forecastFrom.label} />
-      {view.series.map((series) => renderHistory(series, isCrowded))}
-      {view.series.map(renderMedian)}
-      <LineEndNames series={view.series} layout={layout} lastMonth={view.monthDomain[1]} />
-    </ComposedChart>
+      <ForecastAxes view={view} layout={layout} scale={scale} />
+      <g clipPath={`url(#${id}-plot)`}>
+        {drawn.map(({ series, hatch }) => (
+          <Bands key={series.key} view={view} series={series} scale={scale} hatch={`url(#${hatch})`} />
+        ))}
+      </g>
+      <ForecastFromLine mark={view.forecastFrom} plot={plot} scale={scale} />
+      {drawn.map(({ series }) => (
+        <History key={series.key} view={view} series={series} scale={scale} isCrowded={isCrowded} />
+      ))}
+      <g clipPath={`url(#${id}-plot)`}>
+        {drawn.map(({ series }) => (
+          <path
+            key={series.key}
+            d={linePath(view, series.key, 'mid', scale)}
+            className={styles.median}
+            stroke={markColour(series.tone)}
+            strokeDasharray={series.isDashed ? DASH : undefined}
+          />
+        ))}
+      </g>
+      <LineEndNames series={view.series} layout={layout} scale={scale} lastMonth={view.monthDomain[1]} />
+    </svg>
   );
 }
 
-type FlatRow = Record<string, number | [number, number] | null>;
-
-function flattenRows(view: ForecastView): FlatRow[] {
-  return view.rows.map((row) => {
-    const flat: FlatRow = { month: row.month };
-    for (const { key } of view.series) {
-      const point = row.points[key];
-      flat[`${key}Seen`] = point?.seen ?? null;
-      flat[`${key}Mid`] = point?.mid ?? null;
-      flat[`${key}Inner`] = point?.band50 ?? null;
-      flat[`${key}Outer`] = point?.band90 ?? null;
-    }
-    return flat;
-  });
+interface SeriesProps {
+  view: ForecastView;
+  series: ForecastSeries;
+  scale: PlotScale;
 }
 
-function renderBands(series: ForecastSeries, hatch: string) {
+function Bands({ view, series, scale, hatch }: SeriesProps & { hatch: string }) {
   const colour = markColour(series.tone);
-  const shared = { stroke: 'none', isAnimationActive: false, activeDot: false, type: 'linear' } as const;
-  const bands = [
-    <Area
-      key={`${series.key}-outer`}
-      {...shared}
-      dataKey={`${series.key}Outer`}
-      fill={colour}
-      fillOpacity="var(--band-outer)"
-    />,
-    <Area
-      key={`${series.key}-inner`}
-      {...shared}
-      dataKey={`${series.key}Inner`}
-      fill={colour}
-      fillOpacity="var(--band-inner)"
-    />,
-  ];
-  if (series.isHatched) {
-    bands.push(
-      <Area
-        key={`${series.key}-hatch`}
-        {...shared}
-        dataKey={`${series.key}Outer`}
-        fill={hatch}
-        fillOpacity={1}
-      />,
-    );
-  }
-  return bands;
-}
-
-function renderHistory(series: ForecastSeries, isCrowded: boolean) {
+  const outer = bandPath(view, series.key, 'band90', scale);
   return (
-    <Line
-      key={`${series.key}-seen`}
-      dataKey={`${series.key}Seen`}
-      type="linear"
-      stroke={markColour(series.tone)}
-      strokeWidth={1.25}
-      dot={series.marker === 'none' ? false : (props) => renderMark(props, series, isCrowded)}
-      activeDot={false}
-      isAnimationActive={false}
-    />
+    <>
+      <path d={outer} fill={colour} fillOpacity="var(--band-outer)" />
+      <path d={bandPath(view, series.key, 'band50', scale)} fill={colour} fillOpacity="var(--band-inner)" />
+      {series.isHatched ? <path d={outer} fill={hatch} /> : null}
+    </>
   );
 }
 
-function renderMark({ cx, cy, index }: DotItemDotProps, series: ForecastSeries, isCrowded: boolean) {
-  if (cx == null || cy == null) return <g key={index} />;
+function History({ view, series, scale, isCrowded }: SeriesProps & { isCrowded: boolean }) {
   const colour = markColour(series.tone);
-  if (series.marker === 'round') {
-    return <circle key={index} cx={cx} cy={cy} r={isCrowded ? 1.8 : 2.6} fill={colour} />;
-  }
-  const side = isCrowded ? 3.4 : 5.2;
+  const places = series.marker === 'none' ? [] : readPlaces(view, series.key, 'seen', scale);
+  return (
+    <g>
+      <path d={linePath(view, series.key, 'seen', scale)} className={styles.seen} stroke={colour} />
+      {places.map(({ month, x, y }) =>
+        series.marker === 'round' ? (
+          <circle key={month} cx={x} cy={y} r={isCrowded ? 1.8 : 2.6} fill={colour} />
+        ) : (
+          <OpenSquare key={month} x={x} y={y} side={isCrowded ? 3.4 : 5.2} colour={colour} />
+        ),
+      )}
+    </g>
+  );
+}
+
+function OpenSquare({ x, y, side, colour }: { x: number; y: number; side: number; colour: string }) {
   return (
     <rect
-      key={index}
-      x={cx - side / 2}
-      y={cy - side / 2}
+      x={x - side / 2}
+      y={y - side / 2}
       width={side}
       height={side}
       fill="var(--paper)"
       stroke={colour}
       strokeWidth={1.25}
-    />
-  );
-}
-
-function renderMedian(series: ForecastSeries) {
-  return (
-    <Line
-      key={`${series.key}-mid`}
-      dataKey={`${series.key}Mid`}
-      type="linear"
-      stroke={markColour(series.tone)}
-      strokeWidth={2.25}
-      strokeDasharray={series.isDashed ? DASH : undefined}
-      dot={false}
-      activeDot={false}
-      isAnimationActive={false}
     />
   );
 }

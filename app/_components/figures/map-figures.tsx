@@ -4,6 +4,7 @@
 import dynamic from 'next/dynamic';
 import type { ReactNode } from 'react';
 import { useElementSize } from '@/app/_lib/use-element-size';
+import { useIsWanted } from '@/app/_lib/use-is-wanted';
 import { placeMapLabels } from '@/lib/brief/map-labels';
 import type { OddsMap, PhaseMap, Tick } from '@/lib/brief/types';
 import { FigureFrame } from './figure-frame';
@@ -50,10 +51,11 @@ interface MapCanvasProps {
 
 function MapCanvas({ title, yTicks, children }: MapCanvasProps) {
   const [ref, size] = useElementSize<HTMLDivElement>();
+  const isWanted = useIsWanted(ref);
   return (
     <div className={styles.canvas} ref={ref}>
       <div className={styles.picture} role="img" aria-label={title}>
-        {size
+        {size && isWanted
           ? children(
               size,
               layOutMap(
