@@ -28,3 +28,9 @@ export function leaveOut(series: MonthlySeries, exclusions: readonly Exclusion[]
       .slice(start, end + 1);
   return { firstMonth: series.firstMonth + start, focal: keep(series.focal), rival: keep(series.rival) };
 }
+
+/** Those of the exclusions whose months the series has: what carries over to newer counts. */
+export function keepExclusions(exclusions: readonly Exclusion[], series: MonthlySeries): Exclusion[] {
+  const end = series.firstMonth + series.focal.length;
+  return exclusions.filter(({ month }) => month >= series.firstMonth && month < end);
+}

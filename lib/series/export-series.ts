@@ -4,6 +4,7 @@
  */
 import Papa from 'papaparse';
 import { FORMULA_START } from './clean-name';
+import type { Exclusion } from './exclusions';
 import { formatMonth } from './month';
 import { readCountText } from './number';
 import type { MonthlySeries } from './types';
@@ -12,17 +13,23 @@ export interface NamedSeries {
   series: MonthlySeries;
   focalName: string;
   rivalName: string;
+  /** Months that the fit leaves out: with their reasons in a fourth column, where there are any. */
+  exclusions?: readonly Exclusion[];
 }
 
 export const MONTH_HEADER = 'Month';
+const REASON_HEADER = 'Left out because';
 
 /** Header and one row a month, lines ended by CR LF (RFC 4180); a gap is an empty cell. */
-export function toCsv({ series, focalName, rivalName }: NamedSeries): string {
-  const header = [MONTH_HEADER, focalName, rivalName];
+export function toCsv({ series, focalName, rivalName, exclusions = [] }: NamedSeries): string {
+  const reasons = new Map(exclusions.map(({ month, reason }) => [month, reason]));
+  const addReason = (text: string) => (reasons.size > 0 ? [text] : []);
+  const header = [MONTH_HEADER, focalName, rivalName, ...addReason(REASON_HEADER)];
   const rows = series.focal.map((count, index) => [
     formatMonth(series.firstMonth + index),
     writeCount(count),
     writeCount(series.rival[index]),
+    ...addReason(reasons.get(series.firstMonth + index) ?? ''),
   ]);
   return `${writeCsv([header, ...rows])}\r\n`;
 }

@@ -16,6 +16,7 @@ import { type OutlookAnalyses, readOutlookAnalyses, toAnalysisFacts } from './re
 import { listStaleReasons, type StaleReason } from './staleness';
 import type { Viewer } from './viewer';
 
+export type { MarketEvent };
 export type IssuedSummary = IssuedForecastSummary;
 
 export interface MarketPage {

@@ -1,15 +1,18 @@
 'use client';
 
-/** Two firms' counts as they were read, without a fit: the chart of a preview and of the data page. */
+/** Two firms' counts as they were read, without a fit, and their marks: the chart of a preview and of the data pages. */
 import { CartesianGrid, ComposedChart, type DotItemDotProps, Line, XAxis, YAxis } from 'recharts';
 import { listMonths } from '@/app/_lib/list-months';
 import { LOCALE } from '@/app/_lib/locale';
 import { axisFromZero, monthTicks } from '@/lib/brief/axis-ticks';
+import type { EventMark } from '@/lib/brief/event-marks';
 import { createMonthFormat } from '@/lib/brief/month-words';
 import { createNumberFormat } from '@/lib/brief/number-format';
+import type { Exclusion } from '@/lib/series/exclusions';
 import type { MonthlySeries } from '@/lib/series/types';
 import { labelOf, TICK_STYLE } from './axis-style';
 import { thinTicks } from './forecast-layout';
+import { EventLines, LeftOutCounts } from './history-marks';
 
 const Y_AXIS_WIDTH = 52;
 const RIGHT = 14;
@@ -18,11 +21,16 @@ const months = createMonthFormat(LOCALE);
 
 interface HistoryPlotProps {
   series: MonthlySeries;
+  exclusions: readonly Exclusion[];
+  marks: EventMark[];
   size: { width: number; height: number };
 }
 
-export function HistoryPlot({ series, size }: HistoryPlotProps) {
-  const rows = listMonths(series);
+export function HistoryPlot({ series, exclusions, marks, size }: HistoryPlotProps) {
+  const excluded = new Set(exclusions.map(({ month }) => month));
+  const all = listMonths(series);
+  const leftOut = all.filter(({ month }) => excluded.has(month));
+  const rows = all.map((row) => (excluded.has(row.month) ? { ...row, focal: null, rival: null } : row));
   const domain: [number, number] = [series.firstMonth, series.firstMonth + Math.max(rows.length - 1, 1)];
   const ticks = thinTicks(monthTicks(...domain, months), domain, size.width - Y_AXIS_WIDTH - RIGHT);
   const counts = [...series.focal, ...series.rival].filter((count) => count !== null);
@@ -32,7 +40,7 @@ export function HistoryPlot({ series, size }: HistoryPlotProps) {
       width={size.width}
       height={size.height}
       data={rows}
-      margin={{ top: 8, right: RIGHT, bottom: 0, left: 0 }}
+      margin={{ top: marks.length > 0 ? 20 : 8, right: RIGHT, bottom: 0, left: 0 }}
       accessibilityLayer={false}
     >
       <CartesianGrid vertical={false} stroke="var(--rule)" />
@@ -77,6 +85,8 @@ export function HistoryPlot({ series, size }: HistoryPlotProps) {
         activeDot={false}
         isAnimationActive={false}
       />
+      <LeftOutCounts months={leftOut} />
+      <EventLines marks={marks} />
     </ComposedChart>
   );
 }

@@ -1,25 +1,21 @@
 'use client';
 
 /** The next revision of a market's counts: the table, its columns, what was understood. Earlier revisions stay as they are. */
-import { useState, useTransition } from 'react';
-import { addRevisionAction } from '@/app/_actions/add-revision';
-import { toCanonicalText } from '@/lib/series/canonical-text';
-import { Button } from '../controls/button';
-import { type Explanation, ProblemNote } from '../controls/problem-note';
+import { keepExclusions } from '@/lib/series/exclusions';
+import { type RevisionBase, StoreRevision } from '../data/store-revision';
 import { Question } from '../frame/question';
 import { ColumnsStep } from './columns-step';
 import styles from './flow.module.css';
-import { SourceNote } from './source-note';
 import { SourceStep } from './source-step';
 import { UnderstoodStep } from './understood-step';
-import { type Reading, useReading } from './use-reading';
+import { useReading } from './use-reading';
 
 interface NewRevisionFlowProps {
-  market: { id: string; unit: string; focalName: string; rivalName: string };
-  nextNumber: number;
+  base: RevisionBase;
+  unit: string;
 }
 
-export function NewRevisionFlow({ market, nextNumber }: NewRevisionFlowProps) {
+export function NewRevisionFlow({ base, unit }: NewRevisionFlowProps) {
   const reading = useReading();
   const { table, mapping, series } = reading;
   return (
@@ -44,13 +40,22 @@ export function NewRevisionFlow({ market, nextNumber }: NewRevisionFlowProps) {
               <div className={styles.understood}>
                 <UnderstoodStep
                   reading={series}
-                  focalName={market.focalName}
-                  rivalName={market.rivalName}
-                  unit={market.unit}
+                  focalName={base.focalName}
+                  rivalName={base.rivalName}
+                  unit={unit}
                 />
               </div>
-              {series.series ? (
-                <StoreRevision marketId={market.id} nextNumber={nextNumber} reading={reading} />
+              {series.series && reading.canFit ? (
+                <StoreRevision
+                  base={base}
+                  proposal={{
+                    series: series.series,
+                    exclusions: keepExclusions(base.exclusions, series.series),
+                    fileName: reading.source.fileName,
+                    fileHash: null,
+                    readingNotes: [],
+                  }}
+                />
               ) : null}
             </>
           ) : (
@@ -63,51 +68,6 @@ export function NewRevisionFlow({ market, nextNumber }: NewRevisionFlowProps) {
           )}
         </Question>
       ) : null}
-    </>
-  );
-}
-
-function StoreRevision({
-  marketId,
-  nextNumber,
-  reading,
-}: {
-  marketId: string;
-  nextNumber: number;
-  reading: Reading;
-}) {
-  const [sourceNote, setSourceNote] = useState('');
-  const [explanation, setExplanation] = useState<Explanation | null>(null);
-  const [isPending, startTransition] = useTransition();
-  const { series, source } = reading;
-
-  function store() {
-    if (!series?.series) return;
-    const canonicalText = toCanonicalText(series.series);
-    startTransition(async () => {
-      const form = {
-        basedOn: nextNumber - 1,
-        fileName: source.fileName,
-        fileHash: null,
-        canonicalText,
-        exclusions: [],
-        readingNotes: [],
-        sourceNote,
-        note: null,
-      };
-      setExplanation((await addRevisionAction(marketId, form)).explanation);
-    });
-  }
-
-  return (
-    <>
-      <SourceNote value={sourceNote} onChange={setSourceNote} />
-      <div className={styles.end}>
-        <ProblemNote explanation={explanation} />
-        <Button kind="main" onClick={store} isBusy={isPending} busyLabel="Storing the counts">
-          Store revision {nextNumber} and fit
-        </Button>
-      </div>
     </>
   );
 }

@@ -1,5 +1,5 @@
 import { expect, test } from 'vitest';
-import { leaveOut } from '@/lib/series/exclusions';
+import { keepExclusions, leaveOut } from '@/lib/series/exclusions';
 
 const SERIES = { firstMonth: 24_300, focal: [1, 2, 3, 4], rival: [null, 6, 7, 8] };
 
@@ -22,4 +22,9 @@ test('without exclusions the same counts; with all months excluded nothing', () 
   expect(leaveOut(SERIES, [])).toEqual(SERIES);
   const all = [0, 1, 2, 3].map((index) => ({ month: 24_300 + index, reason: 'x' }));
   expect(leaveOut(SERIES, all)).toBeNull();
+});
+
+test('exclusions carry over to the months that newer counts still have', () => {
+  const months = [24_299, 24_300, 24_303, 24_304].map((month) => ({ month, reason: 'x' }));
+  expect(keepExclusions(months, SERIES).map(({ month }) => month)).toEqual([24_300, 24_303]);
 });

@@ -67,3 +67,11 @@ test('a gap is an empty cell and a zero a zero', () => {
     'Month,A,B\r\n2024-01,1,0\r\n2024-02,,2\r\n',
   );
 });
+
+test('months left out stand with their reasons in a fourth column, which is read back as no count', () => {
+  const series = { firstMonth: makeMonth(2024, 1), focal: [1, 2], rival: [3, 4] };
+  const exclusions = [{ month: makeMonth(2024, 2), reason: '=strike' }];
+  const text = toCsv({ series, focalName: 'A', rivalName: 'B', exclusions });
+  expect(text).toBe("Month,A,B,Left out because\r\n2024-01,1,3,\r\n2024-02,2,4,'=strike\r\n");
+  expect(readSeries(text, { month: 'Month', focal: 'A', rival: 'B' }).series).toEqual(series);
+});

@@ -1,18 +1,20 @@
-/** The newest revision as a CSV file, which the import reads back to the same counts. */
+/** A revision as a CSV file, which the import reads back to the same counts. GET ?revision=<number>; the newest without it. */
 import { readViewer } from '@/app/_lib/require-viewer';
 import { toCsv } from '@/lib/series/export-series';
-import { readMarket } from '@/lib/services/read-market';
+import { readRevisionFile } from '@/lib/services/read-revision-file';
 
 export async function GET(
-  _request: Request,
+  request: Request,
   { params }: { params: Promise<{ id: string }> },
 ): Promise<Response> {
   const viewer = await readViewer();
   if (!viewer) return new Response('Sign in first.', { status: 401 });
-  const outcome = await readMarket(viewer, (await params).id);
+  const number = new URL(request.url).searchParams.get('revision');
+  const outcome = await readRevisionFile(viewer, (await params).id, number === null ? null : Number(number));
   if (!outcome.ok) return new Response('There is no such market in your workspace.', { status: 404 });
-  const { market, revision, series } = outcome.value;
-  const text = toCsv({ series, focalName: market.focalName, rivalName: market.rivalName });
+  const { market, revision } = outcome.value;
+  const { series, exclusions } = revision;
+  const text = toCsv({ series, exclusions, focalName: market.focalName, rivalName: market.rivalName });
   return new Response(text, {
     headers: {
       'Content-Type': 'text/csv; charset=utf-8',
