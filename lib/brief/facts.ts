@@ -5,7 +5,8 @@
 import type { BacktestReport } from '../forecast/backtest/report';
 import type { IdentifiabilityReport } from '../forecast/identifiability/report';
 import type { FitReport } from '../forecast/report';
-import type { MonthlySeries } from '../series/types';
+import type { Month, MonthlySeries } from '../series/types';
+import type { EventFact } from './event-marks';
 
 export interface MarketFacts {
   name: string;
@@ -24,9 +25,22 @@ export interface RevisionFacts {
   fileName: string | null;
 }
 
+/** A month that the fit does not see, with the counts that were given for it. */
+export interface LeftOutFact {
+  month: Month;
+  focal: number | null;
+  rival: number | null;
+  reason: string;
+}
+
 export interface BriefFacts {
   market: MarketFacts;
+  /** As the fit saw it: months left out are gaps. */
   series: MonthlySeries;
+  /** Dated events of the market; absent: none. */
+  events?: EventFact[];
+  /** Absent: none. */
+  leftOut?: LeftOutFact[];
   revision: RevisionFacts;
   report: FitReport;
   /** How past forecasts of these counts did; absent: not known yet. */

@@ -1,9 +1,13 @@
 /** The main figure in its two views: users of both firms, and the focal firm's share. */
+
+import type { Month } from '../series/types';
 import { axisFromZero, monthTicks } from './axis-ticks';
 import { captionShare, captionUsers } from './captions';
+import { markEvents, tellExclusions } from './event-marks';
+import type { LeftOutFact } from './facts';
 import { buildForecastRows, type SeriesSource, tabulateForecast } from './forecast-rows';
 import { possessive } from './text';
-import type { ForecastFigure, ForecastSeries, ForecastView, Tone } from './types';
+import type { ForecastFigure, ForecastSeries, ForecastSeriesKey, ForecastView, Tone } from './types';
 import { type FirmRole, horizonMonthOf, type Words } from './words';
 
 /** A 90 % band that reaches beyond this many times everything else is cut off at the top of the figure. */
@@ -18,7 +22,7 @@ export function buildForecastFigure(words: Words): ForecastFigure {
 function buildUsersView(words: Words): ForecastView {
   const sources = (['focal', 'rival'] as const).map((firm) => usersSource(words, firm));
   const rows = buildForecastRows(words, sources);
-  const { isCut, top, height } = measureUsers(sources);
+  const { isCut, top, height } = measureUsers(sources, words.facts.leftOut ?? []);
   const axis = axisFromZero(height, words.numbers.axis);
   return {
     id: 'users',
@@ -33,6 +37,7 @@ function buildUsersView(words: Words): ForecastView {
     ticks: axis.ticks,
     axisLabel: words.facts.market.unit,
     ...monthAxis(words),
+    ...markMonths(words, ({ focal, rival }) => ({ focal, rival })),
     caption: captionUsers(words, { isCut, top }),
     table: tabulateForecast('Users by month', sources, rows),
   };
@@ -53,9 +58,13 @@ function usersSource(words: Words, firm: FirmRole): SeriesSource {
 }
 
 /** What the axis must hold; a band that would flatten everything else is cut. */
-function measureUsers(sources: SeriesSource[]): { isCut: boolean; top: number; height: number } {
+function measureUsers(
+  sources: SeriesSource[],
+  leftOut: LeftOutFact[],
+): { isCut: boolean; top: number; height: number } {
   const held = Math.max(
     ...sources.flatMap(({ seen, bands }) => [...seen.map((count) => count ?? 0), ...bands.q75]),
+    ...leftOut.flatMap(({ focal, rival }) => [focal ?? 0, rival ?? 0]),
   );
   const top = Math.max(...sources.flatMap(({ bands }) => bands.q95));
   const isCut = top > CUT_ABOVE * held;
@@ -85,6 +94,7 @@ function buildShareView(words: Words): ForecastView {
     ticks: axis.ticks,
     axisLabel: `${possessive(words.focal)} share`,
     ...monthAxis(words),
+    ...markMonths(words, ({ focal, rival }) => ({ share: shareOf(focal, rival) })),
     caption: captionShare(words),
     table: tabulateForecast('Share by month', [source], rows),
   };
@@ -129,6 +139,26 @@ export function spreadLabels(series: ForecastSeries[], domain: [number, number])
 
 function withLabel(series: ForecastSeries, labelValue: number): ForecastSeries {
   return { ...series, end: { ...series.end, labelValue } };
+}
+
+/** Events and left-out counts of the months that the figure shows. */
+function markMonths(
+  words: Words,
+  read: (fact: LeftOutFact) => Partial<Record<ForecastSeriesKey, number | null>>,
+): Pick<ForecastView, 'events' | 'leftOut'> {
+  const { events = [], leftOut = [], series } = words.facts;
+  const isShown = ({ month }: { month: Month }) =>
+    month >= series.firstMonth && month <= horizonMonthOf(words);
+  const shown = leftOut.filter(isShown);
+  const counts = shown.flatMap((fact) =>
+    Object.entries(read(fact)).flatMap(([key, value]) =>
+      value == null ? [] : [{ key: key as ForecastSeriesKey, month: fact.month, value }],
+    ),
+  );
+  return {
+    events: markEvents(events.filter(isShown), words.months),
+    leftOut: { counts, text: tellExclusions(shown, words.months) },
+  };
 }
 
 function monthAxis(words: Words): Pick<ForecastView, 'monthDomain' | 'monthTicks' | 'forecastFrom'> {

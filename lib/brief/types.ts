@@ -5,6 +5,7 @@
  * Numbers for drawing are plain numbers (users, months as year * 12 + month - 1, fractions of 1); strings are for reading.
  */
 import type { Outcome } from '../forecast/outcomes';
+import type { EventMark } from './event-marks';
 
 /** Colour token by role. `both`: the two firms stay; `headStart`: the head start decides; `ink`: no firm. */
 export type Tone = 'focal' | 'rival' | 'both' | 'headStart' | 'ink' | 'quiet';
@@ -128,6 +129,10 @@ export interface ForecastView {
   monthTicks: Tick[];
   /** The line between history and forecast stands at `month` (the last observed one). */
   forecastFrom: { month: number; label: string };
+  /** Dated events within the months of the figure. */
+  events: EventMark[];
+  /** Counts that the fit does not see, within the months of the figure, by series; and the months with their reasons in words. */
+  leftOut: { counts: { key: ForecastSeriesKey; month: number; value: number }[]; text: string };
   caption: Sentence;
   table: FigureTable;
 }

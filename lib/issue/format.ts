@@ -42,7 +42,16 @@ export const issuedForecastSchema = z.object({
   issuedBy: z.string(),
   market: marketSchema,
   revision: revisionSchema,
+  /** As the fit saw it: months left out are gaps. */
   series: seriesSchema,
+  /** Absent in forecasts issued before there were events. */
+  events: z
+    .array(z.object({ month: z.number().int(), note: z.string(), changesParameters: z.boolean() }))
+    .optional(),
+  /** Months that the fit did not see, with their counts. */
+  leftOut: z
+    .array(z.object({ month: z.number().int(), focal: count, rival: count, reason: z.string() }))
+    .optional(),
   report: fitReportSchema,
   /** Absent in forecasts issued before there were backtests, or before theirs was done. */
   backtest: backtestReportSchema.optional(),

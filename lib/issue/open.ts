@@ -21,11 +21,13 @@ export function factsOfIssued({
   market,
   revision,
   series,
+  events,
+  leftOut,
   report,
   backtest,
   identifiability,
 }: IssuedForecast): BriefFacts {
-  return { market, revision, series, report, backtest, identifiability };
+  return { market, revision, series, events, leftOut, report, backtest, identifiability };
 }
 
 export function openIssued(

@@ -5,6 +5,7 @@
 import type { Push } from '../dynamics/push';
 import { type FreezeInput, freezeForecast } from '../issue/freeze';
 import { compareScenario } from '../scenario/compare';
+import { listEvents } from '../store/events';
 import { type DoneFit, latestDoneFit, readDraws } from '../store/fits';
 import { createIssuedForecast } from '../store/issued-forecasts';
 import { readMarket } from '../store/markets';
@@ -36,10 +37,11 @@ export async function issueForecast(
   if (!parsed.ok) return parsed;
   const { workspaceId, userId } = viewer;
   const scope = { workspaceId, marketId };
-  const [market, revision, fit] = await Promise.all([
+  const [market, revision, fit, events] = await Promise.all([
     readMarket(scope),
     latestRevision(scope),
     latestDoneFit(scope),
+    listEvents(scope),
   ]);
   if (!market || !revision) return refuse('not-found');
   if (!fit) return refuse('no-result');
@@ -48,7 +50,7 @@ export async function issueForecast(
   const scenario = await compareForIssue(viewer, fit, parsed.value);
   const analyses = await readOutlookAnalyses(viewer, fit.revisionId);
   const content = freezeForecast({
-    facts: toBriefFacts(market, revision, fit, toAnalysisFacts(analyses)),
+    facts: toBriefFacts(market, revision, fit, toAnalysisFacts(analyses), events),
     scenario,
     issuedAt: new Date().toISOString(),
     issuedBy: viewer.userName,

@@ -65,7 +65,7 @@ export async function readMarket(viewer: Viewer, marketId: string): Promise<Succ
   if (!market || !newest) return refuse('not-found');
   const { series, exclusions, ...revision } = newest;
   const analyses = done && (await readOutlookAnalyses(viewer, done.revisionId));
-  const facts = done && analyses && (await readFacts(viewer, market, newest, done, analyses));
+  const facts = done && analyses && (await readFacts(viewer, market, newest, done, analyses, events));
   const outlook = done && { fitId: done.id, staleReasons: listReasons(done, market, newest) };
   const isStale = outlook !== null && outlook.staleReasons.length > 0;
   return succeed({
@@ -89,10 +89,11 @@ async function readFacts(
   newest: Revision,
   done: DoneFit,
   analyses: OutlookAnalyses,
+  events: MarketEvent[],
 ): Promise<BriefFacts | null> {
   const { revisionId } = done;
   const fitted = revisionId === newest.id ? newest : await readRevision({ workspaceId, revisionId });
-  return fitted && toBriefFacts(market, fitted, done, toAnalysisFacts(analyses));
+  return fitted && toBriefFacts(market, fitted, done, toAnalysisFacts(analyses), events);
 }
 
 function listReasons(done: DoneFit, market: Market, newest: Revision): StaleReason[] {

@@ -8,6 +8,7 @@ import { useMemo, useState } from 'react';
 import { useElementSize } from '@/app/_lib/use-element-size';
 import type { ForecastFigure as ForecastFigureData, ForecastRow, ForecastView } from '@/lib/brief/types';
 import { ViewSwitch } from '../controls/view-switch';
+import { EventList } from './event-list';
 import { FigureFrame } from './figure-frame';
 import styles from './forecast-figure.module.css';
 import { layOutForecast } from './forecast-layout';
@@ -33,6 +34,7 @@ export function ForecastFigure({ figure }: { figure: ForecastFigureData }) {
       </div>
       <ForecastReadOut view={view} index={index} />
       <ForecastCanvas view={view} index={index} isReading={reading !== null} onRead={setReading} />
+      <EventList marks={view.events} leftOut={view.leftOut.text} />
     </FigureFrame>
   );
 }

@@ -1,9 +1,11 @@
 /** What stands around the lines of the forecast chart: axes, the line where the forecast begins, the firms' names at the line ends. */
 import { textColour } from '@/app/_lib/tone';
+import type { EventMark } from '@/lib/brief/event-marks';
 import type { ForecastSeries, ForecastView } from '@/lib/brief/types';
 import styles from './forecast-figure.module.css';
 import { type ForecastLayout, type PlotBox, thinTicks } from './forecast-layout';
 import type { PlotScale } from './forecast-paths';
+import { Cross, EventLine } from './mark-shapes';
 
 /** Room for a letter of the label: Literata italic, 14 px. */
 const LETTER_WIDTH = 7;
@@ -61,6 +63,23 @@ export function ForecastAxes({ view, layout: { plot }, scale }: ForecastAxesProp
       ))}
     </g>
   );
+}
+
+/** Dated events, each a lettered line. */
+export function EventMarks({ marks, plot, scale }: { marks: EventMark[]; plot: PlotBox; scale: PlotScale }) {
+  return marks.map((mark) => <EventLine key={mark.letter} mark={mark} x={scale.x(mark.month)} plot={plot} />);
+}
+
+/** Counts that the fit does not see. */
+export function LeftOutMarks({ view, scale }: { view: ForecastView; scale: PlotScale }) {
+  return view.leftOut.counts.map(({ key, month, value }) => (
+    <Cross
+      key={`${key} ${month}`}
+      x={scale.x(month)}
+      y={scale.y(value)}
+      colour={key === 'rival' ? 'var(--rival)' : 'var(--focal)'}
+    />
+  ));
 }
 
 interface FromLineProps {

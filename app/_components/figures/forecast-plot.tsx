@@ -7,7 +7,7 @@ import { markColour } from '@/app/_lib/tone';
 import type { ForecastSeries, ForecastView } from '@/lib/brief/types';
 import styles from './forecast-figure.module.css';
 import { type ForecastLayout, placeOn } from './forecast-layout';
-import { ForecastAxes, ForecastFromLine, LineEndNames } from './forecast-marks';
+import { EventMarks, ForecastAxes, ForecastFromLine, LeftOutMarks, LineEndNames } from './forecast-marks';
 import { bandPath, linePath, type PlotScale, readPlaces } from './forecast-paths';
 import { HatchPattern } from './hatch-pattern';
 
@@ -49,10 +49,12 @@ export function ForecastPlot({ view, layout, size }: ForecastPlotProps) {
           <Bands key={series.key} view={view} series={series} scale={scale} hatch={`url(#${hatch})`} />
         ))}
       </g>
+      <EventMarks marks={view.events} plot={plot} scale={scale} />
       <ForecastFromLine mark={view.forecastFrom} plot={plot} scale={scale} />
       {drawn.map(({ series }) => (
         <History key={series.key} view={view} series={series} scale={scale} isCrowded={isCrowded} />
       ))}
+      <LeftOutMarks view={view} scale={scale} />
       <g clipPath={`url(#${id}-plot)`}>
         {drawn.map(({ series }) => (
           <path

@@ -33,6 +33,28 @@ describe('buildForecastFigure', () => {
     });
   });
 
+  it('marks events and left-out counts of the months it shows, and makes room for them', () => {
+    const facts = factsOf('coexistence');
+    const { firstMonth } = facts.series;
+    const top = figureOf(facts).users.domain[1];
+    facts.events = [
+      { month: firstMonth + 50, note: 'launch ahead', changesParameters: false },
+      { month: firstMonth - 1, note: 'long ago', changesParameters: false },
+    ];
+    facts.leftOut = [{ month: firstMonth + 3, focal: 2 * top, rival: 0, reason: 'strike' }];
+    const { users, share } = figureOf(facts);
+    for (const view of [users, share]) {
+      expect(view.events).toMatchObject([{ month: firstMonth + 50, letter: 'a' }]);
+      expect(view.leftOut.text).toMatch(/^Left out of the fit: .*strike/);
+    }
+    expect(users.leftOut.counts).toEqual([
+      { key: 'focal', month: firstMonth + 3, value: 2 * top },
+      { key: 'rival', month: firstMonth + 3, value: 0 },
+    ]);
+    expect(share.leftOut.counts).toEqual([{ key: 'share', month: firstMonth + 3, value: 1 }]);
+    expect(users.domain[1]).toBeGreaterThanOrEqual(2 * top);
+  });
+
   it('leaves gaps open, in users and in share', () => {
     const facts = factsOf('coexistence');
     facts.series.rival[7] = null;

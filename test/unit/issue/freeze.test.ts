@@ -37,6 +37,18 @@ describe('freezeForecast', () => {
     expect([bare.backtest, bare.identifiability]).toEqual([undefined, undefined]);
   });
 
+  it('keeps events and left-out months, so that an opened forecast shows them', () => {
+    const marks = {
+      events: [{ month: 24_300, note: 'price change', changesParameters: true }],
+      leftOut: [{ month: 24_301, focal: 3, rival: null, reason: 'strike' }],
+    };
+    const facts = { ...sample.facts, ...marks };
+    const read = readIssuedForecast(
+      store(freezeForecast({ facts, scenario: null, issuedAt: '2026-01-08T09:00:00Z', issuedBy: 'Ada' })),
+    );
+    expect(read.ok && factsOfIssued(read.value)).toMatchObject(marks);
+  });
+
   it('is untouched by what happens to the facts afterwards', () => {
     const facts = structuredClone(sample.facts);
     const issued = freezeForecast({
