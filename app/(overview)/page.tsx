@@ -2,11 +2,12 @@
 import type { Metadata } from 'next';
 import Link from 'next/link';
 import { makeMonth } from '@/lib/series/month';
-import { listMarkets, type MarketSummary } from '@/lib/services/list-markets';
+import { listArchivedMarkets, listMarkets, type MarketSummary } from '@/lib/services/list-markets';
 import { canWrite, type Viewer } from '@/lib/services/viewer';
 import { buttonClass } from '../_components/controls/button-class';
 import { PageFrame } from '../_components/frame/page-frame';
 import { Question } from '../_components/frame/question';
+import { ArchiveList } from '../_components/markets/archive-list';
 import { MarketList } from '../_components/markets/market-list';
 import { Headline } from '../_components/text/headline';
 import { requireViewer } from '../_lib/require-viewer';
@@ -16,7 +17,7 @@ export const metadata: Metadata = { title: 'Markets' };
 
 export default async function MarketsPage() {
   const viewer = await requireViewer('/');
-  const markets = await listMarkets(viewer);
+  const [markets, archived] = await Promise.all([listMarkets(viewer), listArchivedMarkets(viewer)]);
   return (
     <PageFrame title={viewer.workspaceName} viewer={viewer}>
       <Question
@@ -30,6 +31,7 @@ export default async function MarketsPage() {
         ) : (
           <FilledList viewer={viewer} markets={markets} />
         )}
+        <ArchiveList markets={archived} canWrite={canWrite(viewer)} />
       </Question>
     </PageFrame>
   );
@@ -52,7 +54,11 @@ function FilledList({ viewer, markets }: ListProps) {
           </Link>
         </p>
       ) : null}
-      <MarketList markets={markets} thisMonth={makeMonth(now.getUTCFullYear(), now.getUTCMonth() + 1)} />
+      <MarketList
+        markets={markets}
+        thisMonth={makeMonth(now.getUTCFullYear(), now.getUTCMonth() + 1)}
+        canWrite={canWrite(viewer)}
+      />
     </>
   );
 }

@@ -4,7 +4,12 @@ import type { Outcome } from '../forecast/outcomes';
 import type { Odds } from '../forecast/report';
 import type { Month } from '../series/types';
 import type { FitState } from '../store/fits';
-import { listMarkets as listStoredMarkets, type MarketListRow } from '../store/markets';
+import {
+  type ArchivedMarket,
+  listArchivedMarkets as listStoredArchive,
+  listMarkets as listStoredMarkets,
+  type MarketListRow,
+} from '../store/markets';
 import { listOutlookHeads, type OutlookHead } from '../store/outlook-heads';
 import { listStaleReasons } from './staleness';
 import type { Viewer } from './viewer';
@@ -29,6 +34,8 @@ interface FitSummary {
   odds: Odds | null;
   /** null: no outlook yet, or the data do not decide. */
   decided: Outcome | null;
+  /** Where the focal firm's share is heading; null: no outlook yet. */
+  share: OutlookHead['share'] | null;
   progress: FitProgress | null;
   /** The odds are of other data, measurement errors or engine than the market's now. */
   isStale: boolean;
@@ -42,6 +49,12 @@ export async function listMarkets(viewer: Viewer): Promise<MarketSummary[]> {
     listOutlookHeads({ workspaceId }),
   ]);
   return markets.map((market) => toSummary(market, heads.get(market.id) ?? null));
+}
+
+export type { ArchivedMarket };
+
+export async function listArchivedMarkets({ workspaceId }: Viewer): Promise<ArchivedMarket[]> {
+  return listStoredArchive({ workspaceId });
 }
 
 function toSummary(market: MarketListRow, head: OutlookHead | null): MarketSummary {
@@ -67,6 +80,7 @@ function toFitSummary(market: MarketListRow, head: OutlookHead | null): FitSumma
     state,
     odds: head?.odds ?? null,
     decided: head?.decided ?? null,
+    share: head?.share ?? null,
     progress,
     isStale: head !== null && listStaleReasons(head, market, market.revision?.id ?? null).length > 0,
     failureCode,

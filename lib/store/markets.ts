@@ -124,14 +124,37 @@ export async function archiveMarket(args: {
   return updateMarket(args, { archivedAt: new Date() });
 }
 
+/** Puts an archived market back on the list. @returns false when the workspace has no such market in its archive */
+export async function restoreMarket(args: {
+  workspaceId: string;
+  marketId: string;
+  audit?: Deed;
+}): Promise<boolean> {
+  return updateMarket(args, { archivedAt: null }, { not: null });
+}
+
+export type ArchivedMarket = Pick<Market, 'id' | 'name' | 'focalName' | 'rivalName'> & { archivedAt: Date };
+
+/** The last archived first. */
+export async function listArchivedMarkets(args: { workspaceId: string }): Promise<ArchivedMarket[]> {
+  const rows = await getPrisma().market.findMany({
+    where: { workspaceId: args.workspaceId, archivedAt: { not: null } },
+    orderBy: [{ archivedAt: 'desc' }, { id: 'asc' }],
+    select: { id: true, name: true, focalName: true, rivalName: true, archivedAt: true },
+  });
+  return rows.flatMap(({ archivedAt, ...row }) => (archivedAt ? [{ ...row, archivedAt }] : []));
+}
+
+/** @param whenArchived which markets may be changed so */
 async function updateMarket(
   args: { workspaceId: string; marketId: string; audit?: Deed },
   data: Prisma.MarketUpdateManyMutationInput,
+  whenArchived: null | { not: null } = null,
 ): Promise<boolean> {
   const { workspaceId, marketId, audit } = args;
   return getPrisma().$transaction(async (db) => {
     const { count } = await db.market.updateMany({
-      where: { id: marketId, workspaceId, archivedAt: null },
+      where: { id: marketId, workspaceId, archivedAt: whenArchived },
       data,
     });
     if (count !== 1) return false;

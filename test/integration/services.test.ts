@@ -7,6 +7,7 @@ import { getLogger } from '@/lib/jobs/log';
 import { closeSender } from '@/lib/jobs/sender';
 import { toCanonicalText } from '@/lib/series/canonical-text';
 import { addRevision } from '@/lib/services/add-revision';
+import { archiveMarket } from '@/lib/services/archive-market';
 import { cancelFit } from '@/lib/services/cancel-fit';
 import { TRY_LIMITS } from '@/lib/services/count-tries';
 import { createForecastLink } from '@/lib/services/create-forecast-link';
@@ -20,6 +21,7 @@ import { readFitProgress } from '@/lib/services/read-fit-progress';
 import { readIssued } from '@/lib/services/read-issued';
 import { type MarketPage, readMarket } from '@/lib/services/read-market';
 import { requestFit } from '@/lib/services/request-fit';
+import { restoreMarket } from '@/lib/services/restore-market';
 import { revokeForecastLink } from '@/lib/services/revoke-forecast-link';
 import { saveScenario } from '@/lib/services/save-scenario';
 import type { Viewer } from '@/lib/services/viewer';
@@ -312,6 +314,8 @@ describeOnDatabases('services', () => {
       requestFit: await requestFit(as, marketId),
       cancelFit: await cancelFit(as, marketId),
       editMarket: await editMarket(as, marketId, { name: 'Taken' }),
+      restoreMarket: await restoreMarket(as, marketId),
+      archiveMarket: await archiveMarket(as, marketId),
       saveScenario: await saveScenario(as, marketId, { name: 'Theirs', pushes: [PUSH] }),
       changeScenario: await saveScenario(as, own?.marketId ?? marketId, {
         scenarioId,

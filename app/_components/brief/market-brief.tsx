@@ -12,6 +12,7 @@ import { FitStanding } from '../fit/fit-standing';
 import { PageFrame } from '../frame/page-frame';
 import { IdentifiabilityStanding } from '../identifiability/identifiability-standing';
 import { IssueSection } from '../issue/issue-section';
+import { ArchivedNote } from '../markets/archived-note';
 import { TrustSection } from './trust-section';
 import { WhereSection } from './where-section';
 import { WhySection } from './why-section';
@@ -31,6 +32,7 @@ export function MarketBrief({ viewer, page, facts }: MarketBriefProps) {
       facts={<DataFacts page={page} dataLine={brief.dataLine} />}
       viewer={viewer}
     >
+      <ArchivedNote market={page.market} canWrite={canWrite} />
       <FitStanding page={page} canWrite={canWrite} />
       <WhereSection where={brief.where} />
       <WhySection why={brief.why} />

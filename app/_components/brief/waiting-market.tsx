@@ -6,6 +6,7 @@ import { HistoryFigure } from '../figures/history-figure';
 import { FitStanding } from '../fit/fit-standing';
 import { PageFrame } from '../frame/page-frame';
 import { Question } from '../frame/question';
+import { ArchivedNote } from '../markets/archived-note';
 
 interface WaitingMarketProps {
   viewer: Viewer;
@@ -17,6 +18,7 @@ export function WaitingMarket({ viewer, page }: WaitingMarketProps) {
   const months = `${series.focal.length} ${series.focal.length === 1 ? 'month' : 'months'}`;
   return (
     <PageFrame title={market.name} facts={`revision ${revision.number} · ${months}`} viewer={viewer}>
+      <ArchivedNote market={market} canWrite={canWrite(viewer)} />
       <FitStanding page={page} canWrite={canWrite(viewer)} />
       <Question
         id="known"

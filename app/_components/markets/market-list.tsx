@@ -1,29 +1,44 @@
-/** All markets of the workspace: outcome in words, odds strip, age of the data, state. */
+/** All markets of the workspace: outcome in words, odds strip, where the share is heading, age of the data, state. */
 import Link from 'next/link';
 import type { MarketSummary } from '@/lib/services/list-markets';
 import { OddsBar } from '../brief/odds-strip';
+import { ArchiveButton } from './archive-button';
 import styles from './market-list.module.css';
-import { sortByAttention, stripParts, wordData, wordOutcome, wordState } from './market-rows';
+import {
+  hasOldCounts,
+  sortByAttention,
+  stripParts,
+  wordData,
+  wordOutcome,
+  wordShare,
+  wordState,
+} from './market-rows';
 
 interface MarketListProps {
   markets: MarketSummary[];
   /** Month of the reader, for the age of the data. */
   thisMonth: number;
+  canWrite: boolean;
 }
 
-export function MarketList({ markets, thisMonth }: MarketListProps) {
+export function MarketList({ markets, thisMonth, canWrite }: MarketListProps) {
   return (
     <ul className={styles.list}>
-      {sortByAttention(markets).map((market) => (
-        <MarketRow key={market.id} market={market} thisMonth={thisMonth} />
+      {sortByAttention(markets, thisMonth).map((market) => (
+        <MarketRow key={market.id} market={market} thisMonth={thisMonth} canWrite={canWrite} />
       ))}
     </ul>
   );
 }
 
-function MarketRow({ market, thisMonth }: { market: MarketSummary; thisMonth: number }) {
+interface MarketRowProps extends Omit<MarketListProps, 'markets'> {
+  market: MarketSummary;
+}
+
+function MarketRow({ market, thisMonth, canWrite }: MarketRowProps) {
   const outcome = wordOutcome(market);
   const state = wordState(market);
+  const data = wordData(market, thisMonth);
   return (
     <li className={styles.row}>
       <div>
@@ -34,6 +49,11 @@ function MarketRow({ market, thisMonth }: { market: MarketSummary; thisMonth: nu
           {market.focalName} and {market.rivalName}
           {market.isDemo ? ', a demonstration' : ''}
         </p>
+        {canWrite ? (
+          <p className={styles.archive}>
+            <ArchiveButton marketId={market.id} name={market.name} />
+          </p>
+        ) : null}
       </div>
       <div>
         {outcome ? <p className={styles.outcome}>{outcome}</p> : null}
@@ -44,9 +64,10 @@ function MarketRow({ market, thisMonth }: { market: MarketSummary; thisMonth: nu
             isThin
           />
         ) : null}
+        <p className={styles.small}>{wordShare(market)}</p>
         <p className={styles.small}>
           {state ? <strong>{state}. </strong> : null}
-          {wordData(market, thisMonth)}
+          {hasOldCounts(market, thisMonth) ? <strong>{data}</strong> : data}
         </p>
       </div>
     </li>

@@ -40,6 +40,24 @@ export function stripParts(odds: Odds): StripPart[] {
   return OUTCOMES.map((outcome) => ({ outcome, tone: toneOfOutcome(outcome), width: 100 * odds[outcome] }));
 }
 
+/** Half a point of share: less than this is no direction. */
+const LEAST_MOVE = 0.005;
+
+/** "Ostrel’s share: from 58 % down to 43 % (38 to 49 %) by Sep 2027"; null without an outlook. */
+export function wordShare(market: MarketSummary): string | null {
+  const share = market.fit?.share;
+  if (!share) return null;
+  const { first, last, lastMonth } = share;
+  const band = `${numbers.chance(last.q50)} (${numbers.chanceInterval(last)})`;
+  const move = last.q50 - first.q50;
+  const isUnsure = first.q50 >= last.q05 && first.q50 <= last.q95;
+  const by = `by ${months.short(lastMonth)}`;
+  if (Math.abs(move) < LEAST_MOVE) return `${market.focalName}’s share: near ${band} ${by}`;
+  const way = move > 0 ? 'up to' : 'down to';
+  const told = `from ${numbers.chance(first.q50)} ${way} ${band} ${by}`;
+  return `${market.focalName}’s share: ${isUnsure ? 'perhaps ' : ''}${told}`;
+}
+
 /** "42 months to Dec 2025, 3 months old". @param thisMonth month of the reader */
 export function wordData({ lastMonth, months: count }: MarketSummary, thisMonth: number): string {
   if (lastMonth === null) return 'No counts yet';
@@ -65,14 +83,24 @@ export function wordState({ fit }: MarketSummary): string | null {
   }
 }
 
-/** Markets that ask for something come first, then by name. */
-export function sortByAttention(markets: MarketSummary[]): MarketSummary[] {
-  return [...markets].sort((a, b) => attentionOf(a) - attentionOf(b) || a.name.localeCompare(b.name, LOCALE));
+/** Counts older than this ask for new months, except in a demonstration. */
+const OLD_AFTER_MONTHS = 2;
+
+export function hasOldCounts({ lastMonth, isDemo }: MarketSummary, thisMonth: number): boolean {
+  return !isDemo && lastMonth !== null && thisMonth - lastMonth > OLD_AFTER_MONTHS;
 }
 
-function attentionOf({ fit }: MarketSummary): number {
+/** Markets that ask for something come first, then by name. */
+export function sortByAttention(markets: MarketSummary[], thisMonth: number): MarketSummary[] {
+  const place = (market: MarketSummary) => attentionOf(market, thisMonth);
+  return [...markets].sort((a, b) => place(a) - place(b) || a.name.localeCompare(b.name, LOCALE));
+}
+
+function attentionOf(market: MarketSummary, thisMonth: number): number {
+  const { fit } = market;
   if (fit?.state === 'failed') return 0;
   if (fit?.isStale) return 1;
   if (!fit || fit.state === 'cancelled') return 2;
-  return fit.state === 'done' ? 4 : 3;
+  if (fit.state !== 'done') return 3;
+  return hasOldCounts(market, thisMonth) ? 4 : 5;
 }

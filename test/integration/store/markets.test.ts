@@ -84,6 +84,17 @@ describeOnDatabases('markets', () => {
       expect(list[1]).toMatchObject({ isDemo: true, fit: null, revision: { number: 1 } });
     });
 
+    it('leave the list when archived and come back to it when restored, once each', async () => {
+      const { marketId } = await storeMarket(workspaceId);
+      expect(await markets.restoreMarket({ workspaceId, marketId })).toBe(false);
+      await markets.archiveMarket({ workspaceId, marketId });
+      expect(await markets.listMarkets({ workspaceId })).toEqual([]);
+      expect(await markets.listArchivedMarkets({ workspaceId })).toMatchObject([{ id: marketId }]);
+      expect(await markets.restoreMarket({ workspaceId, marketId })).toBe(true);
+      expect(await markets.listMarkets({ workspaceId })).toMatchObject([{ id: marketId }]);
+      expect(await markets.listArchivedMarkets({ workspaceId })).toEqual([]);
+    });
+
     it('change only what is named', async () => {
       const { marketId } = await storeMarket(workspaceId);
       expect(await markets.editMarket({ workspaceId, marketId, changes: { name: 'Day passes' } })).toBe(true);

@@ -33,6 +33,7 @@ describeOnDatabases('the scope of a workspace', () => {
       readMarket: await markets.readMarket({ ...stranger, marketId }),
       editMarket: await markets.editMarket({ ...stranger, marketId, changes: { name: 'x' } }),
       archiveMarket: await markets.archiveMarket({ ...stranger, marketId }),
+      restoreMarket: await markets.restoreMarket({ ...stranger, marketId }),
       readRevision: await revisions.readRevision({ ...stranger, revisionId }),
       readRevisionByNumber: await revisions.readRevisionByNumber({ ...stranger, marketId, number: 1 }),
       latestRevision: await revisions.latestRevision({ ...stranger, marketId }),

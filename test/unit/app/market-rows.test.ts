@@ -1,6 +1,12 @@
 /** The lines of the markets' list: outcome, age of the data, state, and what comes first. */
 import { describe, expect, it } from 'vitest';
-import { sortByAttention, wordData, wordOutcome, wordState } from '@/app/_components/markets/market-rows';
+import {
+  sortByAttention,
+  wordData,
+  wordOutcome,
+  wordShare,
+  wordState,
+} from '@/app/_components/markets/market-rows';
 import type { MarketSummary } from '@/lib/services/list-markets';
 
 type FitSummary = NonNullable<MarketSummary['fit']>;
@@ -10,6 +16,11 @@ const FIT: FitSummary = {
   state: 'done',
   odds: { coexistence: 0.95, exclusionByFocal: 0.01, exclusionByRival: 0.03, headStartDecides: 0.01 },
   decided: 'coexistence',
+  share: {
+    first: { q05: 0.57, q50: 0.58, q95: 0.59 },
+    last: { q05: 0.38, q50: 0.43, q95: 0.49 },
+    lastMonth: 2027 * 12 + 8,
+  },
   progress: null,
   isStale: false,
   failureCode: null,
@@ -63,6 +74,33 @@ describe('wordOutcome', () => {
   });
 });
 
+describe('wordShare', () => {
+  const share = (first: number, last: [number, number, number]) => ({
+    first: { q05: first, q50: first, q95: first },
+    last: { q05: last[0], q50: last[1], q95: last[2] },
+    lastMonth: LAST_MONTH,
+  });
+
+  it('tells where the share of the focal firm comes from and goes, with its band and month', () => {
+    expect(plain(wordShare(market('a')))).toBe(
+      'Quillfern’s share: from 58 % down to 43 % (38 to 49 %) by Sep 2027',
+    );
+  });
+
+  it('is careful when the band holds the share of now', () => {
+    expect(plain(wordShare(market('a', { share: share(0.5, [0.4, 0.55, 0.7]) })))).toBe(
+      'Quillfern’s share: perhaps from 50 % up to 55 % (40 to 70 %) by Dec 2025',
+    );
+  });
+
+  it('names no direction when the share hardly moves, and nothing without an outlook', () => {
+    expect(plain(wordShare(market('a', { share: share(0.5, [0.45, 0.501, 0.55]) })))).toBe(
+      'Quillfern’s share: near 50 % (45 to 55 %) by Dec 2025',
+    );
+    expect(wordShare(market('a', { share: null }))).toBeNull();
+  });
+});
+
 describe('wordData', () => {
   it('tells the age only when it is more than a month', () => {
     expect(wordData(market('a'), LAST_MONTH + 1)).toBe('42 months to Dec 2025');
@@ -86,8 +124,10 @@ describe('wordState', () => {
 });
 
 describe('sortByAttention', () => {
-  it('puts failed, stale and cancelled markets first, then those on their way, then the others by name', () => {
+  it('puts failed, stale and cancelled markets first, then those on their way, then old counts, then the others by name', () => {
     const markets = [
+      { ...market('old'), lastMonth: LAST_MONTH - 3 },
+      { ...market('old demonstration'), lastMonth: LAST_MONTH - 30, isDemo: true },
       market('fine b'),
       market('fine a'),
       market('running', { state: 'running' }),
@@ -95,7 +135,16 @@ describe('sortByAttention', () => {
       market('stale', { isStale: true }),
       market('failed', { state: 'failed', failureCode: 'failed' }),
     ];
-    const names = sortByAttention(markets).map(({ name }) => name);
-    expect(names).toEqual(['failed', 'stale', 'cancelled', 'running', 'fine a', 'fine b']);
+    const names = sortByAttention(markets, LAST_MONTH + 1).map(({ name }) => name);
+    expect(names).toEqual([
+      'failed',
+      'stale',
+      'cancelled',
+      'running',
+      'old',
+      'fine a',
+      'fine b',
+      'old demonstration',
+    ]);
   });
 });
