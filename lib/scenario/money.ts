@@ -58,5 +58,7 @@ export const moneyResultSchema = z.object({
   focal: firmMoneySchema,
   /** Null when the rival's margin is not given. */
   rival: firmMoneySchema.nullable(),
+  /** What the focal firm's own pushes are worth, the rival's being as they are; null unless both firms push. */
+  focalAnswer: firmMoneySchema.nullable(),
 });
 export type MoneyResult = z.infer<typeof moneyResultSchema>;

@@ -3,8 +3,7 @@
  * destination are worked out once; `compare` follows every draw under the pushes with the same code and the same random numbers, so a push
  * of size 0 gives the baseline to the last digit.
  */
-import { ForcedIntegrator } from '../dynamics/forced-trajectory';
-import { createForcing, type Forcing } from '../dynamics/forcing';
+import { createForcing } from '../dynamics/forcing';
 import { applyLastingPushes } from '../dynamics/lasting-push';
 import type { Push } from '../dynamics/push';
 import type { CompetitionSystem, State } from '../dynamics/system';
@@ -12,18 +11,17 @@ import type { DrawSet } from '../estimate/types';
 import { shareOf } from '../forecast/bands';
 import { intervalOf } from '../forecast/interval';
 import type { Bands, Interval, Odds } from '../forecast/report';
-import type { Checkpoint, ScenarioBands, ScenarioComparison, ScenarioEffect } from './comparison';
+import type { Checkpoint, Crossing, ScenarioBands, ScenarioComparison, ScenarioEffect } from './comparison';
+import { CountBands } from './count-bands';
+import { decidesByHeadStart, type PushedPath, tracePushedPath } from './draw-paths';
 import { findReason, findReturnMonth, findWorstMonth, isLastingPush, nameDestinationEffect } from './effect';
+import { FollowedDraws, type Levels } from './follow-draws';
+import type { Money, MoneyResult } from './money';
 import { BandMaker } from './scenario-bands';
-import {
-  drawErrorFactors,
-  drawShockFactors,
-  REPLICATES,
-  readScenarioDraws,
-  type ScenarioDraws,
-} from './scenario-draws';
 import { type Destination, describeSettling, findDestination, type SettlingPushes } from './settle';
+import type { PricedPush } from './spend';
 import { measureReturn, tallyDestinations, tallyOdds } from './tally';
+import { valuePushes } from './value-pushes';
 
 export interface ScenarioOptions {
   /** How far the bands reach, months after the last observed one. */
@@ -34,20 +32,17 @@ export interface ScenarioOptions {
 export interface PreparedScenario {
   readonly horizonMonths: number;
   readonly draws: number;
-  compare(pushes: readonly Push[]): ScenarioComparison;
+  /** The draws themselves, for answers that follow some of them under many pushes. */
+  readonly followed: FollowedDraws;
+  compare(pushes: readonly PricedPush[], money?: Money): ScenarioComparison;
+  /** Paths of `count` draws, evenly taken, as far as the horizon. */
+  samplePaths(pushes: readonly Push[], count: number): PushedPath[];
 }
 
 /** Months ahead at which the difference is told in numbers. */
 const CHECKPOINTS = [6, 12, 24];
 /** How far the return of the difference is followed, even beyond the horizon. */
 const LOOK_AHEAD_MONTHS = 60;
-
-/** Levels per future month and draw, month-major; share is the focal firm's. */
-interface Levels {
-  focal: Float64Array;
-  rival: Float64Array;
-  share: Float64Array;
-}
 
 /**
  * @throws RangeError when there is no draw or the horizon is no positive integer
@@ -63,20 +58,18 @@ export function prepareScenario(draws: DrawSet, options: ScenarioOptions): Prepa
 
 class PreparedDraws implements PreparedScenario {
   readonly draws: number;
-  private readonly months: number;
-  private readonly ready: ScenarioDraws;
-  private readonly shocks: Float64Array | null;
+  readonly followed: FollowedDraws;
   private readonly baseline: Levels;
   private readonly pushed: Levels;
   private readonly difference: Levels;
-  private readonly counts: Levels;
-  private readonly factors: { focal: Float64Array; rival: Float64Array };
   private readonly levelBands: BandMaker;
-  private readonly countBands: BandMaker;
+  private readonly countBands: CountBands;
   private readonly baselineCounts: ScenarioBands;
   private readonly oddsBefore: Odds;
   private readonly destinations: Destination[];
   private readonly returnHalfLife: Interval | null;
+  /** Levels under the rival's pushes alone; made when first asked for. */
+  private answered: Levels | null = null;
 
   constructor(
     draws: DrawSet,
@@ -84,36 +77,26 @@ class PreparedDraws implements PreparedScenario {
     seed: number,
   ) {
     this.draws = draws.count;
-    this.months = Math.max(horizonMonths, LOOK_AHEAD_MONTHS);
-    this.ready = readScenarioDraws(draws);
-    this.shocks = drawShockFactors(draws, this.months, seed);
-    this.baseline = createLevels(this.months * draws.count);
-    this.pushed = createLevels(this.months * draws.count);
-    this.difference = createLevels(this.months * draws.count);
-    this.counts = createLevels(horizonMonths * draws.count * REPLICATES);
-    this.factors = {
-      focal: drawErrorFactors(draws, 1, horizonMonths, seed),
-      rival: drawErrorFactors(draws, 2, horizonMonths, seed),
-    };
+    this.followed = new FollowedDraws(draws, Math.max(horizonMonths, LOOK_AHEAD_MONTHS), seed);
+    this.baseline = this.followed.createLevels();
+    this.pushed = this.followed.createLevels();
+    this.difference = this.followed.createLevels();
     this.levelBands = new BandMaker(draws.count);
-    this.countBands = new BandMaker(draws.count * REPLICATES);
+    this.countBands = new CountBands(draws, horizonMonths, seed);
     const unforced = createForcing([]);
-    this.fillLevels(unforced, this.baseline);
-    this.baselineCounts = this.bandCounts(this.baseline);
-    this.destinations = this.findDestinations(
-      this.ready.systems,
-      this.baseline,
-      describeSettling([], unforced),
-    );
-    this.oddsBefore = tallyOdds(this.ready.systems);
-    this.returnHalfLife = measureReturn(this.ready.systems, this.destinations);
+    this.followed.fillLevels(unforced, this.baseline);
+    this.baselineCounts = this.countBands.of(this.baseline);
+    const { systems } = this.followed;
+    this.destinations = this.findDestinations(systems, this.baseline, describeSettling([], unforced));
+    this.oddsBefore = tallyOdds(systems);
+    this.returnHalfLife = measureReturn(systems, this.destinations);
   }
 
-  compare(pushes: readonly Push[]): ScenarioComparison {
+  compare(pushes: readonly PricedPush[], money?: Money): ScenarioComparison {
     const forcing = createForcing(pushes);
-    this.fillLevels(forcing, this.pushed);
+    this.followed.fillLevels(forcing, this.pushed);
     this.fillDifference();
-    const lasting = this.ready.systems.map((system) => applyLastingPushes(system, pushes));
+    const lasting = this.followed.systems.map((system) => applyLastingPushes(system, pushes));
     const after = this.findDestinations(lasting, this.pushed, describeSettling(pushes, forcing));
     const difference = this.bandDifference();
     return {
@@ -121,7 +104,7 @@ class PreparedDraws implements PreparedScenario {
       draws: this.draws,
       pushes: [...pushes],
       baseline: this.baselineCounts,
-      pushed: this.bandCounts(this.pushed),
+      pushed: this.countBands.of(this.pushed),
       difference: this.cutToHorizon(difference),
       checkpoints: CHECKPOINTS.filter((month) => month <= this.horizonMonths).map((month) =>
         this.checkpoint(month),
@@ -129,33 +112,18 @@ class PreparedDraws implements PreparedScenario {
       odds: { before: this.oddsBefore, after: tallyOdds(lasting) },
       destinations: { before: tallyDestinations(this.destinations), after: tallyDestinations(after) },
       effect: this.describeEffect(pushes, after, difference.share),
+      crossing: this.countCrossings(lasting, after),
+      ...(money ? { money: this.countMoney(pushes, money) } : {}),
     };
   }
 
-  /** Follows every draw. A draw that cannot be followed on stays where it is, with and without pushes. */
-  private fillLevels(forcing: Forcing, out: Levels): void {
-    const { count, systems, starts } = this.ready;
-    const { shocks } = this;
-    for (let i = 0; i < count; i++) {
-      const path = new ForcedIntegrator(systems[i]!, starts[i]!, forcing);
-      let [n1, n2] = starts[i]!;
-      let isFollowed = true;
-      for (let h = 0; h < this.months; h++) {
-        const at = h * count + i;
-        isFollowed = isFollowed && path.advanceFrom(h) === 'complete';
-        if (isFollowed) {
-          if (shocks) {
-            path.users1 *= shocks[2 * at]!;
-            path.users2 *= shocks[2 * at + 1]!;
-          }
-          n1 = path.users1;
-          n2 = path.users2;
-        }
-        out.focal[at] = n1;
-        out.rival[at] = n2;
-        out.share[at] = shareOf(n1, n2);
-      }
-    }
+  samplePaths(pushes: readonly Push[], count: number): PushedPath[] {
+    const { systems, starts } = this.followed;
+    const taken = Math.min(count, this.draws);
+    return Array.from({ length: taken }, (_, k) => {
+      const i = Math.floor((k * this.draws) / taken);
+      return tracePushedPath(systems[i]!, starts[i]!, pushes, this.horizonMonths);
+    });
   }
 
   private fillDifference(): void {
@@ -166,27 +134,13 @@ class PreparedDraws implements PreparedScenario {
     }
   }
 
-  /** Bands of future counts: level times error, the same errors for every scenario. */
-  private bandCounts(levels: Levels): ScenarioBands {
-    const { counts, factors, horizonMonths } = this;
-    for (let at = 0; at < counts.focal.length; at++) {
-      const level = Math.floor(at / REPLICATES);
-      const focal = levels.focal[level]! * factors.focal[at]!;
-      const rival = levels.rival[level]! * factors.rival[at]!;
-      counts.focal[at] = focal;
-      counts.rival[at] = rival;
-      counts.share[at] = shareOf(focal, rival);
-    }
-    return bandsOf(counts, (values) => this.countBands.bands(values, horizonMonths));
-  }
-
-  /** Over all months that were followed, the horizon and beyond. */
+  /** Share over all months that were followed, the horizon and beyond. */
   private bandDifference(): ScenarioBands {
-    const { difference, horizonMonths, months, levelBands } = this;
+    const { difference, horizonMonths, followed, levelBands } = this;
     return {
       focal: levelBands.bands(difference.focal, horizonMonths),
       rival: levelBands.bands(difference.rival, horizonMonths),
-      share: levelBands.bands(difference.share, months),
+      share: levelBands.bands(difference.share, followed.months),
     };
   }
 
@@ -205,17 +159,27 @@ class PreparedDraws implements PreparedScenario {
    * destination is that of the system without shocks.
    */
   private findDestinations(
-    lasting: CompetitionSystem[],
+    lasting: readonly CompetitionSystem[],
     levels: Levels,
     settling: SettlingPushes,
   ): Destination[] {
-    const { count, systems, starts } = this.ready;
-    const last = (this.months - 1) * count;
+    const { count, systems, starts, months, shocks } = this.followed;
+    const last = (months - 1) * count;
     return lasting.map((system, i) => {
       const state: State = [levels.focal[last + i]!, levels.rival[last + i]!];
-      const from = this.shocks ? { month: 0, state: starts[i]! } : { month: this.months, state };
+      const from = shocks ? { month: 0, state: starts[i]! } : { month: months, state };
       return findDestination(systems[i]!, system, from, settling);
     });
+  }
+
+  private countCrossings(lasting: readonly CompetitionSystem[], after: readonly Destination[]): Crossing {
+    const crossing = { draws: 0, crossed: 0 };
+    lasting.forEach((system, i) => {
+      if (!decidesByHeadStart(system) || !decidesByHeadStart(this.followed.systems[i]!)) return;
+      crossing.draws++;
+      if (after[i]!.survivors !== this.destinations[i]!.survivors) crossing.crossed++;
+    });
+    return crossing;
   }
 
   private checkpoint(monthsAhead: number): Checkpoint {
@@ -230,6 +194,34 @@ class PreparedDraws implements PreparedScenario {
       pushed: at(this.pushed),
       baseline: at(this.baseline),
     };
+  }
+
+  private countMoney(pushes: readonly PricedPush[], money: Money): MoneyResult {
+    const { baseline, pushed, draws } = this;
+    const months = Math.min(money.months ?? this.horizonMonths, this.followed.months);
+    const common = { pushes, money, months, draws };
+    return {
+      assumed: money,
+      months,
+      focal: valuePushes({ ...common, firm: 1, pushed: pushed.focal, baseline: baseline.focal }),
+      rival:
+        money.marginPerUserMonth.rival === null
+          ? null
+          : valuePushes({ ...common, firm: 2, pushed: pushed.rival, baseline: baseline.rival }),
+      focalAnswer: this.hasBothFirms(pushes)
+        ? valuePushes({ ...common, firm: 1, pushed: pushed.focal, baseline: this.answerTo(pushes).focal })
+        : null,
+    };
+  }
+
+  private hasBothFirms(pushes: readonly PricedPush[]): boolean {
+    return ([1, 2] as const).every((firm) => pushes.some((push) => push.firm === firm && push.size > 0));
+  }
+
+  private answerTo(pushes: readonly PricedPush[]): Levels {
+    this.answered ??= this.followed.createLevels();
+    this.followed.fillLevels(createForcing(pushes.filter(({ firm }) => firm === 2)), this.answered);
+    return this.answered;
   }
 
   private describeEffect(pushes: readonly Push[], after: Destination[], share: Bands): ScenarioEffect {
@@ -254,21 +246,9 @@ class PreparedDraws implements PreparedScenario {
         q50: medians[worst]!,
         q95: share.q95[worst]!,
       },
-      followedMonths: this.months,
+      followedMonths: this.followed.months,
       backWithinHalfPointMonth: back === null ? null : back + 1,
       returnHalfLifeMonths: this.returnHalfLife,
     };
   }
-}
-
-function createLevels(length: number): Levels {
-  return {
-    focal: new Float64Array(length),
-    rival: new Float64Array(length),
-    share: new Float64Array(length),
-  };
-}
-
-function bandsOf(levels: Levels, band: (values: Float64Array) => Bands): ScenarioBands {
-  return { focal: band(levels.focal), rival: band(levels.rival), share: band(levels.share) };
 }

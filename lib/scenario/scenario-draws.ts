@@ -4,14 +4,15 @@
  *
  *   count(h) = level(h) exp(e(h)),   e(h) = phi e(h-1) + s sqrt(1 - phi^2) z(h),   e(0) the error in the last observed month
  *
- * With process noise the level itself is shaken once a month, by exp(noise z), and e(h) = s z(h) has no memory.
+ * With process noise the level itself is shaken once a month, by exp(noise z), and e(h) = s z(h) has no memory; where the draws have a
+ * yearly cycle its offset is part of e(h).
  * Each draw has REPLICATES errors in antithetic pairs (z and -z), so that the quantiles of counts are smooth.
  */
 import type { CompetitionSystem, State } from '../dynamics/system';
 import { readColumn } from '../estimate/draws';
 import type { DrawSet } from '../estimate/types';
 import { readDrawTable } from '../forecast/draw-table';
-import { drawShocks } from '../forecast/simulate';
+import { drawShocks, readSeasonFactors } from '../forecast/simulate';
 import { createStream } from '../numeric/random';
 
 /** Errors per draw; even. */
@@ -53,6 +54,7 @@ export function drawErrorFactors(draws: DrawSet, firm: 1 | 2, months: number, se
   const hasMemory = draws.errorModel === 'ar1';
   const persistence = hasMemory ? readColumn(draws, `persistence${firm}`) : new Float64Array(draws.count);
   const residual = hasMemory ? readColumn(draws, `residual${firm}`) : new Float64Array(draws.count);
+  const season = readSeasonFactors(draws, firm, months);
   const stream = createStream(seed, ERROR_STREAM + firm - 1);
   const factors = new Float64Array(months * draws.count * REPLICATES);
   for (let i = 0; i < draws.count; i++) {
@@ -64,9 +66,10 @@ export function drawErrorFactors(draws: DrawSet, firm: 1 | 2, months: number, se
       for (let h = 0; h < months; h++) {
         carried *= phi;
         noise = phi * noise + fresh * stream.normal();
+        const cycle = season ? season[h * draws.count + i]! : 1;
         const at = (h * draws.count + i) * REPLICATES + pair;
-        factors[at] = Math.exp(carried + noise);
-        factors[at + 1] = Math.exp(carried - noise);
+        factors[at] = cycle * Math.exp(carried + noise);
+        factors[at + 1] = cycle * Math.exp(carried - noise);
       }
     }
   }

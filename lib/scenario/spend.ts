@@ -15,6 +15,9 @@ export interface SpendResponse {
   mostPerMonth: number | null;
 }
 
+/** Part of the most that money can buy up to which pushes are looked at: it costs 19 times what buys half of it. */
+export const MOST_OF_RESPONSE = 0.95;
+
 /** A push that may carry its price. */
 export interface PricedPush extends Push {
   /** Money per month from the start to the end of the push, ramp included; what fades after the end costs nothing. Absent: not priced. */

@@ -8,7 +8,7 @@ import type { Interval, Odds } from '../forecast/report';
 import type { Destinations } from './comparison';
 import type { Destination, Survivors } from './settle';
 
-export function tallyOdds(systems: CompetitionSystem[]): Odds {
+export function tallyOdds(systems: readonly CompetitionSystem[]): Odds {
   return computeOdds(
     Float64Array.from(systems, ({ alpha }) => alpha),
     Float64Array.from(systems, ({ beta }) => beta),
@@ -24,7 +24,10 @@ export function tallyDestinations(found: Destination[]): Destinations {
 const PLACES = { shared: 'shared', focalAlone: 'firstAlone', rivalAlone: 'secondAlone' } as const;
 
 /** Half-life of return at the destination, months, over the draws that have one; null when none has. */
-export function measureReturn(systems: CompetitionSystem[], destinations: Destination[]): Interval | null {
+export function measureReturn(
+  systems: readonly CompetitionSystem[],
+  destinations: readonly Destination[],
+): Interval | null {
   const halfLives = systems.flatMap((system, i) => {
     const place = PLACES[destinations[i]!.survivors];
     const rest = findEquilibria(system).find((one) => one.place === place);

@@ -1,0 +1,163 @@
+/**
+ * Break-even spend: the most money a month at which a push is expected to return what it costs, the other pushes of the scenario being
+ * as they are. With G the discounted margin that the push gains (mean over draws) and D the discounted months that it is paid for,
+ *
+ *   spend = G / D                      a push whose effect is given
+ *   largest s with G(u(s)) = s D       recruits bought by spending, u(s) of `spend.ts`
+ *
+ * The second is bisected below G(R)/D, which no spend can return since G rises with the recruits.
+ */
+import { createForcing } from '../dynamics/forcing';
+import { intervalOf } from '../forecast/interval';
+import { type AnswerRun, WorkMeter } from './answer-run';
+import type { BreakEven } from './answers';
+import type { FollowedDraws, Levels } from './follow-draws';
+import type { Money } from './money';
+import type { PreparedScenario } from './prepare-scenario';
+import { roundDownToThreeDigits } from './round-digits';
+import { type PricedPush, recruitsForSpend, type SpendResponse } from './spend';
+import { listDiscounts, listPaidMonths, sumGains } from './value-pushes';
+
+export interface BreakEvenQuestion {
+  /** The push whose price is asked for. */
+  push: PricedPush;
+  /** The other pushes of the scenario. */
+  pushes: readonly PricedPush[];
+  money: Money;
+}
+
+/** Spends tried, each half the one above, before it is said that none pays. */
+const HALVINGS = 14;
+/** Doublings of the spend while every recruit costs the same and still pays. */
+const MAX_DOUBLINGS = 30;
+/** Halvings of the last step of a factor 2: 0.4 %, below what three digits show. */
+const BISECTIONS = 8;
+/** Recruits a month that are tried first where no limit is given, as part of the firm's users. */
+const FIRST_RECRUITS = 0.05;
+
+/** @throws RangeError when the margin of the pushing firm is not given */
+export function* findBreakEven(
+  prepared: PreparedScenario,
+  { push, pushes, money }: BreakEvenQuestion,
+): AnswerRun<BreakEven> {
+  const months = Math.min(money.months ?? prepared.horizonMonths, prepared.followed.months);
+  const gains = new GainCounter(prepared.followed, { push, pushes, money }, months);
+  yield* gains.prepare();
+  if (!(gains.paidMonths > 0)) return { code: 'never-pays' };
+  return push.response ? yield* findByResponse(gains, push.response) : yield* findBySize(gains, push.size);
+}
+
+function* findBySize(gains: GainCounter, size: number): AnswerRun<BreakEven> {
+  const perDraw = yield* gains.ofSize(size);
+  const expected = mean(perDraw) / gains.paidMonths;
+  if (!(expected > 0)) return { code: 'never-pays' };
+  return {
+    code: 'found',
+    spendPerMonth: roundDownToThreeDigits(expected),
+    interval: intervalOf(perDraw.map((gain) => gain / gains.paidMonths)),
+  };
+}
+
+function* findByResponse(gains: GainCounter, response: SpendResponse): AnswerRun<BreakEven> {
+  const pays = function* (spend: number): AnswerRun<boolean> {
+    const gained = mean(yield* gains.ofSize(recruitsForSpend(spend, response)));
+    return gained >= spend * gains.paidMonths;
+  };
+  const top = yield* findTopSpend(gains, response, pays);
+  if (yield* pays(top)) return { code: 'always-pays', spendPerMonth: top };
+  let high = top;
+  let low = high / 2;
+  let halvings = 1;
+  while (!(yield* pays(low))) {
+    if (++halvings > HALVINGS) return { code: 'never-pays' };
+    high = low;
+    low /= 2;
+  }
+  for (let k = 0; k < BISECTIONS; k++) {
+    const middle = (low + high) / 2;
+    if (yield* pays(middle)) low = middle;
+    else high = middle;
+  }
+  return { code: 'found', spendPerMonth: roundDownToThreeDigits(low), interval: null };
+}
+
+/** A spend that does not return; where every recruit costs the same and none is found, the largest looked at. */
+function* findTopSpend(
+  gains: GainCounter,
+  { costPerRecruit, mostPerMonth }: SpendResponse,
+  pays: (spend: number) => AnswerRun<boolean>,
+): AnswerRun<number> {
+  if (mostPerMonth !== null) {
+    const most = mean(yield* gains.ofSize(mostPerMonth)) / gains.paidMonths;
+    return Math.max(most * (1 + 1e-9), Number.MIN_VALUE);
+  }
+  let spend = costPerRecruit * FIRST_RECRUITS * gains.typicalUsers;
+  for (let k = 0; k < MAX_DOUBLINGS && (yield* pays(spend)); k++) spend *= 2;
+  return spend;
+}
+
+/** Discounted margin that one push gains in each draw, at any size. */
+class GainCounter {
+  /** Discounted months that the push is paid for. */
+  readonly paidMonths: number;
+  private readonly discounts: Float64Array;
+  private readonly baseline: Levels;
+  private readonly pushed: Levels;
+  private readonly meter: WorkMeter;
+
+  constructor(
+    private readonly followed: FollowedDraws,
+    private readonly question: BreakEvenQuestion,
+    private readonly months: number,
+  ) {
+    const { push, money } = question;
+    this.discounts = listDiscounts(money.discountRatePerYear, months);
+    this.paidMonths = listPaidMonths(push, months).reduce(
+      (sum, part, h) => sum + part * this.discounts[h]!,
+      0,
+    );
+    this.baseline = followed.createLevels();
+    this.pushed = followed.createLevels();
+    const passes = push.response ? BISECTIONS + HALVINGS / 2 : 2;
+    this.meter = new WorkMeter(passes * followed.count * followed.months);
+  }
+
+  /** Users of the pushing firm in the last observed month. */
+  get typicalUsers(): number {
+    return this.followed.starts[0]![this.question.push.firm - 1]!;
+  }
+
+  *prepare(): AnswerRun<void> {
+    yield* this.fill([...this.question.pushes], this.baseline);
+  }
+
+  *ofSize(size: number): AnswerRun<Float64Array> {
+    const { push, pushes, money } = this.question;
+    yield* this.fill([...pushes, { ...push, size }], this.pushed);
+    const key = push.firm === 1 ? 'focal' : 'rival';
+    return sumGains(
+      {
+        firm: push.firm,
+        money,
+        months: this.months,
+        draws: this.followed.count,
+        pushed: this.pushed[key],
+        baseline: this.baseline[key],
+      },
+      this.discounts,
+    );
+  }
+
+  private *fill(pushes: PricedPush[], out: Levels): AnswerRun<void> {
+    const forcing = createForcing(pushes);
+    const { followed, months, meter } = this;
+    for (let i = 0; i < followed.count; i++) {
+      followed.fillDraw(forcing, i, months, out);
+      if (meter.add(months)) yield meter.progress;
+    }
+  }
+}
+
+function mean(values: Float64Array): number {
+  return values.reduce((sum, value) => sum + value, 0) / values.length;
+}
