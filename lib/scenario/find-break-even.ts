@@ -28,12 +28,11 @@ export interface BreakEvenQuestion {
 
 /** Spends tried, each half the one above, before it is said that none pays. */
 const HALVINGS = 14;
-/** Doublings of the spend while every recruit costs the same and still pays. */
-const MAX_DOUBLINGS = 30;
 /** Halvings of the last step of a factor 2: 0.4 %, below what three digits show. */
 const BISECTIONS = 8;
-/** Recruits a month that are tried first where no limit is given, as part of the firm's users. */
-const FIRST_RECRUITS = 0.05;
+/** Recruits a month that are tried where no limit is given, as parts of both firms' users: doubled from the first to the last. */
+const FIRST_RECRUITS = 1 / 64;
+const LAST_RECRUITS = 1;
 
 /** @throws RangeError when the margin of the pushing firm is not given */
 export function* findBreakEven(
@@ -91,9 +90,10 @@ function* findTopSpend(
     const most = mean(yield* gains.ofSize(mostPerMonth)) / gains.paidMonths;
     return Math.max(most * (1 + 1e-9), Number.MIN_VALUE);
   }
-  let spend = costPerRecruit * FIRST_RECRUITS * gains.typicalUsers;
-  for (let k = 0; k < MAX_DOUBLINGS && (yield* pays(spend)); k++) spend *= 2;
-  return spend;
+  let recruits = FIRST_RECRUITS * gains.marketUsers;
+  while (recruits < LAST_RECRUITS * gains.marketUsers && (yield* pays(recruits * costPerRecruit)))
+    recruits *= 2;
+  return recruits * costPerRecruit;
 }
 
 /** Discounted margin that one push gains in each draw, at any size. */
@@ -122,9 +122,10 @@ class GainCounter {
     this.meter = new WorkMeter(passes * followed.count * followed.months);
   }
 
-  /** Users of the pushing firm in the last observed month. */
-  get typicalUsers(): number {
-    return this.followed.starts[0]![this.question.push.firm - 1]!;
+  /** Users of both firms in the last observed month. */
+  get marketUsers(): number {
+    const [n1, n2] = this.followed.starts[0]!;
+    return n1 + n2;
   }
 
   *prepare(): AnswerRun<void> {

@@ -8,7 +8,6 @@
 import { ForcedIntegrator } from '../dynamics/forced-trajectory';
 import { createForcing, type Forcing } from '../dynamics/forcing';
 import { shareOf } from '../forecast/bands';
-import { quantiles } from '../numeric/quantile';
 import { type AnswerRun, WorkMeter } from './answer-run';
 import type { Reach, Target } from './answers';
 import type { FollowedDraws } from './follow-draws';
@@ -89,10 +88,9 @@ export class TargetCheck {
 
   /** @param shares one per draw */
   reachOf(shares: ArrayLike<number>): Reach {
-    let kept = 0;
-    for (let i = 0; i < shares.length; i++) if (this.keeps(shares[i]!)) kept++;
-    const [shareKept] = quantiles(shares, [1 - this.target.chance]);
-    return { chance: kept / this.count, shareKept: shareKept! };
+    const sorted = Float64Array.from(shares).sort();
+    const kept = sorted.reduce((sum, share) => sum + (this.keeps(share) ? 1 : 0), 0);
+    return { chance: kept / this.count, shareKept: sorted[this.count - this.needed]! };
   }
 
   listBaseShares(): Float64Array {
