@@ -3,8 +3,8 @@
  * nonce for each request, so it lives in proxy.ts.
  */
 
-/** Largest form: a table of MAX_UPLOAD_BYTES (app/_lib/upload-limit.ts) with its envelope. */
-const LARGEST_FORM = '5mb';
+/** Largest form: a series of the longest span with a reason for each month (lib/services/forms.ts). Files are read in the browser. */
+const LARGEST_FORM = '500kb';
 
 const headersForAll = [
   { key: 'X-Content-Type-Options', value: 'nosniff' },

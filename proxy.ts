@@ -23,6 +23,7 @@ function writePolicy(nonce: string, isDevelopment: boolean, isHttps: boolean): s
     `img-src 'self' data: blob:`,
     `font-src 'self'`,
     `connect-src 'self'${isDevelopment ? ' ws:' : ''}`,
+    `worker-src 'self'`,
     `object-src 'none'`,
     `base-uri 'none'`,
     `form-action 'self'`,

@@ -1,5 +1,5 @@
 /**
- * Largest table that a form carries, bytes. A century of months has a few kilobytes; next.config.js lets forms of this size,
- * with their envelope, through.
+ * Largest file that is read, bytes, and longest paste, characters. Files are read in the browser; what is sent is the series that
+ * was understood, a few kilobytes.
  */
-export const MAX_UPLOAD_BYTES = 4_000_000;
+export const MAX_FILE_BYTES = 20_000_000;

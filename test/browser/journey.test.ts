@@ -170,7 +170,7 @@ describe.sequential('from a file to a link', () => {
     await page.goto(`${marketUrl}/data`);
     expect(await findViolations(page)).toEqual([]);
     const rows = readFileSync(SERIES_FILE, 'utf8').trimEnd();
-    await page.getByLabel('The table, with its header').fill(`${rows}\n2022-03,350,18\n`);
+    await page.getByLabel('Or paste the cells, with their header').fill(`${rows}\n2022-03,350,18\n`);
     await page.getByRole('button', { name: /Store revision 2/ }).click();
     await page.waitForURL(marketUrl);
     await reader.page.reload();

@@ -4,7 +4,7 @@
  * The months of a market as a grid for small corrections: arrow keys move, typing or Enter changes a cell, Escape leaves it, a
  * column can be pasted. What was changed is marked; nothing is stored before the difference was looked at.
  */
-import { useEffect, useId, useMemo, useRef } from 'react';
+import { useEffect, useId, useMemo, useRef, useState } from 'react';
 import { LOCALE } from '@/app/_lib/locale';
 import { createMonthFormat } from '@/lib/brief/month-words';
 import { compareSeries, readerOf } from '@/lib/series/compare-series';
@@ -20,7 +20,9 @@ import { type Grid, useGrid } from './use-grid';
 
 const months = createMonthFormat(LOCALE);
 
-export function CountGrid({ base }: { base: RevisionBase }) {
+export function CountGrid({ base: newest }: { base: RevisionBase }) {
+  // Kept: when the page comes again with a newer revision, the corrections still belong to this one.
+  const [base] = useState(newest);
   const grid = useGrid(base);
   const content = useMemo(() => fromMonths(grid.rows), [grid.rows]);
   const changed = useMemo(() => compareSeries(base, content).length, [base, content]);

@@ -1,15 +1,15 @@
 'use client';
 
 /** Which column is the month, which the focal firm's count, which the rival's; and how to read a table that could be read two ways. */
-import type { DateOrder, DecimalMark, SeriesMapping, SeriesProblem, TableReading } from '@/lib/series/types';
+import type { DateOrder, DecimalMark, SeriesMapping, SeriesProblem } from '@/lib/series/types';
 import { ChoiceField } from '../controls/choice-field';
 import styles from './columns-step.module.css';
+import { TableSample } from './table-sample';
+import type { Understood } from './understand';
 
 interface ColumnsStepProps {
-  table: TableReading;
+  understood: Understood;
   mapping: SeriesMapping;
-  /** Problems of the reading: an ambiguous cell brings the choice that settles it. */
-  problems: SeriesProblem[];
   onChange: (mapping: SeriesMapping) => void;
 }
 
@@ -25,51 +25,55 @@ const DATE_ORDERS = [
   { value: 'month-first', label: 'month first: 01/31/2024' },
 ];
 
-export function ColumnsStep({ table, mapping, problems, onChange }: ColumnsStepProps) {
-  const options = table.header.map((name) => ({ value: name, label: name }));
+export function ColumnsStep({ understood, mapping, onChange }: ColumnsStepProps) {
+  const { problems } = understood.reading;
+  const options = understood.header.map((name) => ({ value: name, label: name }));
   const isDateOpen = mapping.dateOrder !== undefined || hasCode(problems, 'month-ambiguous');
   const isMarkOpen = mapping.decimalMark !== undefined || hasCode(problems, 'count-ambiguous');
   return (
-    <div className={styles.columns}>
-      <ChoiceField
-        label="Month"
-        value={mapping.month}
-        options={options}
-        onChange={(event) => onChange({ ...mapping, month: event.target.value })}
-      />
-      <ChoiceField
-        label="Focal firm: whose side the brief takes"
-        value={mapping.focal}
-        options={options}
-        onChange={(event) => onChange({ ...mapping, focal: event.target.value })}
-      />
-      <ChoiceField
-        label="Rival"
-        value={mapping.rival}
-        options={options}
-        onChange={(event) => onChange({ ...mapping, rival: event.target.value })}
-      />
-      {isDateOpen ? (
+    <>
+      <TableSample understood={understood} mapping={mapping} />
+      <div className={styles.columns}>
         <ChoiceField
-          label="Dates are written with"
-          value={mapping.dateOrder ?? ''}
-          options={DATE_ORDERS}
-          onChange={(event) =>
-            onChange({ ...mapping, dateOrder: (event.target.value || undefined) as DateOrder })
-          }
+          label="Month"
+          value={mapping.month}
+          options={options}
+          onChange={(event) => onChange({ ...mapping, month: event.target.value })}
         />
-      ) : null}
-      {isMarkOpen ? (
         <ChoiceField
-          label="Fractions are written with"
-          value={mapping.decimalMark ?? ''}
-          options={DECIMAL_MARKS}
-          onChange={(event) =>
-            onChange({ ...mapping, decimalMark: (event.target.value || undefined) as DecimalMark })
-          }
+          label="Focal firm: whose side the brief takes"
+          value={mapping.focal}
+          options={options}
+          onChange={(event) => onChange({ ...mapping, focal: event.target.value })}
         />
-      ) : null}
-    </div>
+        <ChoiceField
+          label="Rival"
+          value={mapping.rival}
+          options={options}
+          onChange={(event) => onChange({ ...mapping, rival: event.target.value })}
+        />
+        {isDateOpen ? (
+          <ChoiceField
+            label="Dates are written with"
+            value={mapping.dateOrder ?? ''}
+            options={DATE_ORDERS}
+            onChange={(event) =>
+              onChange({ ...mapping, dateOrder: (event.target.value || undefined) as DateOrder })
+            }
+          />
+        ) : null}
+        {isMarkOpen ? (
+          <ChoiceField
+            label="Fractions are written with"
+            value={mapping.decimalMark ?? ''}
+            options={DECIMAL_MARKS}
+            onChange={(event) =>
+              onChange({ ...mapping, decimalMark: (event.target.value || undefined) as DecimalMark })
+            }
+          />
+        ) : null}
+      </div>
+    </>
   );
 }
 

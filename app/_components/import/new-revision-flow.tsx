@@ -1,6 +1,7 @@
 'use client';
 
-/** The next revision of a market's counts: the table, its columns, what was understood. Earlier revisions stay as they are. */
+/** The next revision of a market's counts: the table, its columns, what was understood, the difference. Earlier revisions stay. */
+import { useState } from 'react';
 import { keepExclusions } from '@/lib/series/exclusions';
 import { type RevisionBase, StoreRevision } from '../data/store-revision';
 import { Question } from '../frame/question';
@@ -8,16 +9,21 @@ import { ColumnsStep } from './columns-step';
 import styles from './flow.module.css';
 import { SourceStep } from './source-step';
 import { UnderstoodStep } from './understood-step';
-import { useReading } from './use-reading';
+import { type Reading, useReading } from './use-reading';
 
 interface NewRevisionFlowProps {
   base: RevisionBase;
   unit: string;
+  /** Files of earlier revisions, by their hash: the same file again is told at once. */
+  knownFiles: { number: number; fileHash: string }[];
 }
 
-export function NewRevisionFlow({ base, unit }: NewRevisionFlowProps) {
+export function NewRevisionFlow({ base: newest, unit, knownFiles }: NewRevisionFlowProps) {
+  // Kept: when the page comes again with a newer revision, what was read still belongs to this one.
+  const [base] = useState(newest);
   const reading = useReading();
-  const { table, mapping, series } = reading;
+  const { understood, choices } = reading;
+  const known = knownFiles.find(({ fileHash }) => fileHash === reading.fileHash);
   return (
     <>
       <Question
@@ -25,49 +31,48 @@ export function NewRevisionFlow({ base, unit }: NewRevisionFlowProps) {
         question="Are there newer counts?"
         note={<p>Give the whole series again, old months included: corrections count too.</p>}
       >
-        <SourceStep source={reading.source} onChange={reading.setSource} />
+        <SourceStep reading={reading} />
+        {known ? (
+          <p className={styles.known}>
+            This is the very file that revision {known.number} came from.{' '}
+            {known.number === base.number ? 'Storing it again would change nothing.' : ''}
+          </p>
+        ) : null}
       </Question>
-      {table ? (
+      {understood ? (
         <Question id="understood" question="What was understood?" note={<p>Nothing is stored yet.</p>}>
-          {mapping && series ? (
-            <>
-              <ColumnsStep
-                table={table}
-                mapping={mapping}
-                problems={series.problems}
-                onChange={reading.setMapping}
-              />
-              <div className={styles.understood}>
-                <UnderstoodStep
-                  reading={series}
-                  focalName={base.focalName}
-                  rivalName={base.rivalName}
-                  unit={unit}
-                />
-              </div>
-              {series.series && reading.canFit ? (
-                <StoreRevision
-                  base={base}
-                  proposal={{
-                    series: series.series,
-                    exclusions: keepExclusions(base.exclusions, series.series),
-                    fileName: reading.source.fileName,
-                    fileHash: null,
-                    readingNotes: [],
-                  }}
-                />
-              ) : null}
-            </>
-          ) : (
-            <UnderstoodStep
-              reading={{ series: null, focalName: '', rivalName: '', problems: table.problems }}
-              focalName=""
-              rivalName=""
-              unit=""
+          {understood.mapping ? (
+            <ColumnsStep
+              understood={understood}
+              mapping={understood.mapping}
+              onChange={(mapping) => reading.choose({ ...choices, mapping })}
             />
-          )}
+          ) : null}
+          <div className={styles.understood}>
+            <UnderstoodStep
+              reading={understood.reading}
+              focalName={base.focalName}
+              rivalName={base.rivalName}
+              unit={unit}
+            />
+          </div>
+          <StoreReading base={base} reading={reading} />
         </Question>
       ) : null}
     </>
+  );
+}
+
+function StoreReading({ base, reading }: { base: RevisionBase; reading: Reading }) {
+  const { understood, source, fileHash } = reading;
+  const series = understood?.reading.series;
+  if (!series || !reading.canFit) return null;
+  const exclusions = keepExclusions(base.exclusions, series);
+  const fileName = source?.fileName ?? null;
+  return (
+    <StoreRevision
+      base={base}
+      proposal={{ series, exclusions, fileName, fileHash, readingNotes: understood.notes }}
+    />
   );
 }

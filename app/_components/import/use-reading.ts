@@ -1,61 +1,122 @@
 'use client';
 
-/** Source text and chosen columns -> what was understood, computed in the browser with the code that the server uses. */
-import { useDeferredValue, useMemo, useState } from 'react';
+/** A file or a paste, read in a worker; its state for the page. The last thing given wins; reading can be cancelled. */
+import { useCallback, useEffect, useRef, useState } from 'react';
+import { MAX_FILE_BYTES } from '@/app/_lib/upload-limit';
 import { makeMonth } from '@/lib/series/month';
-import { readTable } from '@/lib/series/parse-table';
-import { canFit, readSeriesFromTable } from '@/lib/series/read-series';
-import type { SeriesMapping, SeriesReading, TableReading } from '@/lib/series/types';
-import type { SourceText } from './source-step';
+import { canFit } from '@/lib/series/read-series';
+import type { ReadingAnswer, ReadingRequest } from './reading-messages';
+import { NO_CHOICES, type ReadingChoices, type Understood } from './understand';
+
+export interface GivenSource {
+  /** null: pasted or typed. */
+  fileName: string | null;
+  /** Bytes of a file, characters of a text. */
+  size: number;
+}
+
+export type ReadingState = 'nothing' | 'reading' | 'read' | 'too-large' | 'unreadable' | 'cancelled';
 
 export interface Reading {
-  source: SourceText;
-  setSource: (source: SourceText) => void;
-  /** null: nothing was given yet. */
-  table: TableReading | null;
-  /** null: the table has no columns. */
-  mapping: SeriesMapping | null;
-  setMapping: (mapping: SeriesMapping) => void;
-  series: SeriesReading | null;
+  state: ReadingState;
+  source: GivenSource | null;
+  choices: ReadingChoices;
+  /** Stays while other choices are read. */
+  understood: Understood | null;
+  fileHash: string | null;
   canFit: boolean;
+  giveFile(file: File): void;
+  giveText(text: string): void;
+  choose(choices: ReadingChoices): void;
+  cancel(): void;
 }
 
-const NOTHING: SourceText = { fileName: null, text: '' };
+interface Standing {
+  state: ReadingState;
+  source: GivenSource | null;
+  choices: ReadingChoices;
+  understood: Understood | null;
+  fileHash: string | null;
+}
+
+const NOTHING: Standing = {
+  state: 'nothing',
+  source: null,
+  choices: NO_CHOICES,
+  understood: null,
+  fileHash: null,
+};
 
 export function useReading(): Reading {
-  const [source, setSourceState] = useState<SourceText>(NOTHING);
-  const [chosen, setMapping] = useState<SeriesMapping | null>(null);
-  const text = useDeferredValue(source.text);
-  const table = useMemo(() => (text.trim() === '' ? null : readTable(text)), [text]);
-  const mapping = useMemo(() => (table ? fitMapping(table, chosen) : null), [table, chosen]);
-  const series = useMemo(
-    () => (table && mapping ? readSeriesFromTable(table, mapping, { thisMonth: currentMonth() }) : null),
-    [table, mapping],
+  const [standing, setStanding] = useState<Standing>(NOTHING);
+  const worker = useRef<Worker | null>(null);
+  const lastNumber = useRef(0);
+
+  const stop = useCallback(() => {
+    worker.current?.terminate();
+    worker.current = null;
+    lastNumber.current += 1;
+  }, []);
+  useEffect(() => stop, [stop]);
+
+  const ask = useCallback((request: OpenRequest | ChooseRequest) => {
+    worker.current ??= startWorker((answer) => {
+      if (answer.number === lastNumber.current) setStanding((before) => takeAnswer(before, answer));
+    });
+    lastNumber.current += 1;
+    const message = { ...request, number: lastNumber.current, thisMonth: readThisMonth() };
+    worker.current.postMessage(message satisfies ReadingRequest);
+  }, []);
+
+  const give = useCallback(
+    (given: File | string) => {
+      const source =
+        typeof given === 'string'
+          ? { fileName: null, size: given.length }
+          : { fileName: given.name, size: given.size };
+      // A reading under way is of no use any more, and may be long.
+      stop();
+      if (source.size > MAX_FILE_BYTES) return setStanding({ ...NOTHING, state: 'too-large', source });
+      if (typeof given === 'string' && given.trim() === '') return setStanding(NOTHING);
+      setStanding({ ...NOTHING, state: 'reading', source });
+      ask({ kind: 'open', source: given, choices: NO_CHOICES });
+    },
+    [ask, stop],
   );
-  const setSource = (next: SourceText) => {
-    setSourceState(next);
-    setMapping(null);
-  };
-  return { source, setSource, table, mapping, setMapping, series, canFit: series !== null && canFit(series) };
-}
 
-/** The chosen columns while the table has them, else the guess, else the columns in their order. */
-function fitMapping(table: TableReading, chosen: SeriesMapping | null): SeriesMapping | null {
-  const { header, guess } = table;
-  const hasChosen =
-    chosen && [chosen.month, chosen.focal, chosen.rival].every((name) => header.includes(name));
-  if (hasChosen) return chosen;
-  const [first, second, third] = header;
-  if (first === undefined || second === undefined || third === undefined) return null;
-  const rest = header.filter((name) => name !== guess.month && name !== guess.focal);
+  const { understood } = standing;
   return {
-    month: guess.month ?? first,
-    focal: guess.focal ?? second,
-    rival: guess.rival ?? rest[0] ?? third,
+    ...standing,
+    canFit: standing.state === 'read' && understood !== null && canFit(understood.reading),
+    giveFile: give,
+    giveText: give,
+    choose(choices) {
+      setStanding((before) => ({ ...before, state: 'reading', choices }));
+      ask({ kind: 'choose', choices });
+    },
+    cancel() {
+      stop();
+      setStanding({ ...NOTHING, state: 'cancelled', source: standing.source });
+    },
   };
 }
 
-function currentMonth(): number {
+type OpenRequest = Pick<Extract<ReadingRequest, { kind: 'open' }>, 'kind' | 'source' | 'choices'>;
+type ChooseRequest = Pick<Extract<ReadingRequest, { kind: 'choose' }>, 'kind' | 'choices'>;
+
+function startWorker(onAnswer: (answer: ReadingAnswer) => void): Worker {
+  const worker = new Worker(new URL('./reading-worker.ts', import.meta.url), { type: 'module' });
+  worker.addEventListener('message', (event: MessageEvent<ReadingAnswer>) => onAnswer(event.data));
+  return worker;
+}
+
+function takeAnswer(before: Standing, answer: ReadingAnswer): Standing {
+  if (answer.kind === 'unreadable') return { ...NOTHING, state: 'unreadable', source: before.source };
+  const { understood, fileHash } = answer;
+  return { ...before, state: 'read', understood, fileHash };
+}
+
+function readThisMonth(): number {
   const now = new Date();
   return makeMonth(now.getFullYear(), now.getMonth() + 1);
 }

@@ -46,11 +46,17 @@ export default async function DataPage({ params }: { params: Promise<{ id: strin
             rivalName={market.rivalName}
             unit={market.unit}
           >
-            {canWrite ? <CountGrid key={revision.id} base={base} /> : null}
+            {canWrite ? <CountGrid base={base} /> : null}
           </HistoryFigure>
         </div>
       </Question>
-      {canWrite ? <NewRevisionFlow key={revision.id} base={base} unit={market.unit} /> : null}
+      {canWrite ? (
+        <NewRevisionFlow
+          base={base}
+          unit={market.unit}
+          knownFiles={history.flatMap(({ number, fileHash }) => (fileHash ? [{ number, fileHash }] : []))}
+        />
+      ) : null}
       <Question
         id="events"
         question="What happened?"

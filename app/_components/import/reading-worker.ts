@@ -1,0 +1,33 @@
+/** Reads files and pastes away from the page, which stays awake: decoding, hashing, parsing, checking. */
+import { sha256 } from '@noble/hashes/sha2.js';
+import { bytesToHex } from '@noble/hashes/utils.js';
+import type { TableReading } from '@/lib/series/types';
+import type { ReadingAnswer, ReadingRequest } from './reading-messages';
+import { openBytes, openText, understand } from './understand';
+
+let open: { table: TableReading; fileHash: string | null } | null = null;
+
+async function openSource(source: File | string): Promise<typeof open> {
+  if (typeof source === 'string') return { table: openText(source), fileHash: null };
+  const bytes = new Uint8Array(await source.arrayBuffer());
+  return { table: openBytes(bytes), fileHash: bytesToHex(sha256(bytes)) };
+}
+
+async function answer(request: ReadingRequest): Promise<ReadingAnswer> {
+  const { number, choices, thisMonth } = request;
+  if (request.kind === 'open') {
+    open = null;
+    try {
+      open = await openSource(request.source);
+    } catch {
+      return { kind: 'unreadable', number };
+    }
+  }
+  if (!open) return { kind: 'unreadable', number };
+  const understood = understand(open.table, choices, thisMonth);
+  return { kind: 'understood', number, understood, fileHash: open.fileHash };
+}
+
+self.addEventListener('message', async (event: MessageEvent<ReadingRequest>) => {
+  self.postMessage(await answer(event.data));
+});
