@@ -17,7 +17,7 @@ const KIND_NAMES: Record<PushKind, string> = {
   room: 'more room of its own',
 };
 
-function nameKind(kind: PushKind): string {
+export function nameKind(kind: PushKind): string {
   return KIND_NAMES[kind];
 }
 
