@@ -1,6 +1,5 @@
 /** The answers of a push in sentences: smallest counter-push, last useful month, break-even spend. */
 import type { BreakEven, LastUsefulMonth, Reach, SmallestPush, Target } from '../scenario/answers';
-import type { Money } from '../scenario/money';
 import type { PricedPush } from '../scenario/spend';
 import { spellMoney } from './money-words';
 import { describePush, firmOfPush } from './push-words';
@@ -101,9 +100,9 @@ function spellPrice(words: Words, { spendPerMonth }: PricedPush, currency?: stri
   return `, ${currency ? spellMoney(words, spendPerMonth, currency) : words.numbers.number(spendPerMonth)} a month`;
 }
 
-export function writeBreakEven(words: Words, answer: BreakEven, push: PricedPush, money: Money): Sentence[] {
-  const pusher = possessive(words.name(firmOfPush(push)));
-  const spell = (amount: number) => `${spellMoney(words, amount, money.currency)} a month`;
+export function writeBreakEven(words: Words, answer: BreakEven): Sentence[] {
+  const pusher = possessive(words.name(firmOfPush(answer.push)));
+  const spell = (amount: number) => `${spellMoney(words, amount, answer.money.currency)} a month`;
   switch (answer.code) {
     case 'never-pays':
       return [

@@ -7,8 +7,11 @@ import { z } from 'zod';
 import { backtestReportSchema } from '../forecast/backtest/report';
 import { identifiabilityReportSchema } from '../forecast/identifiability/report';
 import { fitReportSchema } from '../forecast/report';
+import { answersSchema } from '../scenario/answers';
 import { scenarioComparisonSchema } from '../scenario/comparison';
+import { MAX_SIDE_BY_SIDE } from '../scenario/push-bounds';
 import { pushesSchema } from '../scenario/push-schema';
+import { trialSchema } from '../scenario/trial-draws';
 
 export const ISSUE_FORMAT_VERSION = 1;
 
@@ -34,6 +37,15 @@ const seriesSchema = z
     message: 'both firms must have the same number of months',
   });
 
+const scenarioSchema = z.object({
+  name: z.string(),
+  pushes: pushesSchema,
+  /** Money, where it was counted, is in here. */
+  comparison: scenarioComparisonSchema,
+  answers: answersSchema.optional(),
+});
+export type IssuedScenario = z.infer<typeof scenarioSchema>;
+
 export const issuedForecastSchema = z.object({
   formatVersion: z.literal(ISSUE_FORMAT_VERSION),
   /** ISO 8601 with time zone. */
@@ -57,8 +69,11 @@ export const issuedForecastSchema = z.object({
   backtest: backtestReportSchema.optional(),
   /** Likewise. */
   identifiability: identifiabilityReportSchema.optional(),
-  scenario: z
-    .object({ name: z.string(), pushes: pushesSchema, comparison: scenarioComparisonSchema })
-    .nullable(),
+  /** The one scenario of forecasts issued before there could be several; null since. */
+  scenario: scenarioSchema.nullable(),
+  /** Compared on the same draws. */
+  scenarios: z.array(scenarioSchema).max(MAX_SIDE_BY_SIDE).optional(),
+  /** Thinned draws. Their presence is the issuer's permission to move the sliders on the link; absent: frozen scenarios only. */
+  trial: trialSchema.optional(),
 });
 export type IssuedForecast = z.infer<typeof issuedForecastSchema>;

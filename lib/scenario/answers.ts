@@ -4,6 +4,7 @@
  */
 import { z } from 'zod';
 import { intervalSchema } from '../forecast/report';
+import { moneySchema } from './money';
 import { MAX_PUSH_MONTHS } from './push-bounds';
 import { pushSchema } from './push-schema';
 
@@ -68,18 +69,22 @@ export const chanceMapSchema = z.object({
 });
 export type ChanceMap = z.infer<typeof chanceMapSchema>;
 
+/** The push whose price was asked for, and what was assumed. */
+const asked = { push: pushSchema, money: moneySchema };
+
 export const breakEvenSchema = z.discriminatedUnion('code', [
   /** Up to this much money a month the expected value is not negative. */
   z.object({
     code: z.literal('found'),
+    ...asked,
     spendPerMonth: z.number().nonnegative(),
     /** Over draws, for a push whose effect does not depend on what is spent; null where it does. */
     interval: intervalSchema.nullable(),
   }),
   /** Not even the first money comes back. */
-  z.object({ code: z.literal('never-pays') }),
+  z.object({ code: z.literal('never-pays'), ...asked }),
   /** It pays at any spend that was looked at. */
-  z.object({ code: z.literal('always-pays'), spendPerMonth: z.number() }),
+  z.object({ code: z.literal('always-pays'), ...asked, spendPerMonth: z.number() }),
 ]);
 export type BreakEven = z.infer<typeof breakEvenSchema>;
 

@@ -37,8 +37,22 @@ const LAST_RECRUITS = 1;
 /** @throws RangeError when the margin of the pushing firm is not given */
 export function* findBreakEven(
   prepared: PreparedScenario,
-  { push, pushes, money }: BreakEvenQuestion,
+  question: BreakEvenQuestion,
 ): AnswerRun<BreakEven> {
+  const { push, money } = question;
+  const found = yield* findSpend(prepared, question);
+  return { ...found, push, money };
+}
+
+type Found =
+  | Pick<Extract<BreakEven, { code: 'found' }>, 'code' | 'spendPerMonth' | 'interval'>
+  | Pick<Extract<BreakEven, { code: 'never-pays' }>, 'code'>
+  | Pick<Extract<BreakEven, { code: 'always-pays' }>, 'code' | 'spendPerMonth'>;
+
+function* findSpend(
+  prepared: PreparedScenario,
+  { push, pushes, money }: BreakEvenQuestion,
+): AnswerRun<Found> {
   const months = Math.min(money.months ?? prepared.horizonMonths, prepared.followed.months);
   const gains = new GainCounter(prepared.followed, { push, pushes, money }, months);
   yield* gains.prepare();
@@ -46,7 +60,7 @@ export function* findBreakEven(
   return push.response ? yield* findByResponse(gains, push.response) : yield* findBySize(gains, push.size);
 }
 
-function* findBySize(gains: GainCounter, size: number): AnswerRun<BreakEven> {
+function* findBySize(gains: GainCounter, size: number): AnswerRun<Found> {
   const perDraw = yield* gains.ofSize(size);
   const expected = mean(perDraw) / gains.paidMonths;
   if (!(expected > 0)) return { code: 'never-pays' };
@@ -57,7 +71,7 @@ function* findBySize(gains: GainCounter, size: number): AnswerRun<BreakEven> {
   };
 }
 
-function* findByResponse(gains: GainCounter, response: SpendResponse): AnswerRun<BreakEven> {
+function* findByResponse(gains: GainCounter, response: SpendResponse): AnswerRun<Found> {
   const pays = function* (spend: number): AnswerRun<boolean> {
     const gained = mean(yield* gains.ofSize(recruitsForSpend(spend, response)));
     return gained >= spend * gains.paidMonths;

@@ -143,19 +143,22 @@ describe('money in words', () => {
 });
 
 describe('break-even spend in words', () => {
+  const asked = { push, money: money.assumed };
+
   it('names the spend, or that there is none', () => {
     const found = {
+      ...asked,
       code: 'found',
       spendPerMonth: 41_000,
       interval: { q05: 30_000, q50: 41_000, q95: 55_000 },
     } as const;
-    expect(say(writeBreakEven(words, found, push, money.assumed))).toBe(
+    expect(say(writeBreakEven(words, found))).toBe(
       'On average Quillfern’s push brings back what it costs up to 41,000 EUR a month (90 % interval 30,000 to 55,000).',
     );
-    expect(say(writeBreakEven(words, { code: 'never-pays' }, push, money.assumed))).toMatch(/^It never pays/);
-    expect(
-      say(writeBreakEven(words, { code: 'always-pays', spendPerMonth: 1e6 }, push, money.assumed)),
-    ).toContain('up to 1,000,000 EUR a month');
+    expect(say(writeBreakEven(words, { ...asked, code: 'never-pays' }))).toMatch(/^It never pays/);
+    expect(say(writeBreakEven(words, { ...asked, code: 'always-pays', spendPerMonth: 1e6 }))).toContain(
+      'up to 1,000,000 EUR a month',
+    );
   });
 });
 
