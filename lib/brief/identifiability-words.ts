@@ -261,9 +261,11 @@ function spellVerdict(words: Words, { outcome }: Verdict): string {
   return outcome === 'boundary' ? 'the border between two outcomes' : subjectOutcome(words, outcome);
 }
 
+/** Clauses for a firm whose counts show no saturation level: those that only grow, and those that only fall. */
 function whatIsUnseen(words: Words, { k1, k2 }: Verdict): string {
   const firms = [k1 === null ? words.focal : null, k2 === null ? words.rival : null].filter(
     (name) => name !== null,
   );
-  return `the growth of ${listWords(firms)} does not bend by its own size`;
+  if (firms.length === 0) return 'no single fit settles';
+  return `they do not show how far ${listWords(firms)} would get alone`;
 }

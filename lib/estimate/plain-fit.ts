@@ -12,7 +12,8 @@
  */
 import { classifyOutcome, type Outcome } from '../dynamics/outcome';
 import { type CrowdingForm, fromCrowdingForm } from '../dynamics/system';
-import { fitNonNegative, type NonNegativeFit } from '../numeric/non-negative-fit';
+import { fitNonNegativeInSteps, type NonNegativeFit } from '../numeric/non-negative-fit';
+import { runToEnd } from '../numeric/run-to-end';
 import type { Termination } from '../numeric/termination';
 import {
   createPlainProblem,
@@ -52,7 +53,9 @@ export interface PlainFit {
   standardErrors: Record<PlainParameterId, number | null>;
   /** Coefficients at their bound 0. */
   atZero: PlainParameterId[];
-  /** null where the data do not bend the firm's growth: see `MAX_SATURATION_RATIO`. */
+  /** Whether each firm would grow alone: one that only falls fits with r = 0 as well. */
+  growsAlone: readonly [boolean, boolean];
+  /** null where the data do not bend the firm's growth (see `MAX_SATURATION_RATIO`), or it does not grow. */
   k1: number | null;
   k2: number | null;
   alpha: number | null;
@@ -66,18 +69,41 @@ export interface PlainFit {
 
 /** A saturation level this many times the largest count is none: the counts cannot bend towards it. */
 const MAX_SATURATION_RATIO = 1000;
+/** A firm whose rate lets it grow by less than this share over all the months, alone, does not grow by itself: it only falls. */
+const LEAST_GROWTH = 1e-3;
 /** Relative difference of RSS below which two starts found the same. */
 const SAME_VALUE = 1e-4;
+/** Evaluations of one pass: counts of a market take some hundreds; what takes more follows no path. */
+const maxEvaluations = 1500;
 /** First pass: the value to about 1e-6 of itself, enough to tell which starts go on. */
-const FIRST_PASS = { noise: 'estimated', gradientTolerance: 1e-3, maxIterations: 40 } as const;
+const FIRST_PASS = {
+  noise: 'estimated',
+  gradientTolerance: 1e-3,
+  maxIterations: 60,
+  maxEvaluations,
+} as const;
 /** Second pass: integration at 1e-10 leaves a rounding of about this in the gradient. */
-const SECOND_PASS = { noise: 'estimated', gradientTolerance: 1e-7, bursts: 0 } as const;
+const SECOND_PASS = {
+  noise: 'estimated',
+  gradientTolerance: 1e-7,
+  maxIterations: 150,
+  bursts: 0,
+  maxEvaluations,
+} as const;
 
 /**
  * Fits from several starts and polishes the best.
  * @throws RangeError when times do not rise, a firm has no positive count, or there are fewer counts than parameters
  */
 export function fitPlain(series: PlainSeries, options: Partial<PlainFitOptions> = {}): PlainFit {
+  return runToEnd(fitPlainInSteps(series, options));
+}
+
+/** The same as a generator that yields after every bounded piece of work. */
+export function* fitPlainInSteps(
+  series: PlainSeries,
+  options: Partial<PlainFitOptions> = {},
+): Generator<void, PlainFit> {
   const { errorScale, starts, seed } = { ...DEFAULT_PLAIN_FIT_OPTIONS, ...options };
   const problem = createPlainProblem(series, errorScale);
   if (!(problem.residualCount >= PLAIN_PARAMETER_COUNT)) {
@@ -86,11 +112,12 @@ export function fitPlain(series: PlainSeries, options: Partial<PlainFitOptions> 
     );
   }
   const isBounded = IDS.map((_, j) => j >= FIRST_CROWDING);
-  const ends = createPlainStarts(series, problem.scales, starts, seed).map((start) =>
-    fitNonNegative(problem, start, isBounded, FIRST_PASS),
-  );
+  const ends: NonNegativeFit[] = [];
+  for (const start of createPlainStarts(series, problem, starts, seed)) {
+    ends.push(yield* fitNonNegativeInSteps(problem, start, isBounded, FIRST_PASS));
+  }
   const first = ends.reduce((a, b) => (b.fit.cost < a.fit.cost ? b : a));
-  const best = fitNonNegative(problem, first.theta, isBounded, SECOND_PASS);
+  const best = yield* fitNonNegativeInSteps(problem, first.theta, isBounded, SECOND_PASS);
   return describe(best, ends, problem);
 }
 
@@ -106,7 +133,7 @@ function describe(best: NonNegativeFit, ends: NonNegativeFit[], problem: PlainPr
     estimates,
     standardErrors: standardErrorsOf(best, natural, units),
     atZero: best.atZero.map((j) => IDS[j]),
-    ...readMarket(estimates, problem.scales),
+    ...readMarket(estimates, problem),
     starts: ends.map((end) => ({ rss: rssOf(end), status: end.fit.status })),
     startsAtBest: ends.filter((end) => end.fit.cost <= (1 + SAME_VALUE) * best.fit.cost).length,
   };
@@ -133,20 +160,26 @@ function standardErrorsOf(
   return Object.fromEntries(IDS.map((id, j) => [id, errorOf(j)])) as PlainFit['standardErrors'];
 }
 
-/** Saturation levels, competition coefficients and outcome, each only as far as it exists. */
+/**
+ * Saturation levels, competition coefficients and outcome, each only as far as it exists. A firm that only falls may have r = 0 as well as
+ * any small r: alone it would grow to nowhere, and what the other takes of that room has no meaning either.
+ */
 function readMarket(
   form: CrowdingForm,
-  scales: readonly [number, number],
-): Pick<PlainFit, 'k1' | 'k2' | 'alpha' | 'beta' | 'outcome'> {
+  { scales, span }: Pick<PlainProblem, 'scales' | 'span'>,
+): Pick<PlainFit, 'growsAlone' | 'k1' | 'k2' | 'alpha' | 'beta' | 'outcome'> {
   const { r1, r2, b11, b12, b21, b22 } = form;
-  const isBent1 = b11 * scales[0] * MAX_SATURATION_RATIO > r1;
-  const isBent2 = b22 * scales[1] * MAX_SATURATION_RATIO > r2;
-  const system = isBent1 && isBent2 ? fromCrowdingForm(form) : null;
+  const grows1 = r1 * span > LEAST_GROWTH;
+  const grows2 = r2 * span > LEAST_GROWTH;
+  const hasRoom1 = grows1 && b11 * scales[0] * MAX_SATURATION_RATIO > r1;
+  const hasRoom2 = grows2 && b22 * scales[1] * MAX_SATURATION_RATIO > r2;
+  const system = hasRoom1 && hasRoom2 ? fromCrowdingForm(form) : null;
   return {
-    k1: isBent1 ? r1 / b11 : null,
-    k2: isBent2 ? r2 / b22 : null,
-    alpha: isBent2 ? (r2 * b12) / (r1 * b22) : null,
-    beta: isBent1 ? (r1 * b21) / (r2 * b11) : null,
+    growsAlone: [grows1, grows2],
+    k1: hasRoom1 ? r1 / b11 : null,
+    k2: hasRoom2 ? r2 / b22 : null,
+    alpha: hasRoom2 && grows1 ? (r2 * b12) / (r1 * b22) : null,
+    beta: hasRoom1 && grows2 ? (r1 * b21) / (r2 * b11) : null,
     outcome: system ? classifyOutcome(system) : 'notIdentified',
   };
 }

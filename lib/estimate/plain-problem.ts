@@ -31,7 +31,7 @@ const INTEGRATION_TOLERANCE = 1e-10;
 /** Levels below this share of the largest count are followed no further: no count is so small. */
 const SMALLEST_SHARE = 1e-14;
 /** A path that fits counts takes some 200 steps; one that needs many more is far from any of them. */
-const MAX_STEPS = 2000;
+const MAX_STEPS = 1000;
 
 interface Observation {
   time: number;
@@ -42,6 +42,8 @@ interface Observation {
 export interface PlainProblem extends LeastSquaresProblem {
   /** Largest count of each firm: the unit of x and y. */
   readonly scales: readonly [number, number];
+  /** From the first time to the last. */
+  readonly span: number;
 }
 
 /** @throws RangeError when times do not rise or a firm has no positive count */
@@ -76,7 +78,14 @@ export function createPlainProblem(series: PlainSeries, errorScale: ErrorScale):
     return residuals.every(Number.isFinite) && (jacobian?.every(Number.isFinite) ?? true);
   };
 
-  return { parameterCount: PLAIN_PARAMETER_COUNT, residualCount: observations.length, evaluate, scales };
+  const span = times[times.length - 1] - times[0];
+  return {
+    parameterCount: PLAIN_PARAMETER_COUNT,
+    residualCount: observations.length,
+    evaluate,
+    scales,
+    span,
+  };
 }
 
 function listObservations(series: PlainSeries, errorScale: ErrorScale): Observation[] {

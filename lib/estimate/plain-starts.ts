@@ -6,25 +6,38 @@
  * and lognormal variations around it. What the regression puts below zero starts at zero.
  */
 import { factorise } from '../numeric/linear';
-import { createStream } from '../numeric/random';
-import type { PlainSeries } from './plain-problem';
+import { createStream, type RandomStream } from '../numeric/random';
+import type { PlainProblem, PlainSeries } from './plain-problem';
 
 /** Spread (sd of the logarithm) of the variations. */
-const RATE_SPREAD = 0.5;
-const LEVEL_SPREAD = 0.7;
-const CROWDING_SPREAD = 1;
+const RATE_SPREAD = 0.4;
+const LEVEL_SPREAD = 0.5;
+const CROWDING_SPREAD = 0.7;
 /** A coefficient that the regression puts at zero varies around this share of r. */
 const SMALL_SHARE = 0.05;
+
+/** Tries of one variation, each half as far from the centre as the one before, until the path can be followed. */
+const MAX_TRIES = 8;
 
 /** `count` starts in the parameters of `plain-problem.ts`, the regression itself first. */
 export function createPlainStarts(
   series: PlainSeries,
-  scales: readonly [number, number],
+  problem: PlainProblem,
   count: number,
   seed: number,
 ): Float64Array[] {
-  const centre = regress(series, scales);
-  return Array.from({ length: count }, (_, i) => (i === 0 ? centre : vary(centre, seed, i)));
+  const centre = regress(series, problem.scales);
+  const residuals = new Float64Array(problem.residualCount);
+  return Array.from({ length: count }, (_, i) => {
+    if (i === 0) return centre;
+    const random = createStream(seed, i);
+    let start = centre;
+    for (let tries = 0; tries < MAX_TRIES; tries++) {
+      start = vary(centre, random, 2 ** -tries);
+      if (problem.evaluate(start, residuals, null)) break;
+    }
+    return start;
+  });
 }
 
 function regress(series: PlainSeries, scales: readonly [number, number]): Float64Array {
@@ -67,12 +80,12 @@ function solve(rows: number[], negated: number[]): number[] {
   });
 }
 
-function vary(centre: Float64Array, seed: number, stream: number): Float64Array {
-  const random = createStream(seed, stream);
+function vary(centre: Float64Array, random: RandomStream, share: number): Float64Array {
   return centre.map((value, j) => {
-    if (j < 2) return value + RATE_SPREAD * random.normal();
-    if (j < 4) return value + LEVEL_SPREAD * random.normal();
+    const distance = share * random.normal();
+    if (j < 2) return value + RATE_SPREAD * distance;
+    if (j < 4) return value + LEVEL_SPREAD * distance;
     const rate = Math.exp(centre[j < 6 ? 0 : 1]);
-    return Math.max(value, SMALL_SHARE * rate) * Math.exp(CROWDING_SPREAD * random.normal());
+    return Math.max(value, SMALL_SHARE * rate) * Math.exp(CROWDING_SPREAD * distance);
   });
 }

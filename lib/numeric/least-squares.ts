@@ -12,6 +12,7 @@
 import type { LeastSquaresProblem } from './least-squares-problem';
 import { conditionNumber, inverseNormalMatrix } from './linear';
 import { runBursts } from './marquardt-burst';
+import { runToEnd } from './run-to-end';
 import { isUsableTermination, type Termination } from './termination';
 import { type Polish, polish } from './trust-region';
 
@@ -73,11 +74,16 @@ export interface LeastSquaresFit {
 }
 
 /** Fits from one start (length n). Throws only on a wrong call; how the fit went is `status`. */
-export function fitLeastSquares(
+export function fitLeastSquares(...input: Parameters<typeof fitLeastSquaresInSteps>): LeastSquaresFit {
+  return runToEnd(fitLeastSquaresInSteps(...input));
+}
+
+/** The same as a generator that yields after every bounded piece of work. */
+export function* fitLeastSquaresInSteps(
   problem: LeastSquaresProblem,
   start: ArrayLike<number>,
   options: Partial<LeastSquaresOptions> = {},
-): LeastSquaresFit {
+): Generator<void, LeastSquaresFit> {
   const settings = { ...DEFAULT_LEAST_SQUARES_OPTIONS, ...options };
   checkCall(problem, start);
   const counted = new CountedProblem(problem);
@@ -86,12 +92,14 @@ export function fitLeastSquares(
   const jacobian = new Float64Array(problem.residualCount * problem.parameterCount);
   if (!counted.evaluate(theta, residuals, jacobian)) return describeFailedStart(theta, residuals, jacobian);
 
-  const bursts = runBursts(counted, theta, settings);
+  const bursts = yield* runBursts(counted, theta, settings);
   let iterations = bursts.steps;
   let best: Polish | null = null;
   for (const attempt of bursts.steps > 0 ? ATTEMPTS : ATTEMPTS.slice(1)) {
     const from = attempt.from === 'bursts' ? bursts.theta : theta;
-    const end = polish(counted, from, { ...settings, firstRadiusShare: attempt.firstRadiusShare });
+    // a burst may end where the derivatives overflow
+    if (!counted.evaluate(from, residuals, jacobian)) continue;
+    const end = yield* polish(counted, from, { ...settings, firstRadiusShare: attempt.firstRadiusShare });
     iterations += end.iterations;
     if (!best || isBetterEnd(end, best)) best = end;
     if (isUsableTermination(best.status)) break;

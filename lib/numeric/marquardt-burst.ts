@@ -32,12 +32,15 @@ export interface BurstResult {
   steps: number;
 }
 
-/** Runs bursts from `start`, where the problem must be finite; returns the best point, which may be the start itself. */
-export function runBursts(
+/**
+ * Runs bursts from `start`, where the problem must be finite; returns the best point, which may be the start itself. A generator that
+ * yields after every burst.
+ */
+export function* runBursts(
   problem: LeastSquaresProblem,
   start: Float64Array,
   options: BurstOptions,
-): BurstResult {
+): Generator<void, BurstResult> {
   const best = Float64Array.from(start);
   const residuals = new Float64Array(problem.residualCount);
   const jacobian = new Float64Array(problem.residualCount * problem.parameterCount);
@@ -54,6 +57,7 @@ export function runBursts(
     );
     const end = runBurst(problem, best, scale, damping, options.stepsPerBurst);
     steps += end?.iterations ?? 0;
+    yield;
     if (!end || !(end.cost < cost)) {
       failures++;
       damping *= DAMPING_AFTER_FAILURE;

@@ -8,9 +8,10 @@
  *
  * The answer says which parameters are at 0, and has the covariance of the free ones.
  */
-import { fitLeastSquares, type LeastSquaresFit, type LeastSquaresOptions } from './least-squares';
+import { fitLeastSquaresInSteps, type LeastSquaresFit, type LeastSquaresOptions } from './least-squares';
 import type { LeastSquaresProblem } from './least-squares-problem';
 import { halfSumOfSquares } from './linear';
+import { runToEnd } from './run-to-end';
 
 export interface NonNegativeFit {
   /** Of the last fit of the free parameters; its arrays are in the order of `free`. */
@@ -34,12 +35,22 @@ const MAX_ROUNDS = 30;
  * @param isBounded per parameter: true holds it at 0 or above
  * @throws RangeError as `fitLeastSquares`, and when `isBounded` has another length
  */
-export function fitNonNegative(
+export function fitNonNegative(...input: Parameters<typeof fitNonNegativeInSteps>): NonNegativeFit {
+  return runToEnd(fitNonNegativeInSteps(...input));
+}
+
+export interface NonNegativeOptions extends LeastSquaresOptions {
+  /** No further round is begun after so many evaluations; the best point so far is kept. */
+  maxEvaluations: number;
+}
+
+/** The same as a generator that yields after every bounded piece of work. */
+export function* fitNonNegativeInSteps(
   problem: LeastSquaresProblem,
   start: ArrayLike<number>,
   isBounded: readonly boolean[],
-  options: Partial<LeastSquaresOptions> = {},
-): NonNegativeFit {
+  options: Partial<NonNegativeOptions> = {},
+): Generator<void, NonNegativeFit> {
   if (isBounded.length !== problem.parameterCount) {
     throw new RangeError(
       `fitNonNegative: isBounded must have ${problem.parameterCount} entries, got ${isBounded.length}`,
@@ -49,14 +60,15 @@ export function fitNonNegative(
   const atZero = new Set<number>();
   let evaluations = 0;
   for (let round = 1; ; round++) {
-    const end = fitFree(problem, theta, isBounded, atZero, options);
+    const end = yield* fitFree(problem, theta, isBounded, atZero, options);
     evaluations += end.fit.evaluations;
     const below = end.free.filter((j, i) => isBounded[j] && end.fit.theta[i] <= 0);
     theta.set(end.theta);
     for (const j of below) atZero.add(j);
     const freed = below.length === 0 ? findFreed(problem, theta, atZero) : null;
     const isSettled = below.length === 0 && freed === null;
-    if (isSettled || round === MAX_ROUNDS) {
+    const isOver = round === MAX_ROUNDS || evaluations > (options.maxEvaluations ?? Number.POSITIVE_INFINITY);
+    if (isSettled || isOver) {
       const fit: LeastSquaresFit = isSettled ? end.fit : { ...end.fit, status: 'iteration-limit' };
       return { ...end, fit, atZero: [...atZero].sort((a, b) => a - b), evaluations };
     }
@@ -67,18 +79,20 @@ export function fitNonNegative(
   }
 }
 
-function fitFree(
+function* fitFree(
   problem: LeastSquaresProblem,
   theta: Float64Array,
   isBounded: readonly boolean[],
   atZero: ReadonlySet<number>,
   options: Partial<LeastSquaresOptions>,
-): Pick<NonNegativeFit, 'fit' | 'theta' | 'free'> {
+): Generator<void, Pick<NonNegativeFit, 'fit' | 'theta' | 'free'>> {
   const free = Array.from(theta, (_, j) => j).filter((j) => !atZero.has(j));
   const reduced = new ClampedProblem(problem, theta, free, isBounded);
   const reducedStart = free.map((j) => theta[j]);
   const fit =
-    free.length > 0 ? fitLeastSquares(reduced, reducedStart, options) : describeFixedPoint(problem, theta);
+    free.length > 0
+      ? yield* fitLeastSquaresInSteps(reduced, reducedStart, options)
+      : describeFixedPoint(problem, theta);
   return { fit, theta: reduced.expand(fit.theta), free };
 }
 

@@ -53,14 +53,23 @@ export interface Polish {
   iterations: number;
 }
 
-/** Runs the polish from `start`, where the problem must be finite; the best point is always kept. */
-export function polish(
+/** Trial steps of one slice: a fraction of a second even where an evaluation takes ten milliseconds. */
+const STEPS_PER_SLICE = 5;
+
+/**
+ * Runs the polish from `start`, where the problem must be finite; the best point is always kept. A generator that yields after every
+ * bounded piece of work.
+ */
+export function* polish(
   problem: LeastSquaresProblem,
   start: Float64Array,
   options: TrustRegionOptions,
-): Polish {
+): Generator<void, Polish> {
   const run = new TrustRegionRun(problem, start, options);
-  while (run.status === 'running') run.step();
+  for (let steps = 1; run.status === 'running'; steps++) {
+    run.step();
+    if (steps % STEPS_PER_SLICE === 0) yield;
+  }
   return run.result();
 }
 
@@ -70,7 +79,8 @@ class TrustRegionRun {
   private readonly trialTheta: Float64Array;
   private residuals: Float64Array;
   private trialResiduals: Float64Array;
-  private readonly jacobian: Float64Array;
+  private jacobian: Float64Array;
+  private trialJacobian: Float64Array;
   private readonly scale: Float64Array;
   private readonly firstNorm: number;
   private factor: Factorisation;
@@ -91,6 +101,7 @@ class TrustRegionRun {
     this.residuals = new Float64Array(m);
     this.trialResiduals = new Float64Array(m);
     this.jacobian = new Float64Array(m * n);
+    this.trialJacobian = new Float64Array(m * n);
     this.scale = new Float64Array(n);
     if (!problem.evaluate(this.theta, this.residuals, this.jacobian)) {
       throw new Error('polish: the problem must be finite at its start');
@@ -117,8 +128,9 @@ class TrustRegionRun {
     this.setTrial(move);
     const ratio = this.tryMove() / move.predicted;
     this.updateRadius(ratio, move.length);
-    if (ratio > ACCEPT_RATIO) this.acceptMove();
-    else if (!(move.length > this.options.stepTolerance * scaledNorm(this.theta, this.scale))) this.giveUp();
+    if (ratio > ACCEPT_RATIO && this.acceptMove()) return;
+    if (ratio > ACCEPT_RATIO) this.radius = SHRINK_FACTOR * Math.min(this.radius, move.length);
+    if (!(move.length > this.options.stepTolerance * scaledNorm(this.theta, this.scale))) this.giveUp();
   }
 
   result(): Polish {
@@ -168,16 +180,17 @@ class TrustRegionRun {
     else if (ratio > GROW_ABOVE_RATIO) this.radius = Math.max(this.radius, GROW_FACTOR * length);
   }
 
-  private acceptMove(): void {
-    if (!this.problem.evaluate(this.trialTheta, this.trialResiduals, this.jacobian)) {
-      throw new Error('polish: evaluate was finite without a Jacobian but not with one');
-    }
+  /** @returns false, and nothing is taken, where the Jacobian is not finite though the residuals are */
+  private acceptMove(): boolean {
+    if (!this.problem.evaluate(this.trialTheta, this.trialResiduals, this.trialJacobian)) return false;
     this.theta.set(this.trialTheta);
+    [this.jacobian, this.trialJacobian] = [this.trialJacobian, this.jacobian];
     [this.residuals, this.trialResiduals] = [this.trialResiduals, this.residuals];
     this.cost = halfSumOfSquares(this.residuals);
     this.moves++;
     this.factor = this.linearise();
     this.testConvergence();
+    return true;
   }
 
   private linearise(): Factorisation {

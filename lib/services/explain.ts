@@ -1,6 +1,9 @@
 /** Sentences for the codes that services return and fits end with: what happened, why, what to try. */
 import type { BacktestFailure } from '../forecast/backtest/backtest-run';
-import type { FailureCode } from '../jobs/failure';
+import type { IdentifiabilityFailure } from '../forecast/identifiability/identifiability-run';
+import type { ENGINE_ERROR, FailureCode } from '../jobs/failure';
+import type { AnalysisKind } from '../store/analysis-kinds';
+import type { GAVE_UP } from '../store/claimed-work';
 import type { StaleReason } from './staleness';
 
 export interface Explanation {
@@ -111,32 +114,58 @@ const FAILURES: Record<FailureCode, Explanation> = {
   },
 };
 
-const ANALYSIS_FAILURES: Record<BacktestFailure | 'engine-error' | 'gave-up', Explanation> = {
-  'too-few-origins': {
-    what: 'Past forecasts cannot be tested yet.',
-    why: 'At least three past months are needed from which this market could have been fitted and a later month checked.',
-    tryThis: 'Come back with more months; fifteen are the fewest.',
+type AnalysisFailureCode = typeof ENGINE_ERROR | typeof GAVE_UP;
+
+/** Sentences for the ways in which any analysis can end without a result. */
+function explainBreakdowns(whatBroke: string, whatStayed: string): Record<AnalysisFailureCode, Explanation> {
+  return {
+    'engine-error': {
+      what: whatBroke,
+      why: 'The calculation met a fault of its own. It is written in the log of the server.',
+      tryThis: 'Try again after the next update, and report the market if it happens again.',
+    },
+    'gave-up': {
+      what: whatStayed,
+      why: 'Several workers stopped in the middle of it, perhaps for lack of memory.',
+      tryThis: 'Look after the server, then try again.',
+    },
+  };
+}
+
+const ANALYSIS_FAILURES: {
+  backtest: Record<BacktestFailure | AnalysisFailureCode, Explanation>;
+  identifiability: Record<IdentifiabilityFailure | AnalysisFailureCode, Explanation>;
+} = {
+  backtest: {
+    'too-few-origins': {
+      what: 'Past forecasts cannot be tested yet.',
+      why: 'At least three past months are needed from which this market could have been fitted and a later month checked.',
+      tryThis: 'Come back with more months; fifteen are the fewest.',
+    },
+    'too-few-forecasts': {
+      what: 'Past forecasts could not be tested.',
+      why: 'From too few past months did the model give a forecast at all.',
+      tryThis: 'Look for mistyped counts in the early months, or come back with more months.',
+    },
+    ...explainBreakdowns('The test of past forecasts broke off.', 'The test of past forecasts did not end.'),
   },
-  'too-few-forecasts': {
-    what: 'Past forecasts could not be tested.',
-    why: 'From too few past months did the model give a forecast at all.',
-    tryThis: 'Look for mistyped counts in the early months, or come back with more months.',
-  },
-  'engine-error': {
-    what: 'The test of past forecasts broke off.',
-    why: 'The calculation met a fault of its own. It is written in the log of the server.',
-    tryThis: 'Start it again after the next update, and report the market if it happens again.',
-  },
-  'gave-up': {
-    what: 'The test of past forecasts did not end.',
-    why: 'Several workers stopped in the middle of it, perhaps for lack of memory.',
-    tryThis: 'Look after the server, then start it again.',
+  identifiability: {
+    'not-fitted': {
+      what: 'What the data can tell was not worked out.',
+      why: 'The months that are left cannot be fitted.',
+      tryThis: 'Fit again, or bring more months.',
+    },
+    ...explainBreakdowns(
+      'Working out what the data can tell broke off.',
+      'Working out what the data can tell did not end.',
+    ),
   },
 };
 
 /** @param code as stored with the analysis, perhaps by another version */
-export function explainAnalysisFailure(code: string | null): Explanation {
-  return ANALYSIS_FAILURES[code as BacktestFailure] ?? UNKNOWN_FAILURE;
+export function explainAnalysisFailure(kind: AnalysisKind, code: string | null): Explanation {
+  const failures: Partial<Record<string, Explanation>> = ANALYSIS_FAILURES[kind];
+  return (code !== null && failures[code]) || UNKNOWN_FAILURE;
 }
 
 const UNKNOWN_FAILURE: Explanation = {

@@ -1,8 +1,8 @@
 /** How the test of past forecasts stands while it has no result: on its way, failed, cancelled, or to come with the next fit. */
 import { explainAnalysisFailure } from '@/lib/services/explain';
 import type { MarketPage } from '@/lib/services/read-market';
+import { AnalysisButton } from '../analysis/analysis-button';
 import styles from './backtest.module.css';
-import { BacktestButton } from './backtest-button';
 import { BacktestProgress } from './backtest-progress';
 
 interface BacktestStandingProps {
@@ -14,7 +14,7 @@ export function BacktestStanding({ page, canWrite }: BacktestStandingProps) {
   const { analyses, market, outlook } = page;
   if (!analyses || !outlook) return null;
   const { backtest } = analyses;
-  const again = canWrite ? <BacktestButton marketId={market.id} /> : null;
+  const again = canWrite ? <AnalysisButton marketId={market.id} kind="backtest" /> : null;
   switch (backtest.state) {
     case 'absent':
       // An outlook that is out of date gets its test with the next fit; a fresh one is about to get it.
@@ -23,7 +23,7 @@ export function BacktestStanding({ page, canWrite }: BacktestStandingProps) {
     case 'running':
       return <Waiting {...{ page, canWrite }} />;
     case 'failed': {
-      const { what, why, tryThis } = explainAnalysisFailure(backtest.failureCode);
+      const { what, why, tryThis } = explainAnalysisFailure('backtest', backtest.failureCode);
       const isForGood = backtest.failureCode === 'too-few-origins';
       return (
         <div className={`${styles.block} ${styles.waiting}`}>

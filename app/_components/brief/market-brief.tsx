@@ -49,7 +49,7 @@ export function MarketBrief({ viewer, page, facts }: MarketBriefProps) {
         <TrustSection
           trust={brief.trust}
           cautions={brief.cautions}
-          decisionStanding={<DecisionStanding page={page} />}
+          decisionStanding={<IdentifiabilityStanding page={page} canWrite={canWrite} />}
         >
           <BacktestStanding page={page} canWrite={canWrite} />
         </TrustSection>
@@ -57,15 +57,6 @@ export function MarketBrief({ viewer, page, facts }: MarketBriefProps) {
       </PushProvider>
     </PageFrame>
   );
-}
-
-/** An outlook that is out of date gets its analysis with the next fit; a fresh one is about to get it. */
-function DecisionStanding({ page }: { page: MarketPage }) {
-  const { analyses, outlook, market } = page;
-  if (!analyses || !outlook) return null;
-  const { state, progress } = analyses.identifiability;
-  if (state === 'absent' && outlook.staleReasons.length > 0) return null;
-  return <IdentifiabilityStanding marketId={market.id} start={{ state, progress }} />;
 }
 
 function DataFacts({ page, dataLine }: { page: MarketPage; dataLine: string }) {

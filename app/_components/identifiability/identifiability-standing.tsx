@@ -1,35 +1,34 @@
-'use client';
-
-/** How the analysis of what the data can tell stands while it has no result; the page is read anew when it has ended. */
-import type { AnalysisStanding } from '@/lib/services/read-analysis';
-import { useProgress } from '../fit/use-progress';
+/** How the analysis of what the data can tell stands while it has no result: on its way, failed, cancelled, or to come with the next fit. */
+import { explainAnalysisFailure } from '@/lib/services/explain';
+import type { MarketPage } from '@/lib/services/read-market';
+import { AnalysisButton } from '../analysis/analysis-button';
 import styles from './identifiability.module.css';
-
-type View = Pick<AnalysisStanding, 'state' | 'progress'>;
+import { IdentifiabilityProgress } from './identifiability-progress';
 
 interface IdentifiabilityStandingProps {
-  marketId: string;
-  start: View;
+  page: MarketPage;
+  canWrite: boolean;
 }
 
-export function IdentifiabilityStanding({ marketId, start }: IdentifiabilityStandingProps) {
-  const { view } = useProgress(`/markets/${marketId}/identifiability`, start);
-  return (
-    <p className={styles.waiting} data-screen-only>
-      <span role="status">{wordState(view)}</span> {wordCount(view)}
-    </p>
-  );
+export function IdentifiabilityStanding({ page, canWrite }: IdentifiabilityStandingProps) {
+  const { analyses, outlook, market } = page;
+  if (!analyses || !outlook) return null;
+  const { state, progress, failureCode } = analyses.identifiability;
+  // an outlook that is out of date gets its analysis with the next fit; a fresh one is about to get it
+  if (state === 'done' || (state === 'absent' && outlook.staleReasons.length > 0)) return null;
+  if (state === 'failed' || state === 'cancelled') {
+    return (
+      <div className={`${styles.waiting} ${styles.ended}`} data-screen-only>
+        <p>{wordEnd(state, failureCode)}</p>
+        {canWrite ? <AnalysisButton marketId={market.id} kind="identifiability" /> : null}
+      </div>
+    );
+  }
+  return <IdentifiabilityProgress marketId={market.id} start={{ state, progress }} />;
 }
 
-function wordState({ state }: View): string {
-  if (state === 'failed')
-    return 'What more months would tell could not be worked out. It is tried again with the next fit.';
-  if (state === 'cancelled')
-    return 'What more months would tell was not worked out. It will be with the next fit.';
-  return 'Working out how many more months the data need.';
-}
-
-/** Not part of the status: it changes too often to be read out. */
-function wordCount({ state, progress }: View): string {
-  return progress && state === 'running' ? `${progress.done} of ${progress.total} parts done.` : '';
+function wordEnd(state: 'failed' | 'cancelled', failureCode: string | null): string {
+  if (state === 'cancelled') return 'Working out what the data can tell was cancelled.';
+  const { what, why, tryThis } = explainAnalysisFailure('identifiability', failureCode);
+  return `${what} ${why} ${tryThis}`;
 }

@@ -48,20 +48,22 @@ export function forecastSimple(
   return [forecast(series.focal), forecast(series.rival)];
 }
 
-/** Future observations of the own model. */
+/** Future observations of the own model; null for a firm that dies out in some of them, which has no logarithm. */
 export function forecastOwn(draws: DrawSet, months: number, seed: number): MethodMembers {
   const thinned = thinDraws(draws, OWN_DRAWS);
   const levels = simulateLevels(thinned, months, seed);
   const futures = simulateObservations(thinned, levels, seed, OWN_REPLICATES);
-  const toMembers = (users: Float64Array): FirmMembers =>
-    Array.from({ length: months }, (_, i) => {
+  const toMembers = (users: Float64Array): FirmMembers | null => {
+    if (!users.every((value) => value > 0 && value < Number.POSITIVE_INFINITY)) return null;
+    return Array.from({ length: months }, (_, i) => {
       const sorted = users
         .subarray(i * futures.count, (i + 1) * futures.count)
         .map(Math.log)
         .sort();
       return Float64Array.from({ length: MEMBERS }, (_, k) => quantileSorted(sorted, (k + 0.5) / MEMBERS));
     });
-  return [futures.focal, futures.rival].map(toMembers) as [FirmMembers, FirmMembers];
+  };
+  return [toMembers(futures.focal), toMembers(futures.rival)];
 }
 
 /** ln users from the first positive count on; anything else later counts as not observed. */

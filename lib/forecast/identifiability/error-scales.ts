@@ -4,13 +4,14 @@
  */
 import type { Outcome as DynamicOutcome } from '../../dynamics/outcome';
 import type { Observations } from '../../estimate/observations';
-import { fitPlain, type PlainFit } from '../../estimate/plain-fit';
+import { fitPlainInSteps, type PlainFit } from '../../estimate/plain-fit';
 import { type ErrorScale, PLAIN_PARAMETER_COUNT, type PlainSeries } from '../../estimate/plain-problem';
+import { isUsableTermination } from '../../numeric/termination';
 import type { MonthlySeries } from '../../series/types';
 import type { IdentifiabilityReport, Verdict } from './report';
 
 /** Starts of each fit; the regression among them is mostly at the best value already. */
-const STARTS = 4;
+const STARTS = 3;
 /** Fewer counts beyond the parameters leave nothing to judge a fit by. */
 const SPARE_COUNTS = 4;
 
@@ -40,20 +41,28 @@ export function readPlainSeries(series: MonthlySeries, observations: Observation
   return { times: first.map((_, t) => t), first, second };
 }
 
-export function fitScale(series: PlainSeries, errorScale: ErrorScale, seed: number): PlainFit {
-  return fitPlain(series, { errorScale, starts: STARTS, seed });
+/** A generator that yields after every bounded piece of work. */
+export function fitScale(
+  series: PlainSeries,
+  errorScale: ErrorScale,
+  seed: number,
+): Generator<void, PlainFit> {
+  return fitPlainInSteps(series, { errorScale, starts: STARTS, seed });
 }
 
-export function compareScales(
-  log: PlainFit,
-  raw: PlainFit,
-): NonNullable<IdentifiabilityReport['errorScales']> {
+/** @returns null where a fit found nothing finite */
+export function compareScales(log: PlainFit, raw: PlainFit): IdentifiabilityReport['errorScales'] {
+  if (!(log.rss < Number.POSITIVE_INFINITY && raw.rss < Number.POSITIVE_INFINITY)) return null;
   const verdicts = { log: toVerdict(log), raw: toVerdict(raw) };
   const outcomes = [verdicts.log.outcome, verdicts.raw.outcome];
   const isSaid = outcomes.every((outcome) => outcome !== 'notIdentified' && outcome !== 'boundary');
   return { ...verdicts, disagree: isSaid && outcomes[0] !== outcomes[1] };
 }
 
-function toVerdict({ outcome, alpha, beta, k1, k2 }: PlainFit): Verdict {
-  return { outcome: outcome === 'notIdentified' ? outcome : OUTCOME_IDS[outcome], alpha, beta, k1, k2 };
+/** A fit that did not settle identifies nothing. */
+function toVerdict({ status, outcome, alpha, beta, k1, k2 }: PlainFit): Verdict {
+  if (outcome === 'notIdentified' || !isUsableTermination(status)) {
+    return { outcome: 'notIdentified', alpha, beta, k1, k2 };
+  }
+  return { outcome: OUTCOME_IDS[outcome], alpha, beta, k1, k2 };
 }

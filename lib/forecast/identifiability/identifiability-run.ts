@@ -8,15 +8,16 @@ import { PARAMETERS } from '../../estimate/parameters';
 import type { PlainFit } from '../../estimate/plain-fit';
 import { createPlainProblem, type PlainSeries } from '../../estimate/plain-problem';
 import { buildPriors } from '../../estimate/priors';
+import { isUsableTermination } from '../../numeric/termination';
 import { type AnalysisInput, type AnalysisProgress, type AnalysisRun, runFromSteps } from '../analysis-run';
 import { computeCollinearity } from './collinearity';
 import { analyseDecision } from './decide-months';
 import { compareScales, fitScale, readPlainSeries } from './error-scales';
 import { toPlainTheta } from './plain-point';
-import { profileQuantity } from './profile-interval';
+import { profileInSteps } from './profile-interval';
 import type { IdentifiabilityReport } from './report';
 import { computeSensitivity } from './sensitivity';
-import { computeSignPattern } from './sign-pattern';
+import { computeSignPatternInSteps } from './sign-pattern';
 
 /** The series cannot be fitted: it has no analysis either. */
 export type IdentifiabilityFailure = 'not-fitted';
@@ -45,13 +46,16 @@ function* runIdentifiability(
   const { draws, options, report } = input;
   yield { done: 0, total: TOTAL };
   const plain = yield* runPlain(input, observations);
-  const signPattern = computeSignPattern({
-    observations,
-    priors: buildPriors(observations),
-    floors: floorsOf(input),
-    point: pointOf(input),
-    seed: options.seed,
-  });
+  const signPattern = yield* standAt(
+    2 + PROFILED.length,
+    computeSignPatternInSteps({
+      observations,
+      priors: buildPriors(observations),
+      floors: floorsOf(input),
+      point: pointOf(input),
+      seed: options.seed,
+    }),
+  );
   yield { done: PARTS - 2, total: TOTAL };
   const decision = yield* runDecision(input);
   return {
@@ -65,6 +69,15 @@ function* runIdentifiability(
   };
 }
 
+/** Runs one part to its end, its slices reported as so many parts done. */
+function* standAt<Result>(done: number, part: Generator<void, Result>): Steps<Result> {
+  for (;;) {
+    const step = part.next();
+    if (step.done) return step.value;
+    yield { done, total: TOTAL };
+  }
+}
+
 /** The parts that rest on the plain least-squares fit; null for a series with too few months of both firms. */
 function* runPlain(
   { series, options }: AnalysisInput,
@@ -72,11 +85,10 @@ function* runPlain(
 ): Steps<Pick<IdentifiabilityReport, 'errorScales' | 'profiles'>> {
   const plainSeries = readPlainSeries(series, observations);
   if (!plainSeries) return { errorScales: null, profiles: null };
-  const log = fitScale(plainSeries, 'log', options.seed);
-  yield { done: 1, total: TOTAL };
-  const raw = fitScale(plainSeries, 'raw', options.seed);
+  const log = yield* standAt(0, fitScale(plainSeries, 'log', options.seed));
+  const raw = yield* standAt(1, fitScale(plainSeries, 'raw', options.seed));
   yield { done: 2, total: TOTAL };
-  const profiles = yield* runProfiles(plainSeries, log);
+  const profiles = isUsableTermination(log.status) ? yield* runProfiles(plainSeries, log) : null;
   return { errorScales: compareScales(log, raw), profiles };
 }
 
@@ -85,11 +97,18 @@ function* runProfiles(series: PlainSeries, fit: PlainFit): Steps<Identifiability
   const best = toPlainTheta(fit, problem.scales);
   const profiles: NonNullable<IdentifiabilityReport['profiles']> = [];
   for (const quantity of PROFILED) {
-    const { estimate, low, high } = profileQuantity(problem, best, fit.rss, quantity);
-    profiles.push({ quantity, estimate, low, high });
-    yield { done: 2 + profiles.length, total: TOTAL };
+    if (!existsIn(fit, quantity)) continue;
+    const steps = profileInSteps(problem, best, fit.rss, quantity);
+    const profile = yield* standAt(2 + profiles.length, steps);
+    if (profile) profiles.push({ ...profile, quantity });
   }
-  return profiles;
+  return profiles.length > 0 ? profiles : null;
+}
+
+/** A firm that does not grow alone has no saturation level, and shares of room mean nothing beside it. */
+function existsIn({ growsAlone: [first, second] }: PlainFit, quantity: (typeof PROFILED)[number]): boolean {
+  if (quantity === 'k1') return first;
+  return quantity === 'k2' ? second : first && second;
 }
 
 function* runDecision({ draws, options }: AnalysisInput): Steps<IdentifiabilityReport['decision']> {

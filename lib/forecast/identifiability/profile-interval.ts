@@ -11,7 +11,8 @@
  * sqrt(n ln(RSS/RSS_min)) is nearly straight, so that its crossing of sqrt(threshold) takes a handful of fits.
  */
 import { PLAIN_PARAMETER_COUNT, type PlainProblem } from '../../estimate/plain-problem';
-import { fitNonNegative } from '../../numeric/non-negative-fit';
+import { fitNonNegativeInSteps } from '../../numeric/non-negative-fit';
+import { runToEnd } from '../../numeric/run-to-end';
 import {
   constrainProblem,
   type Held,
@@ -59,19 +60,32 @@ const INFINITE = 2;
 const FIRST_STEP = 0.05;
 const LARGEST_GROWTH = 4;
 
+/** Evaluations of the problem for one quantity: several times what counts of a market take, seconds at the most. */
+const MAX_EVALUATIONS = 4000;
+
 interface Profile {
   /** Root deviance at t; Infinity where nothing finite was found. */
-  rootDeviance(t: number): number;
+  rootDeviance(t: number): Generator<void, number>;
+  /** More work has gone into it than the quantity is worth. */
+  readonly isDear: boolean;
 }
 
-/** @param best the point of least RSS of the plain problem, `rss` its value */
-export function profileQuantity(
+/**
+ * @param best the point of least RSS of the plain problem, `rss` its value
+ * @returns null where an end was not settled within the limit of work
+ */
+export function profileQuantity(...input: Parameters<typeof profileInSteps>): ProfileInterval | null {
+  return runToEnd(profileInSteps(...input));
+}
+
+/** The same as a generator that yields after every bounded piece of work. */
+export function* profileInSteps(
   problem: PlainProblem,
   best: Float64Array,
   rss: number,
   quantity: ProfiledQuantity,
   options: Partial<ProfileOptions> = {},
-): ProfileInterval {
+): Generator<void, ProfileInterval | null> {
   const chosen = { ...DEFAULT_PROFILE_OPTIONS, ...options };
   const raw = readQuantity(quantity, best, problem.scales);
   if (Number.isNaN(raw)) return { quantity, estimate: null, low: null, high: null };
@@ -85,8 +99,10 @@ export function profileQuantity(
     const profile = createProfile(problem, best, rss, quantity, chosen.allowsHelp);
     return findEnd(profile, centre, bound, limit);
   };
-  const low = search(lowest);
-  const high = search(INFINITE);
+  const low = yield* search(lowest);
+  if (low === GIVEN_UP) return null;
+  const high = yield* search(INFINITE);
+  if (high === GIVEN_UP) return null;
   const lowEnd = low === null && lowest === 0 ? 0 : low;
   return {
     quantity,
@@ -111,25 +127,39 @@ function createProfile(
   const unit = unitOf(quantity, problem.scales);
   const isLevel = quantity === 'k1' || quantity === 'k2';
   let near = best;
+  let evaluations = 0;
   const holdAt = (t: number): Held =>
     isLevel || t > 1 ? { form: 'inverse', value: (INFINITE - t) / unit } : { form: 'value', value: unit * t };
   return {
-    rootDeviance(t) {
+    *rootDeviance(t) {
       const constrained = constrainProblem(problem, quantity, holdAt(t), allowsHelp);
-      const fit = fitNonNegative(constrained, constrained.reduce(near), constrained.isBounded, FIT);
+      const start = constrained.reduce(near);
+      const fit = yield* fitNonNegativeInSteps(constrained, start, constrained.isBounded, FIT);
+      evaluations += fit.evaluations;
       const found = 2 * fit.fit.cost;
       if (!(found < Number.POSITIVE_INFINITY)) return Number.POSITIVE_INFINITY;
       near = constrained.expand(fit.theta);
       return Math.sqrt(Math.max(0, problem.residualCount * Math.log(found / rss)));
     },
+    get isDear() {
+      return evaluations > MAX_EVALUATIONS;
+    },
   };
 }
+
+/** An end that was not settled within the limit of work. */
+const GIVEN_UP = 'given-up';
 
 /**
  * Where the root deviance, 0 at `from`, reaches `limit` on the way to `bound`; null when it does not.
  * Steps out by the straight line through the last point, then closes in on the bracket.
  */
-function findEnd({ rootDeviance }: Profile, from: number, bound: number, limit: number): number | null {
+function* findEnd(
+  profile: Profile,
+  from: number,
+  bound: number,
+  limit: number,
+): Generator<void, number | null | typeof GIVEN_UP> {
   const direction = Math.sign(bound - from);
   if (direction === 0) return null;
   const reach = Math.abs(bound - from);
@@ -139,7 +169,8 @@ function findEnd({ rootDeviance }: Profile, from: number, bound: number, limit: 
   let outsideValue = Number.NaN;
   let step = Math.min(FIRST_STEP, reach);
   for (let fits = 0; fits < MAX_FITS; fits++) {
-    const value = rootDeviance(from + direction * step);
+    if (profile.isDear) return GIVEN_UP;
+    const value = yield* profile.rootDeviance(from + direction * step);
     if (Math.abs(value - limit) <= END_TOLERANCE * limit) return from + direction * step;
     if (value < limit) {
       if (step >= reach) return null;

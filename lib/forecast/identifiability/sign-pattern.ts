@@ -13,12 +13,13 @@ import type { Observations } from '../../estimate/observations';
 import { type ErrorGuess, guessError, refineError } from '../../estimate/penalised-problem';
 import type { Priors } from '../../estimate/priors';
 import { choleskyOrNull } from '../../numeric/cholesky';
-import { fitLeastSquares, type LeastSquaresFit } from '../../numeric/least-squares';
+import { fitLeastSquaresInSteps, type LeastSquaresFit } from '../../numeric/least-squares';
 import { halfSumOfSquares } from '../../numeric/linear';
 import { normalCdf } from '../../numeric/normal';
 import { createStream, type RandomStream } from '../../numeric/random';
+import { runToEnd } from '../../numeric/run-to-end';
 import { EFFECTS, type Effect, SIGN_PATTERNS, type SignPattern, type SignPatternId } from './report';
-import { createSignedProblem, SIGNED_PRIOR_SD } from './signed-path';
+import { createSignedProblem, SIGNED_PRIOR_SD, type SignedProblem } from './signed-path';
 
 /** A coefficient smaller than this is no effect: less than a tenth of the other's room when full. */
 export const NONE_WITHIN = 0.1;
@@ -55,18 +56,29 @@ export interface SignInput {
 
 /** @returns null when no fit is finite, or too few draws carry the weight */
 export function computeSignPattern(input: SignInput): SignPattern | null {
-  const fitted = fitSigned(input);
+  return runToEnd(computeSignPatternInSteps(input));
+}
+
+/** The same as a generator that yields after every round of draws. */
+export function* computeSignPatternInSteps(input: SignInput): Generator<void, SignPattern | null> {
+  const fitted = yield* fitSigned(input);
   if (!fitted?.fit.covariance) return null;
   const { fit, problem } = fitted;
   const residuals = new Float64Array(problem.residualCount);
   const logDensity = (phi: Float64Array) =>
     problem.evaluate(phi, residuals, null) ? -halfSumOfSquares(residuals) : Number.NEGATIVE_INFINITY;
   const covariance = fit.covariance!.map((value) => value * FIRST_WIDENING ** 2);
-  const sample = sampleAdaptively(logDensity, fit.theta, covariance, createStream(input.seed, STREAM));
+  yield;
+  const sample = yield* sampleAdaptively(logDensity, fit.theta, covariance, createStream(input.seed, STREAM));
   return sample && sample.effective >= MIN_EFFECTIVE ? describe(sample) : null;
 }
 
-function fitSigned({ observations, priors, floors, point }: SignInput) {
+interface SignedFit {
+  fit: LeastSquaresFit;
+  problem: SignedProblem;
+}
+
+function* fitSigned({ observations, priors, floors, point }: SignInput): Generator<void, SignedFit | null> {
   const { firms } = observations;
   let guesses: readonly [ErrorGuess, ErrorGuess] = [guessError(firms[0]), guessError(firms[1])];
   const first = Float64Array.from(point, (value, j) => (j === 4 || j === 5 ? value : Math.log(value)));
@@ -74,10 +86,11 @@ function fitSigned({ observations, priors, floors, point }: SignInput) {
     first,
     ...FURTHER_STARTS.map((pair) => first.map((value, j) => (j === 4 || j === 5 ? pair[j - 4] : value))),
   ];
-  let best: { fit: LeastSquaresFit; problem: ReturnType<typeof createSignedProblem> } | null = null;
+  let best: SignedFit | null = null;
   for (let round = 0; round < ERROR_ROUNDS + 1; round++) {
     const problem = createSignedProblem(observations, priors, guesses);
-    const fits = starts.map((start) => fitLeastSquares(problem, start, FIT));
+    const fits: LeastSquaresFit[] = [];
+    for (const start of starts) fits.push(yield* fitLeastSquaresInSteps(problem, start, FIT));
     const fit = fits.reduce((a, b) => (b.cost < a.cost ? b : a));
     if (!Number.isFinite(fit.cost)) return null;
     best = { fit, problem };
@@ -96,12 +109,12 @@ interface WeightedSample {
   effective: number;
 }
 
-function sampleAdaptively(
+function* sampleAdaptively(
   logDensity: (phi: Float64Array) => number,
   start: Float64Array,
   startCovariance: Float64Array,
   stream: RandomStream,
-): WeightedSample | null {
+): Generator<void, WeightedSample | null> {
   let mean: Float64Array = start;
   let covariance: Float64Array = startCovariance;
   let best: WeightedSample | null = null;
@@ -109,6 +122,7 @@ function sampleAdaptively(
     const root = choleskyOrNull(covariance, WIDTH);
     if (!root) return best;
     const sample = drawWeighted(logDensity, mean, root, stream);
+    yield;
     if (!sample) return best;
     if (!best || sample.effective > best.effective) best = sample;
     ({ mean, covariance } = momentsOf(temper(sample)));

@@ -70,6 +70,7 @@ export function createSignedProblem(
     return residuals.every(Number.isFinite);
   };
 
+  /** By central differences. @returns false where a neighbour cannot be followed */
   const fillJacobian = (phi: Float64Array, jacobian: Float64Array): boolean => {
     const at = phi.slice();
     for (let j = 0; j < COUNT; j++) {

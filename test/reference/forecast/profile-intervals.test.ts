@@ -77,7 +77,7 @@ describe.each(REFERENCES)('$name, $errorScale errors', ({ series, errorScale, f,
 
   it.each(rows)('has the reference intervals of %s', (quantity, chi2, byF) => {
     const profile = (options: Parameters<typeof profileQuantity>[4]) =>
-      profileQuantity(problem, best, fit.rss, quantity, { allowsHelp: true, ...options });
+      profileQuantity(problem, best, fit.rss, quantity, { allowsHelp: true, ...options })!;
     expectEnds(profile({}), chi2);
     expectEnds(profile({ threshold: 'f', quantile: f }), byF);
   });

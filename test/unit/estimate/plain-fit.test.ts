@@ -83,8 +83,9 @@ describe('createPlainProblem', () => {
 describe('createPlainStarts', () => {
   it('begins near the truth on exact counts', () => {
     const series = simulate(SYSTEM, [50, 20], 36);
-    const { scales } = createPlainProblem(series, 'log');
-    const [start] = createPlainStarts(series, scales, 1, 1);
+    const problem = createPlainProblem(series, 'log');
+    const { scales } = problem;
+    const [start] = createPlainStarts(series, problem, 1, 1);
     const { b11, b12, b21, b22 } = toCrowdingForm(SYSTEM);
     const truth = [b11 * scales[0], b12 * scales[1], b21 * scales[0], b22 * scales[1]];
     expect(Math.exp(start[0]) / SYSTEM.r1).toBeCloseTo(1, 1);
@@ -95,16 +96,17 @@ describe('createPlainStarts', () => {
 
   it('is the same for the same seed and different for another', () => {
     const series = simulate(SYSTEM, [50, 20], 36);
-    const starts = createPlainStarts(series, [1000, 800], 4, 1);
-    expect(createPlainStarts(series, [1000, 800], 4, 1)).toEqual(starts);
-    expect(createPlainStarts(series, [1000, 800], 4, 2)[1]).not.toEqual(starts[1]);
+    const problem = createPlainProblem(series, 'log');
+    const starts = createPlainStarts(series, problem, 4, 1);
+    expect(createPlainStarts(series, problem, 4, 1)).toEqual(starts);
+    expect(createPlainStarts(series, problem, 4, 2)[1]).not.toEqual(starts[1]);
     // Asking for fewer does not change the ones before.
-    expect(createPlainStarts(series, [1000, 800], 2, 1)).toEqual(starts.slice(0, 2));
+    expect(createPlainStarts(series, problem, 2, 1)).toEqual(starts.slice(0, 2));
   });
 
   it('survives a series too short to regress', () => {
     const series: PlainSeries = { times: [0, 1], first: [1, 2], second: [3, 2] };
-    for (const start of createPlainStarts(series, [2, 3], 3, 1))
+    for (const start of createPlainStarts(series, createPlainProblem(series, 'log'), 3, 1))
       expect(start.every(Number.isFinite)).toBe(true);
   });
 });

@@ -2,7 +2,7 @@ import { describe, expect, it } from 'vitest';
 import { DEFAULT_LEAST_SQUARES_OPTIONS, fitLeastSquares } from '@/lib/numeric/least-squares';
 import type { LeastSquaresProblem } from '@/lib/numeric/least-squares-problem';
 import { isUsableTermination } from '@/lib/numeric/termination';
-import { createDecay, LINE, ROSENBROCK } from './problems';
+import { BLIND_BELOW_FOUR, createDecay, LINE, ROSENBROCK } from './problems';
 
 describe('fitLeastSquares', () => {
   it.each([0, 4])('finds the bottom of a curved valley with %d bursts', (bursts) => {
@@ -150,6 +150,12 @@ describe('fitLeastSquares', () => {
   it('gives the same digits every time', () => {
     const first = fitLeastSquares(ROSENBROCK, [-1.2, 1]);
     expect(fitLeastSquares(ROSENBROCK, [-1.2, 1]).theta).toEqual(first.theta);
+  });
+
+  it('takes no step to where the derivatives are not finite, and ends', () => {
+    const fit = fitLeastSquares(BLIND_BELOW_FOUR, [9], { bursts: 0 });
+    expect(fit.theta[0]).toBeGreaterThanOrEqual(4);
+    expect(fit.theta[0]).toBeLessThan(4.01);
   });
 
   it('throws on a wrong call, naming what is wrong', () => {

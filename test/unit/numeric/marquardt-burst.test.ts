@@ -2,6 +2,7 @@ import { describe, expect, it } from 'vitest';
 import type { LeastSquaresProblem } from '@/lib/numeric/least-squares-problem';
 import { halfSumOfSquares } from '@/lib/numeric/linear';
 import { runBursts } from '@/lib/numeric/marquardt-burst';
+import { runToEnd } from '@/lib/numeric/run-to-end';
 import { createDecay, LINE, ROSENBROCK } from './problems';
 
 const OPTIONS = { bursts: 4, stepsPerBurst: 5 };
@@ -19,7 +20,7 @@ describe('runBursts', () => {
     ['a line', LINE, [10, -10]],
     ['a decay', createDecay(0.7), [3]],
   ] as const)('comes down on %s and never ends above its start', (_, problem, start) => {
-    const end = runBursts(problem, Float64Array.from(start), OPTIONS);
+    const end = runToEnd(runBursts(problem, Float64Array.from(start), OPTIONS));
     expect(end.steps).toBeGreaterThan(0);
     expect(costOf(problem, end.theta)).toBeLessThan(0.2 * costOf(problem, start));
   });
@@ -33,7 +34,7 @@ describe('runBursts', () => {
         return true;
       },
     };
-    expect(Array.from(runBursts(wrong, Float64Array.of(0, 0), OPTIONS).theta)).toEqual([0, 0]);
+    expect(Array.from(runToEnd(runBursts(wrong, Float64Array.of(0, 0), OPTIONS)).theta)).toEqual([0, 0]);
   });
 
   it('survives a model that is not a number a step away', () => {
@@ -47,7 +48,7 @@ describe('runBursts', () => {
         return Number.isFinite(residuals[0]);
       },
     };
-    const end = runBursts(walled, Float64Array.of(5), OPTIONS);
+    const end = runToEnd(runBursts(walled, Float64Array.of(5), OPTIONS));
     expect(costOf(walled, end.theta)).toBeLessThanOrEqual(costOf(walled, [5]));
   });
 
@@ -62,7 +63,7 @@ describe('runBursts', () => {
         return true;
       },
     };
-    expect(runBursts(far, Float64Array.of(1e15), OPTIONS).theta[0] / 4e17).toBeCloseTo(1, 2);
+    expect(runToEnd(runBursts(far, Float64Array.of(1e15), OPTIONS)).theta[0] / 4e17).toBeCloseTo(1, 2);
   });
 
   it('leaves a single residual to the polish', () => {
@@ -75,6 +76,9 @@ describe('runBursts', () => {
         return true;
       },
     };
-    expect(runBursts(single, Float64Array.of(3), OPTIONS)).toEqual({ theta: Float64Array.of(3), steps: 0 });
+    expect(runToEnd(runBursts(single, Float64Array.of(3), OPTIONS))).toEqual({
+      theta: Float64Array.of(3),
+      steps: 0,
+    });
   });
 });

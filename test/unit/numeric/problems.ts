@@ -41,3 +41,14 @@ export const LINE: LeastSquaresProblem = {
     return Number.isFinite(residuals[0]);
   },
 };
+
+/** x^2 around 3, whose derivative overflows below 4 although the value does not: no step may be taken there. */
+export const BLIND_BELOW_FOUR: LeastSquaresProblem = {
+  parameterCount: 1,
+  residualCount: 1,
+  evaluate(theta, residuals, jacobian) {
+    residuals[0] = theta[0] - 3;
+    jacobian?.fill(1);
+    return jacobian === null || theta[0] >= 4;
+  },
+};

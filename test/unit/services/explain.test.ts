@@ -1,5 +1,10 @@
 import { expect, it } from 'vitest';
-import { explainCode, explainFailure, explainStaleReason } from '@/lib/services/explain';
+import {
+  explainAnalysisFailure,
+  explainCode,
+  explainFailure,
+  explainStaleReason,
+} from '@/lib/services/explain';
 
 it('every failure has sentences of its own, also one that this version does not know', () => {
   const codes = ['too-short', 'no-usable-data', 'failed', 'engine-error', 'gave-up', 'of-the-future', null];
@@ -13,4 +18,19 @@ it('every failure has sentences of its own, also one that this version does not 
 it('codes and reasons are said in whole sentences', () => {
   for (const sentence of Object.values(explainCode('not-available'))) expect(sentence).toMatch(/^[A-Z].+\.$/);
   expect(explainStaleReason('newer-revision')).toMatch(/^[A-Z].+\.$/);
+});
+
+it('an analysis that gave no result says which one it was, and why', () => {
+  for (const kind of ['backtest', 'identifiability'] as const) {
+    for (const code of ['engine-error', 'gave-up']) {
+      const { what } = explainAnalysisFailure(kind, code);
+      expect(what).toContain(kind === 'backtest' ? 'past forecasts' : 'what the data can tell');
+      for (const sentence of Object.values(explainAnalysisFailure(kind, code)))
+        expect(sentence).toMatch(/^[A-Z].+\.$/);
+    }
+  }
+  expect(explainAnalysisFailure('backtest', 'too-few-origins').what).toBe(
+    'Past forecasts cannot be tested yet.',
+  );
+  expect(explainAnalysisFailure('identifiability', 'of-the-future').what).toBe('This failed.');
 });
