@@ -3,6 +3,7 @@
  * the driver owns time and cancelling.
  */
 import { createStream } from '../numeric/random';
+import type { Month } from '../series/types';
 import { createAr1Posterior, SMALLEST_ERROR } from './ar1-posterior';
 import { blendRows, judgeBlend, samplePaths, type WeightedDraws } from './blend';
 import { ESS_LIMIT, HYPERCUBE_STARTS, R_HAT_LIMIT } from './defaults';
@@ -110,7 +111,8 @@ export function* runFit({ series, options }: FitInput): Generator<FitProgress, F
     if (mode) points.push(mode);
     yield progress('polish');
   }
-  const choosing = chooseComponents(observations, priors, options, points);
+  const marked = placeMarks(options.changeMonths, series.firstMonth, observations);
+  const choosing = chooseComponents(observations, priors, options, points, marked);
   let choice = choosing.next();
   for (; !choice.done; choice = choosing.next()) yield progress('polish');
   if (!choice.value) return { failure: { status: 'failed', starts: rows } };
@@ -163,10 +165,11 @@ function* chooseComponents(
   priors: Priors,
   options: FitOptions,
   points: readonly Mode[],
+  marked: readonly number[],
 ): Generator<undefined, ModelChoice | null> {
   if (points.length === 0) return null;
   if (options.errorModel === 'process-noise') {
-    return yield* chooseModels(observations, priors, options.measurementFloor, points);
+    return yield* chooseModels(observations, priors, options.measurementFloor, points, marked);
   }
   const posterior = createAr1Posterior(observations, priors, options.measurementFloor);
   const modes = climbFrom(posterior, points);
@@ -176,7 +179,18 @@ function* chooseComponents(
     harmonics: 0,
     flags: [],
     breakChance: 0,
+    markedBreaks: [],
   };
+}
+
+/** Marked months as months of the grid, in order, each once; those without a month of the series on both sides are passed over. */
+function placeMarks(
+  changeMonths: FitOptions['changeMonths'],
+  firstMonth: Month,
+  { skippedMonths, months }: Observations,
+): number[] {
+  const places = (changeMonths ?? []).map((month) => month - firstMonth - skippedMonths);
+  return [...new Set(places)].filter((place) => place > 0 && place < months).sort((a, b) => a - b);
 }
 
 function assembleFit(

@@ -9,11 +9,11 @@
  */
 import { choleskyOrNull, sampleCovariance } from '../numeric/cholesky';
 import { createStream, type RandomStream } from '../numeric/random';
+import type { ModelComponent } from './break-choice';
 import type { WorkingCoordinates } from './coordinates';
 import { createDrawStore, type DrawStore } from './draw-store';
 import { createHmcChain, type HmcChain } from './hmc';
 import type { LocalMode } from './local-mode';
-import type { ModelComponent } from './model-choice';
 import type { Posterior } from './posterior';
 import { createStepSizeTuner } from './step-size';
 

@@ -1,4 +1,4 @@
-import type { MonthlySeries } from '../series/types';
+import type { Month, MonthlySeries } from '../series/types';
 
 /** Ids of the estimated parameters; names, units and bounds for people are in `parameters.ts`. */
 export type ParameterId = 'r1' | 'r2' | 'k1' | 'k2' | 'alpha' | 'beta' | 'n1Start' | 'n2Start';
@@ -20,6 +20,11 @@ export interface FitOptions {
   /** Smallest allowed measurement error, sd of ln users, per firm: a panel estimate of a rival at +-10 % is 0.1. */
   measurementFloor: { focal: number; rival: number };
   errorModel: ErrorModel;
+  /**
+   * Months from which parameters may differ, because something happened then. Those with no month of the series on both sides are passed
+   * over, and all of them under persistent errors, which know no break. Absent: none.
+   */
+  changeMonths?: Month[];
 }
 
 /** What a fit reads. */

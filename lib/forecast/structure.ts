@@ -13,14 +13,23 @@ export function describeStructure({ choice, draws, observations }: Fit, firstMon
   return {
     seasonHarmonics: choice.harmonics,
     breakChance: choice.breakChance,
-    breakMonth: findBreakMonth(draws, gridStart),
+    breakMonth: findBreakMonth(draws, choice.markedBreaks, gridStart),
+    ...(choice.markedBreaks.length > 0 && {
+      markedBreaks: choice.markedBreaks.map(({ month, chance }) => ({ month: gridStart + month, chance })),
+    }),
     flaggedCounts: choice.flags.map(({ firm, month }) => ({ firm, month: gridStart + month })),
   };
 }
 
-function findBreakMonth(draws: Fit['draws'], gridStart: Month): Structure['breakMonth'] {
+/** Of breaks in months that nobody marked. */
+function findBreakMonth(
+  draws: Fit['draws'],
+  marked: Fit['choice']['markedBreaks'],
+  gridStart: Month,
+): Structure['breakMonth'] {
   if (!draws.columns.includes('breakMonth')) return null;
-  const months = readColumn(draws, 'breakMonth').filter((month) => month >= 0);
+  const known = new Set([-1, ...marked.map(({ month }) => month)]);
+  const months = readColumn(draws, 'breakMonth').filter((month) => !known.has(month));
   if (months.length < MIN_DRAWS_FOR_INTERVAL) return null;
   const { q05, q50, q95 } = intervalOf(months);
   return { q05: gridStart + q05, q50: gridStart + q50, q95: gridStart + q95 };
