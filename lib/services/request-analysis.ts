@@ -5,7 +5,7 @@
 import { ENGINE_VERSION } from '../estimate/engine-version';
 import { enqueueAnalysis } from '../jobs/enqueue-analysis';
 import { ensureAnalysis } from '../store/analyses';
-import type { AnalysisKind } from '../store/analysis-kinds';
+import { type AnalysisKind, isAnalysisKind } from '../store/analysis-kinds';
 import { addAuditEntry } from '../store/audit';
 import { latestDoneFit } from '../store/fits';
 import { type Refusal, refuse, type Success, succeed } from './outcome';
@@ -18,6 +18,8 @@ export async function requestAnalysis(
   kind: AnalysisKind,
 ): Promise<Success<{ analysisId: string }> | NotAllowed | NotFound | Refusal<'no-result'>> {
   if (!canWrite(viewer)) return refuse('not-allowed');
+  // it came through a form
+  if (!isAnalysisKind(kind)) return refuse('not-found');
   const { workspaceId, userId } = viewer;
   const fit = await latestDoneFit({ workspaceId, marketId });
   if (!fit) return refuse('no-result');
