@@ -179,12 +179,20 @@ export function explainFailure(code: string | null): Explanation {
   return FAILURES[code as FailureCode] ?? UNKNOWN_FAILURE;
 }
 
-const STALE_REASONS: Record<StaleReason, string> = {
-  'newer-revision': 'Newer data have arrived since this outlook was made.',
-  'measurement-changed': 'The measurement errors of the market were changed since this outlook was made.',
-  'engine-changed': 'The method of calculation was improved since this outlook was made.',
+/** Numbers of the revisions: the one that an outlook was made from, and the newest. */
+export interface RevisionNumbers {
+  used: number;
+  newest: number;
+}
+
+const STALE_REASONS: Record<StaleReason, (numbers: RevisionNumbers) => string> = {
+  'newer-revision': ({ used, newest }) =>
+    `It was made from revision ${used} of the counts; revision ${newest} has come since.`,
+  'measurement-changed': () =>
+    'The measurement errors of the market were changed since this outlook was made.',
+  'engine-changed': () => 'The method of calculation was improved since this outlook was made.',
 };
 
-export function explainStaleReason(reason: StaleReason): string {
-  return STALE_REASONS[reason];
+export function explainStaleReason(reason: StaleReason, numbers: RevisionNumbers): string {
+  return STALE_REASONS[reason](numbers);
 }

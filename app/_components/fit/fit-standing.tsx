@@ -5,6 +5,7 @@
 import type { ReactNode } from 'react';
 import { type Explanation, explainFailure, explainStaleReason } from '@/lib/services/explain';
 import type { MarketPage } from '@/lib/services/read-market';
+import type { StaleReason } from '@/lib/services/staleness';
 import { Question } from '../frame/question';
 import { Headline } from '../text/headline';
 import { FitButton } from './fit-button';
@@ -41,7 +42,8 @@ interface Standing {
   action: ReactNode;
 }
 
-function describeStanding({ market, fit, outlook }: MarketPage, canWrite: boolean): Standing | null {
+function describeStanding(page: MarketPage, canWrite: boolean): Standing | null {
+  const { market, fit, outlook } = page;
   const again = (label?: string) => (canWrite ? <FitButton marketId={market.id} label={label} /> : null);
   if (!fit) {
     return {
@@ -72,7 +74,7 @@ function describeStanding({ market, fit, outlook }: MarketPage, canWrite: boolea
       return outlook && outlook.staleReasons.length > 0
         ? {
             what: 'This outlook is out of date.',
-            detail: <StaleReasons reasons={outlook.staleReasons} />,
+            detail: <StaleReasons page={page} reasons={outlook.staleReasons} />,
             action: again(),
           }
         : null;
@@ -95,6 +97,8 @@ function explainEnd({ what, why, tryThis }: Explanation): Omit<Standing, 'action
   };
 }
 
-function StaleReasons({ reasons }: { reasons: NonNullable<MarketPage['outlook']>['staleReasons'] }) {
-  return reasons.map((reason) => <p key={reason}>{explainStaleReason(reason)}</p>);
+function StaleReasons({ page, reasons }: { page: MarketPage; reasons: StaleReason[] }) {
+  const newest = page.revision.number;
+  const numbers = { used: page.facts?.revision.number ?? newest, newest };
+  return reasons.map((reason) => <p key={reason}>{explainStaleReason(reason, numbers)}</p>);
 }

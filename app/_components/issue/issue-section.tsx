@@ -17,7 +17,12 @@ export function IssueSection({ page, canWrite }: IssueSectionProps) {
       {canWrite && !canIssue && page.outlook ? (
         <p>Only an outlook that is up to date can be issued: fit again first.</p>
       ) : null}
-      <IssuedList marketId={page.market.id} issued={page.issued} canWrite={canWrite} />
+      <IssuedList
+        marketId={page.market.id}
+        issued={page.issued}
+        newestRevision={page.revision.number}
+        canWrite={canWrite}
+      />
     </Question>
   );
 }

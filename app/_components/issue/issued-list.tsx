@@ -8,10 +8,12 @@ import styles from './issue.module.css';
 interface IssuedListProps {
   marketId: string;
   issued: IssuedSummary[];
+  /** Number of the market's newest revision. */
+  newestRevision: number;
   canWrite: boolean;
 }
 
-export function IssuedList({ marketId, issued, canWrite }: IssuedListProps) {
+export function IssuedList({ marketId, issued, newestRevision, canWrite }: IssuedListProps) {
   if (issued.length === 0) return <p className={styles.none}>No forecast of this market was issued yet.</p>;
   return (
     <ol className={styles.issuedList}>
@@ -21,7 +23,10 @@ export function IssuedList({ marketId, issued, canWrite }: IssuedListProps) {
             <Link href={`/markets/${marketId}/issued/${forecast.id}`}>
               Issued {formatDay(forecast.issuedAt)}
             </Link>
-            <span className={styles.by}> by {forecast.issuedByName}</span>
+            <span className={styles.by}>
+              {' '}
+              by {forecast.issuedByName}, {nameRevision(forecast.revisionNumber, newestRevision)}
+            </span>
           </h3>
           <ForecastLinks
             marketId={marketId}
@@ -33,4 +38,10 @@ export function IssuedList({ marketId, issued, canWrite }: IssuedListProps) {
       ))}
     </ol>
   );
+}
+
+function nameRevision(used: number, newest: number): string {
+  return used === newest
+    ? `from revision ${used}, the newest counts`
+    : `from revision ${used}; revision ${newest} is the newest`;
 }

@@ -17,7 +17,9 @@ it('every failure has sentences of its own, also one that this version does not 
 
 it('codes and reasons are said in whole sentences', () => {
   for (const sentence of Object.values(explainCode('not-available'))) expect(sentence).toMatch(/^[A-Z].+\.$/);
-  expect(explainStaleReason('newer-revision')).toMatch(/^[A-Z].+\.$/);
+  for (const reason of ['newer-revision', 'measurement-changed', 'engine-changed'] as const)
+    expect(explainStaleReason(reason, { used: 3, newest: 5 })).toMatch(/^[A-Z].+\.$/);
+  expect(explainStaleReason('newer-revision', { used: 3, newest: 5 })).toMatch(/revision 3 .*revision 5/);
 });
 
 it('an analysis that gave no result says which one it was, and why', () => {
