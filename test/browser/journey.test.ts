@@ -4,14 +4,13 @@
  */
 import { readFileSync } from 'node:fs';
 import { fileURLToPath } from 'node:url';
-import type { Browser, Page } from 'playwright-core';
+import type { Browser } from 'playwright-core';
 import { afterAll, beforeAll, describe, expect, test } from 'vitest';
 import { findViolations, openBrowser, openPage, shoot, type WatchedPage } from './browser';
+import { giveFile, signUp } from './people';
 import { type RunningApp, startApp } from './running-app';
 
 const SERIES_FILE = fileURLToPath(new URL('data/gause-paramecium.csv', import.meta.url));
-const PASSWORD = 'correct horse battery staple';
-const EMAIL = 'mira@example.org';
 /** A fit takes seconds here; a busy machine may need more. */
 const FIT_LIMIT_MS = 120_000;
 
@@ -31,12 +30,6 @@ afterAll(async () => {
   expect(await app?.stop()).toBe(0);
 });
 
-async function uploadSeries(page: Page, path: string) {
-  const chooser = page.waitForEvent('filechooser');
-  await page.getByRole('button', { name: 'Choose a file' }).click();
-  await (await chooser).setFiles(path);
-}
-
 describe.sequential('from a file to a link', () => {
   test('somebody signed out is sent to the sign-in page', async () => {
     const { page, context, errors } = await openPage(browser);
@@ -52,11 +45,7 @@ describe.sequential('from a file to a link', () => {
     const { page } = analyst;
     await page.goto(app.ownerLink);
     expect(await findViolations(page)).toEqual([]);
-    await page.getByLabel('Your name').fill('Mira Tarn');
-    await page.getByLabel('E-mail address').fill(EMAIL);
-    await page.getByLabel('Password').fill(PASSWORD);
-    await page.getByRole('button', { name: 'Make the account' }).click();
-    await page.waitForURL(`${app.address}/`);
+    await signUp(page, app, app.ownerLink, { name: 'Mira Tarn', email: 'mira@example.org' });
     const second = await openPage(browser);
     await second.page.goto(app.ownerLink);
     expect(await second.page.getByRole('button', { name: 'Make the account' }).count()).toBe(0);
@@ -90,7 +79,7 @@ describe.sequential('from a file to a link', () => {
     const { page } = analyst;
     await page.goto(`${app.address}/markets/new`);
     expect(await findViolations(page)).toEqual([]);
-    await uploadSeries(page, SERIES_FILE);
+    await giveFile(page, SERIES_FILE);
     await page.getByText(/26 months, January 2020 to February 2022/).waitFor();
     await page.getByText(/both firms known in/).waitFor();
     await page.getByLabel('Name of the market').fill('Two species in one tube');

@@ -22,7 +22,7 @@ export function RestoreButton({ marketId, number, newestNumber }: RestoreButtonP
   return (
     <>
       <ConfirmButton
-        label={`Bring revision ${number} back`}
+        label={`Bring it back as revision ${newestNumber + 1}`}
         question={`Bring revision ${number} back?`}
         consequence={`Its counts become revision ${newestNumber + 1} and are fitted. Revision ${newestNumber} and all others stay on record.`}
         confirmLabel="Bring it back"

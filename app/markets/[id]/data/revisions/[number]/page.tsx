@@ -60,14 +60,14 @@ export default async function RevisionDataPage({ params, searchParams }: PagePro
             unit={market.unit}
           />
         </div>
-        <p className={styles.links}>
+        <div className={styles.links}>
           <a href={`/markets/${id}/data/csv?revision=${revision.number}`} download>
             Download it as CSV
           </a>
           {canWrite(viewer) && revision.number !== newestNumber ? (
             <RestoreButton marketId={id} number={revision.number} newestNumber={newestNumber} />
           ) : null}
-        </p>
+        </div>
       </Question>
       <Changes page={outcome.value} />
       <Question id="source" question="Where does it come from?">
