@@ -81,12 +81,17 @@ function spellMonths(words: Words, months: number): string {
 export function writeEffect(words: Words, comparison: ScenarioComparison): Sentence[] {
   const { effect } = comparison;
   if (effect.reason === 'no-push') return [sentence('Nothing is pushed: this is the forecast as it stands.')];
-  const path = effect.isLasting ? horizonSentence(words, comparison) : worstSentence(words, comparison);
+  const path = writePath(words, comparison);
   if (effect.destination !== 'stays') return [destinationSentence(words, comparison), path];
   if (effect.isLasting) return [lastingSentence(words, effect.settledShareDifference), path];
   if (isHardlyMoved(effect.worstShareDifference)) return [path, reasonSentence(words, comparison)];
   const verdict = sentence('It moves the ', run('path, not the destination', 'both', true), '.');
   return [verdict, path, reasonSentence(words, comparison)];
+}
+
+/** How far the share is moved on the way: at its worst or best, or for a lasting push at the end of the horizon. */
+export function writePath(words: Words, comparison: ScenarioComparison): Sentence {
+  return comparison.effect.isLasting ? horizonSentence(words, comparison) : worstSentence(words, comparison);
 }
 
 function isHardlyMoved({ q50 }: { q50: number }): boolean {

@@ -4,22 +4,19 @@
 import { parseArgs } from 'node:util';
 import Papa from 'papaparse';
 import { DEFAULT_FIT_OPTIONS } from '../estimate/defaults';
-import type { DateOrder, DecimalMark } from '../series/types';
-
-export interface ForecastRequest {
-  file: string;
-  /** Headers of the month, the focal firm and the rival; null: guess them. */
-  columns: [string, string, string] | null;
-  decimalMark?: DecimalMark;
-  dateOrder?: DateOrder;
-  horizonMonths: number;
-  seed: number;
-}
+import type { FitRequest } from './fit-request';
+import {
+  listScenarioOptions,
+  readScenarioRequest,
+  type ScenarioRequest,
+  type ScenarioValues,
+} from './scenario-arguments';
 
 export type Command =
   | { kind: 'help' }
   | { kind: 'version' }
-  | { kind: 'forecast'; request: ForecastRequest }
+  | { kind: 'forecast'; request: FitRequest }
+  | { kind: 'scenario'; request: ScenarioRequest }
   | { kind: 'not-understood'; reason: string };
 
 /** Longest forecast: ten years. Beyond it the bands say nothing. */
@@ -34,6 +31,11 @@ const OPTIONS = {
   'date-order': { type: 'string' },
   months: { type: 'string' },
   seed: { type: 'string' },
+  push: { type: 'string', multiple: true },
+  scenario: { type: 'string', multiple: true },
+  money: { type: 'string' },
+  keep: { type: 'string' },
+  counter: { type: 'string' },
   json: { type: 'boolean' },
   help: { type: 'boolean', short: 'h' },
   version: { type: 'boolean' },
@@ -44,7 +46,7 @@ export function readArguments(args: readonly string[]): Command {
     const { values, positionals } = parseArgs({ args: [...args], options: OPTIONS, allowPositionals: true });
     if (values.help || (positionals[0] === 'help' && positionals.length === 1)) return { kind: 'help' };
     if (values.version) return { kind: 'version' };
-    return readForecast(values, positionals);
+    return readCommand(values, positionals);
   } catch (error) {
     if (isArgumentError(error)) return { kind: 'not-understood', reason: firstSentence(error.message) };
     throw error;
@@ -57,40 +59,46 @@ export function wantsJson(args: readonly string[]): boolean {
   return args.slice(0, end < 0 ? args.length : end).includes('--json');
 }
 
-type Values = Partial<Record<'columns' | 'decimal-mark' | 'date-order' | 'months' | 'seed', string>>;
+type Values = FitValues & ScenarioValues;
+type FitValues = Partial<Record<'columns' | 'decimal-mark' | 'date-order' | 'months' | 'seed', string>>;
 
-function readForecast(values: Values, [command, file, ...more]: string[]): Command {
+const COMMANDS = ['forecast', 'scenario'];
+
+function readCommand(values: Values, [command, file, ...more]: string[]): Command {
   if (command === undefined) return notUnderstood('Say what to do: elbowroom forecast FILE.');
-  if (command !== 'forecast') return notUnderstood(`There is no command “${command}”; there is “forecast”.`);
-  if (file === undefined) return notUnderstood('Name a file: elbowroom forecast FILE.');
+  if (!COMMANDS.includes(command)) {
+    return notUnderstood(`There is no command “${command}”; there are “forecast” and “scenario”.`);
+  }
+  if (file === undefined) return notUnderstood(`Name a file: elbowroom ${command} FILE.`);
   if (more.length > 0) return notUnderstood(`One file at a time; “${more[0]}” is too much.`);
+  const fit = readFitRequest(values, file);
+  if (typeof fit === 'string') return notUnderstood(fit);
+  if (command === 'forecast') {
+    const [foreign] = listScenarioOptions(values);
+    if (foreign) return notUnderstood(`${foreign} belongs to the command “scenario”.`);
+    return { kind: 'forecast', request: fit };
+  }
+  const scenario = readScenarioRequest(values, fit);
+  return typeof scenario === 'string' ? notUnderstood(scenario) : { kind: 'scenario', request: scenario };
+}
 
+/** A string is the reason why it is not understood. */
+function readFitRequest(values: FitValues, file: string): FitRequest | string {
   const columns = values.columns === undefined ? null : splitColumns(values.columns);
   if (columns?.length !== 3 && columns !== null) {
-    return notUnderstood(
-      '--columns takes three headers: month,focal,rival. Put one that holds a comma into double quotes.',
-    );
+    return '--columns takes three headers: month,focal,rival. Put one that holds a comma into double quotes.';
   }
   const horizonMonths = readInteger(values.months, DEFAULT_FIT_OPTIONS.horizonMonths, 1, MAX_HORIZON_MONTHS);
-  if (horizonMonths === null)
-    return notUnderstood(`--months takes a whole number from 1 to ${MAX_HORIZON_MONTHS}.`);
+  if (horizonMonths === null) return `--months takes a whole number from 1 to ${MAX_HORIZON_MONTHS}.`;
   const seed = readInteger(values.seed, DEFAULT_FIT_OPTIONS.seed, 0, MAX_SEED);
-  if (seed === null) return notUnderstood(`--seed takes a whole number from 0 to ${MAX_SEED}.`);
+  if (seed === null) return `--seed takes a whole number from 0 to ${MAX_SEED}.`;
   const decimalMark = values['decimal-mark'];
-  if (!isOneOf(decimalMark, ['point', 'comma'])) return notUnderstood('--decimal-mark takes point or comma.');
+  if (!isOneOf(decimalMark, ['point', 'comma'])) return '--decimal-mark takes point or comma.';
   const dateOrder = values['date-order'];
   if (!isOneOf(dateOrder, ['day-first', 'month-first']))
-    return notUnderstood('--date-order takes day-first or month-first.');
+    return '--date-order takes day-first or month-first.';
 
-  const request = {
-    file,
-    columns: columns as ForecastRequest['columns'],
-    decimalMark,
-    dateOrder,
-    horizonMonths,
-    seed,
-  };
-  return { kind: 'forecast', request };
+  return { file, columns: columns as FitRequest['columns'], decimalMark, dateOrder, horizonMonths, seed };
 }
 
 function notUnderstood(reason: string): Command {

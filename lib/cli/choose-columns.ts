@@ -2,11 +2,11 @@
  * Which columns of the file to read: those that were named, else those that look right.
  */
 import type { SeriesMapping, TableReading } from '../series/types';
-import type { ForecastRequest } from './arguments';
+import type { FitRequest } from './fit-request';
 
 export type ColumnChoice = { ok: true; mapping: SeriesMapping } | { ok: false; message: string };
 
-export function chooseColumns(table: TableReading, request: ForecastRequest): ColumnChoice {
+export function chooseColumns(table: TableReading, request: FitRequest): ColumnChoice {
   const { columns, decimalMark, dateOrder } = request;
   const { guess } = table;
   const month = columns?.[0] ?? guess.month;

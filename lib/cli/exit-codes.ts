@@ -9,7 +9,8 @@ export type ExitId =
   | 'file-unreadable'
   | 'data-unusable'
   | 'too-short'
-  | 'fit-failed';
+  | 'fit-failed'
+  | 'bad-scenario';
 
 export interface ExitCode {
   id: ExitId;
@@ -21,7 +22,8 @@ export const EXIT_CODES: readonly ExitCode[] = [
   {
     id: 'ok',
     code: 0,
-    meaning: 'an outlook was printed; if the sampler stopped short of its target, it says so',
+    meaning:
+      'an outlook or its scenarios were printed; if the sampler stopped short of its target, it says so',
   },
   { id: 'internal', code: 1, meaning: 'a fault of the program itself, or its packages are not installed' },
   { id: 'usage', code: 2, meaning: 'the command was not understood' },
@@ -29,6 +31,7 @@ export const EXIT_CODES: readonly ExitCode[] = [
   { id: 'data-unusable', code: 4, meaning: 'the file holds no two series that can be fitted' },
   { id: 'too-short', code: 5, meaning: 'fewer months than a fit needs' },
   { id: 'fit-failed', code: 6, meaning: 'no start of the fit came to a finite value' },
+  { id: 'bad-scenario', code: 7, meaning: 'a file given by --scenario holds no scenario' },
 ];
 
 export function exitCodeOf(id: ExitId): number {

@@ -2,17 +2,22 @@
  * The text of `--help`.
  */
 import { DEFAULT_FIT_OPTIONS } from '../estimate/defaults';
+import { MAX_SIDE_BY_SIDE, PUSH_KINDS } from '../scenario/push-bounds';
 import { MIN_MONTHS_TO_FIT } from '../series/limits';
 import { MAX_HORIZON_MONTHS } from './arguments';
 import { EXIT_CODES } from './exit-codes';
 
-export const USAGE = 'elbowroom forecast FILE [--columns month,focal,rival] [--months N] [--seed N] [--json]';
+export const USAGE =
+  'elbowroom forecast FILE [--columns month,focal,rival] [--months N] [--seed N] [--json], or elbowroom scenario FILE --push ... (see --help)';
 
 export function helpText(): string {
   const exits = EXIT_CODES.map(({ code, id, meaning }) => `  ${code}  ${id.padEnd(15)}  ${meaning}`);
-  return `${USAGE}
+  return `elbowroom forecast FILE [options]
+elbowroom scenario FILE --push PUSH [--push PUSH ...] [--scenario FILE.json ...] [options]
 
-Reads two firms' monthly user counts and prints where their market is heading and how sure that is.
+forecast reads two firms' monthly user counts and prints where their market is heading and how sure that is.
+scenario says what pushes by either firm would change: destination or path, share and users at 6, 12 and 24 months
+against no push, odds before and after, what it is worth, and the smallest push that answers it.
 
 FILE is CSV, TSV or semicolon text with a header: a month column (2024-03, 03/2024, Mar 2024, 2024-03-31) and one
 column of users per firm. At least ${MIN_MONTHS_TO_FIT} months in which both are known are needed. "-" reads standard input.
@@ -24,8 +29,25 @@ Options
   --seed N              seed of the random draws; the same seed gives the same numbers (${DEFAULT_FIT_OPTIONS.seed} if not given)
   --decimal-mark MARK   point or comma, for counts such as 1,234 that could be read two ways
   --date-order ORDER    day-first or month-first, for dates such as 03/04/2024
-  --json                print one JSON object instead of text; its shape is the schema in lib/cli/forecast-json.ts
+  --json                print one JSON object instead of text; its shape is the schema in lib/cli/forecast-json.ts,
+                        for scenario in lib/cli/scenario-output.ts
   --help, --version
+
+Scenarios (months count from the last observed one)
+  --push PUSH           key=value,key=value: firm (focal or rival), kind (${PUSH_KINDS.join(', ')}),
+                        length (months or lasting), size (users a month for recruits, else a fraction: 0.2 or 20%);
+                        and if wanted start, ramp, carry-over (half-life) in months, spend (money a month).
+                        Recruits may be bought: spend and cost-per-recruit instead of size, most (a month) if returns
+                        diminish. Again for each push, all in one scenario.
+  --scenario FILE       a written scenario, {"version": 1, "name": "...", "pushes": [...], "money": {...}}; its schema is
+                        in lib/scenario/scenario-json.ts. Up to ${MAX_SIDE_BY_SIDE} scenarios are compared side by side.
+  --money MONEY         currency, margin (per user-month of the focal firm), and if wanted rival-margin, discount (a
+                        year), months (over which value is counted)
+  --keep TARGET         firm, share, month, chance: keep that share in that month with that chance ...
+  --counter PUSH        ... by this push: its smallest size, last useful month and break-even spend are printed
+
+  elbowroom scenario counts.csv --push firm=rival,kind=recruits,start=2,length=6,size=5000 \\
+    --keep share=40%,month=24,chance=80% --counter kind=growth-lift,start=4,length=9
 
 Exit codes
 ${exits.join('\n')}

@@ -3,11 +3,13 @@
  */
 import packageJson from '../../package.json';
 import { readArguments, wantsJson } from './arguments';
+import type { CommandEnd } from './command-end';
 import { type ExitId, exitCodeOf } from './exit-codes';
-import { type CommandEnd, forecast } from './forecast-command';
+import { forecast } from './forecast-command';
 import { toErrorJson } from './forecast-json';
 import { renderProblems } from './forecast-text';
 import { helpText, USAGE } from './help';
+import { scenario } from './scenario-command';
 import { openTerminal, type Terminal } from './terminal';
 
 export async function main(args: readonly string[]): Promise<number> {
@@ -34,6 +36,8 @@ function run(args: readonly string[], asJson: boolean, terminal: Terminal): Comm
       return { exit: 'usage', message: `${command.reason} Usage: ${USAGE}`, problems: [] };
     case 'forecast':
       return forecast(command.request, asJson, terminal);
+    case 'scenario':
+      return scenario(command.request, asJson, terminal);
   }
 }
 

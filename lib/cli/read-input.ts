@@ -25,7 +25,7 @@ export function readInput(file: string): InputReading {
   }
 }
 
-function explainSystemError(file: string, error: unknown): string {
+export function explainSystemError(file: string, error: unknown): string {
   const code = error instanceof Error && 'code' in error ? String(error.code) : 'unknown';
   if (code === 'ENOENT') return `There is no file ${file}.`;
   if (code === 'EISDIR') return `${file} is a folder, not a file.`;

@@ -5,11 +5,11 @@
 const LINE_LENGTH = 100;
 const COLUMN_GAP = '  ';
 
-/** Breaks a paragraph at spaces; lines after the first are indented. Fixed spaces become plain ones. */
+/** Breaks a paragraph at plain spaces; lines after the first are indented. Fixed spaces become plain ones and are not broken at. */
 export function wrapText(text: string, indent = 0): string {
   const lines: string[] = [];
   let line = '';
-  for (const word of plain(text).split(' ')) {
+  for (const word of text.split(' ').map(plain)) {
     if (line !== '' && line.length + 1 + word.length > LINE_LENGTH) {
       lines.push(line);
       line = ' '.repeat(indent) + word;

@@ -44,6 +44,11 @@ const CHECKPOINTS = [6, 12, 24];
 /** How far the return of the difference is followed, even beyond the horizon. */
 const LOOK_AHEAD_MONTHS = 60;
 
+/** Months that are followed under a horizon: as far as targets and money may reach. */
+export function followedMonthsOf(horizonMonths: number): number {
+  return Math.max(horizonMonths, LOOK_AHEAD_MONTHS);
+}
+
 /**
  * @throws RangeError when there is no draw or the horizon is no positive integer
  */
@@ -77,7 +82,7 @@ class PreparedDraws implements PreparedScenario {
     seed: number,
   ) {
     this.draws = draws.count;
-    this.followed = new FollowedDraws(draws, Math.max(horizonMonths, LOOK_AHEAD_MONTHS), seed);
+    this.followed = new FollowedDraws(draws, followedMonthsOf(horizonMonths), seed);
     this.baseline = this.followed.createLevels();
     this.pushed = this.followed.createLevels();
     this.difference = this.followed.createLevels();

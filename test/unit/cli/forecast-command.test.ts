@@ -2,8 +2,9 @@ import { mkdtempSync, rmSync, writeFileSync } from 'node:fs';
 import { tmpdir } from 'node:os';
 import { join } from 'node:path';
 import { afterAll, describe, expect, test } from 'vitest';
-import type { ForecastRequest } from '@/lib/cli/arguments';
-import { type CommandEnd, forecast } from '@/lib/cli/forecast-command';
+import type { CommandEnd } from '@/lib/cli/command-end';
+import type { FitRequest } from '@/lib/cli/fit-request';
+import { forecast } from '@/lib/cli/forecast-command';
 import { toErrorJson } from '@/lib/cli/forecast-json';
 import type { Terminal } from '@/lib/cli/terminal';
 import { DEFAULT_FIT_OPTIONS } from '@/lib/estimate/defaults';
@@ -22,7 +23,7 @@ function rows(count: number, write: (index: number) => string): string {
   ].join('\n');
 }
 
-function run(content: string | Uint8Array, change: Partial<ForecastRequest> = {}): CommandEnd {
+function run(content: string | Uint8Array, change: Partial<FitRequest> = {}): CommandEnd {
   const file = join(folder, 'counts.csv');
   writeFileSync(file, content);
   const { seed, horizonMonths } = DEFAULT_FIT_OPTIONS;
