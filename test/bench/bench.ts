@@ -1,7 +1,7 @@
 /**
  * Speed of the engine: `npm run bench -- [MARKETS.json] [LIMIT]` (default: the benchmark markets beside the repository, 12 of them).
  *
- * Micro figures on a path of 60 months; whole markets on one core; and, where Python with scipy and the analyst's script lie beside the
+ * Micro figures on a path of 60 months; scenarios; whole markets on one core; and, where Python with scipy and the analyst's script lie beside the
  * markets, the ratio to it on the same markets in the same run.
  */
 import { spawnSync } from 'node:child_process';
@@ -16,6 +16,7 @@ import type { Posterior } from '@/lib/estimate/posterior';
 import { buildPriors } from '@/lib/estimate/priors';
 import { createStatePosterior } from '@/lib/estimate/state-posterior';
 import { createOutlookRun } from '@/lib/forecast/outlook-run';
+import { benchScenario } from './scenario-bench';
 
 const DEFAULT_MARKETS = '../shared/bench/markets.json';
 const DEFAULT_LIMIT = 12;
@@ -133,6 +134,7 @@ function timeAnalyst(marketsFile: string, limit: number): number | null {
 
 function main(): void {
   benchMicro();
+  benchScenario();
   const marketsFile = process.argv[2] ?? DEFAULT_MARKETS;
   if (!existsSync(marketsFile)) {
     console.log(`no markets at ${marketsFile}: whole-market figures left out`);
