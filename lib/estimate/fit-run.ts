@@ -82,7 +82,7 @@ export function* runFit({ series, options }: FitInput): Generator<FitProgress, F
   const reading = readObservations(series);
   if (!reading.ok) return { failure: { status: reading.status, starts: [] } };
   const { observations } = reading;
-  const priors = buildPriors(observations);
+  const priors = buildPriors(observations, options);
   const starts = createStarts(
     observations,
     priors,

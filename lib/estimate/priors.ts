@@ -6,13 +6,14 @@
  *                        with weight w both N(ln 0.1, 1): hardly any competition. Without that part independent growth is nearly
  *                        excluded. Its centre is where it is so that the two parts touch and a sampler can pass between them.
  *   ln(error size) ~ N(ln 0.04, 1)                                logit(persistence) ~ N(-0.5, 1.2)
- * All from the method of the project; r, K and the coefficients are "common practice" ranges of monthly user counts.
+ * An estimate of the addressable market takes the place of the prior of K: ln K ~ N(ln users, ln(1 + relative error)). The rest can be set too
+ * (`PriorSettings`). All from the method of the project; r, K and the coefficients are "common practice" ranges of monthly user counts.
  */
 import { normalCdf } from '../numeric/normal';
 import type { RandomStream } from '../numeric/random';
 import type { Observations } from './observations';
 import { INDEX, PARAMETERS } from './parameters';
-import type { LogNormalPrior, ParameterId } from './types';
+import type { FitOptions, LogNormalPrior, ParameterId, PriorSettings } from './types';
 
 export interface Priors {
   parameters: Readonly<Record<ParameterId, LogNormalPrior>>;
@@ -36,24 +37,39 @@ const ERROR_SIZE: LogNormalPrior = { meanLog: Math.log(0.04), sdLog: 1 };
 const PROCESS_NOISE: LogNormalPrior = { meanLog: Math.log(0.01), sdLog: 1 };
 const PERSISTENCE = { meanLogit: -0.5, sdLogit: 1.2 };
 
-export function buildPriors(observations: Observations): Priors {
+/** The settings where nobody says otherwise. */
+export const USUAL_PRIORS: Readonly<PriorSettings> = {
+  growth: GROWTH,
+  saturation: { meanLog: SATURATION_ABOVE_LARGEST, sdLog: SATURATION_SD },
+  alpha: COMPETITION,
+  beta: COMPETITION,
+  noCompetition: NO_COMPETITION.weight,
+};
+
+export function buildPriors(
+  observations: Observations,
+  { priors: settings = USUAL_PRIORS, addressable }: Pick<FitOptions, 'priors' | 'addressable'> = {},
+): Priors {
   const [focal, rival] = observations.firms;
-  const saturation = (logCounts: Float64Array): LogNormalPrior => ({
-    meanLog: logCounts.reduce((a, b) => Math.max(a, b)) + SATURATION_ABOVE_LARGEST,
-    sdLog: SATURATION_SD,
-  });
+  const saturation = (logCounts: Float64Array, room: number | null | undefined): LogNormalPrior =>
+    room
+      ? { meanLog: Math.log(room), sdLog: Math.log1p(addressable!.relativeError) }
+      : {
+          meanLog: logCounts.reduce((a, b) => Math.max(a, b)) + settings.saturation.meanLog,
+          sdLog: settings.saturation.sdLog,
+        };
   return {
     parameters: {
-      r1: GROWTH,
-      r2: GROWTH,
-      k1: saturation(focal.logCounts),
-      k2: saturation(rival.logCounts),
-      alpha: COMPETITION,
-      beta: COMPETITION,
+      r1: settings.growth,
+      r2: settings.growth,
+      k1: saturation(focal.logCounts, addressable?.focal),
+      k2: saturation(rival.logCounts, addressable?.rival),
+      alpha: settings.alpha,
+      beta: settings.beta,
       n1Start: { meanLog: focal.logCounts[0], sdLog: START_SD },
       n2Start: { meanLog: rival.logCounts[0], sdLog: START_SD },
     },
-    noCompetition: NO_COMPETITION,
+    noCompetition: { ...NO_COMPETITION, weight: settings.noCompetition },
     errorSize: ERROR_SIZE,
     processNoise: PROCESS_NOISE,
     persistence: PERSISTENCE,

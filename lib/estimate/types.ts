@@ -10,6 +10,28 @@ export interface LogNormalPrior {
   sdLog: number;
 }
 
+/** What is believed of any market before its counts speak; `priors.ts` has the usual settings. */
+export interface PriorSettings {
+  /** Growth rate per month of either firm, small and alone. */
+  growth: LogNormalPrior;
+  /** Saturation level over the largest count, either firm. */
+  saturation: LogNormalPrior;
+  /** alpha and beta, as far as the firms compete at all. */
+  alpha: LogNormalPrior;
+  beta: LogNormalPrior;
+  /** Chance, 0 or more and below 1, that they hardly compete. */
+  noCompetition: number;
+}
+
+/** How many could use such a product at all: the room of a firm alone, as somebody estimates it. */
+export interface AddressableMarket {
+  /** Users; null: not estimated for that firm. */
+  focal: number | null;
+  rival: number | null;
+  /** One sd of both, as a share of them: 0.5 is "half more, or a third less". */
+  relativeError: number;
+}
+
 export type ErrorModel = 'ar1' | 'process-noise';
 
 export interface FitOptions {
@@ -25,6 +47,10 @@ export interface FitOptions {
    * over, and all of them under persistent errors, which know no break. Absent: none.
    */
   changeMonths?: Month[];
+  /** Takes the place of the prior of the saturation level. Absent: not estimated. */
+  addressable?: AddressableMarket;
+  /** Absent: the usual ones. */
+  priors?: PriorSettings;
 }
 
 /** What a fit reads. */

@@ -5,6 +5,7 @@ import { readColumn, thinDraws } from '../estimate/draws';
 import { ENGINE_VERSION } from '../estimate/engine-version';
 import { type Fit, type FitFailure, runFit } from '../estimate/fit-run';
 import { INDEX } from '../estimate/parameters';
+import { USUAL_PRIORS } from '../estimate/priors';
 import type { DrawSet, FitInput, FitProgress } from '../estimate/types';
 import { readDrawTable } from './draw-table';
 import { computeHistory } from './history';
@@ -80,6 +81,7 @@ function buildReport(fit: Fit, { series, options }: FitInput): FitReport {
     errors,
     history: computeHistory(fit),
     structure: describeStructure(fit, series.firstMonth),
+    beliefs: { priors: options.priors ?? USUAL_PRIORS, addressable: options.addressable ?? null },
     outlook,
     cloud,
     unknowns: listUnknowns(fit, parameters, errors),

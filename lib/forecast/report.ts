@@ -3,6 +3,7 @@
  * Firm 1 is the focal firm, firm 2 the rival. Months are integers (year * 12 + month - 1); users are plain counts.
  */
 import { z } from 'zod';
+import { addressableSchema, priorSettingsSchema } from '../estimate/prior-schema';
 import { OUTCOMES } from './outcomes';
 
 const probability = z.number().min(0).max(1);
@@ -196,6 +197,8 @@ export const fitReportSchema = z.object({
   history: historySchema,
   /** Absent in results of engine versions before 0.3. */
   structure: structureSchema.optional(),
+  /** What was believed before the counts; absent: the usual settings of the time. */
+  beliefs: z.object({ priors: priorSettingsSchema, addressable: addressableSchema.nullable() }).optional(),
   outlook: outlookSchema,
   cloud: cloudSchema,
   unknowns: z.array(unknownSchema),

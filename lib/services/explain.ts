@@ -190,6 +190,11 @@ const STALE_REASONS: Record<StaleReason, (numbers: RevisionNumbers) => string> =
     `It was made from revision ${used} of the counts; revision ${newest} has come since.`,
   'measurement-changed': () =>
     'The measurement errors of the market were changed since this outlook was made.',
+  'events-changed': () =>
+    'Events from which the firms may behave otherwise were added, moved or removed since this outlook was made.',
+  'addressable-changed': () =>
+    'The estimate of the addressable market was changed since this outlook was made.',
+  'priors-changed': () => 'What is assumed before the counts was changed since this outlook was made.',
   'engine-changed': () => 'The method of calculation was improved since this outlook was made.',
 };
 

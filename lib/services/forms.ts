@@ -3,6 +3,7 @@
  * Free of server code, so that a page may import it.
  */
 import { z } from 'zod';
+import { priorSettingsSchema, RELATIVE_ERROR_RANGE } from '../estimate/prior-schema';
 import { pushesSchema } from '../scenario/push-schema';
 import { MAX_CANONICAL_LENGTH } from '../series/canonical-text';
 import { cleanName } from '../series/clean-name';
@@ -27,6 +28,8 @@ const MAX_READING_NOTES = 40;
 const MAX_READING_NOTE_LENGTH = 300;
 /** Measurement error of a firm's counts, sd of ln users: 1 is "anything from a third to three times". */
 const MAX_MEASUREMENT_ERROR = 1;
+/** More people than there are. */
+const MAX_ADDRESSABLE = 1e11;
 /** Ten years: a link that should outlive that has no expiry. */
 const MAX_LINK_DAYS = 3653;
 
@@ -40,6 +43,8 @@ const note = z
 const month = z.int().min(makeMonth(MIN_YEAR, 1)).max(makeMonth(MAX_YEAR, 12));
 const email = z.string().trim().toLowerCase().max(MAX_EMAIL_LENGTH).pipe(z.email());
 const measurementError = z.number().min(0).max(MAX_MEASUREMENT_ERROR);
+
+const addressable = z.number().positive().max(MAX_ADDRESSABLE).nullable();
 
 export const signInFormSchema = z.object({ email, password: z.string().min(1).max(MAX_PASSWORD_LENGTH) });
 export type SignInForm = z.infer<typeof signInFormSchema>;
@@ -102,6 +107,11 @@ const marketFields = z.object({
   rivalName: name,
   focalError: measurementError,
   rivalError: measurementError,
+  /** How many could use such a product at all, in users; null: not estimated. */
+  focalAddressable: addressable.optional(),
+  rivalAddressable: addressable.optional(),
+  /** One sd of both, as a share of them. */
+  addressableError: z.number().min(RELATIVE_ERROR_RANGE.min).max(RELATIVE_ERROR_RANGE.max).optional(),
 });
 
 export const marketFormSchema = marketFields.extend(contentFields.shape);
@@ -109,6 +119,12 @@ export type MarketForm = z.input<typeof marketFormSchema>;
 
 export const marketEditSchema = marketFields.partial();
 export type MarketEdit = z.input<typeof marketEditSchema>;
+
+export const priorFormSchema = z.object({
+  /** null: back to the usual ones. */
+  priors: priorSettingsSchema.nullable(),
+});
+export type PriorForm = z.infer<typeof priorFormSchema>;
 
 export const scenarioFormSchema = z.object({
   /** An existing scenario to change; absent: a new one. */

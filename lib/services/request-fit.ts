@@ -1,6 +1,6 @@
 /** Has the newest revision of a market fitted. Asking again while the same fit is on its way gives that fit. */
 import { enqueueFit } from '../jobs/enqueue-fit';
-import { createFit, latestFit } from '../store/fits';
+import { createFit, hasSameInput, latestFit, readFitOptions } from '../store/fits';
 import { readMarket } from '../store/markets';
 import { latestRevision } from '../store/revisions';
 import { newFit } from './new-fit';
@@ -21,12 +21,15 @@ export async function requestFit(
     latestFit(scope),
   ]);
   if (!market || !revision) return refuse('not-found');
-  if (running && isOnItsWay(running) && running.revisionId === revision.id)
-    return succeed({ fitId: running.id });
+  const fit = newFit(viewer, market);
+  if (running && isOnItsWay(running) && running.revisionId === revision.id) {
+    const options = await readFitOptions({ workspaceId, fitId: running.id });
+    if (options && hasSameInput(options, fit.options)) return succeed({ fitId: running.id });
+  }
   const stored = await createFit({
     ...scope,
     revisionId: revision.id,
-    fit: newFit(viewer, market),
+    fit,
     audit: { userId, action: 'request-fit' },
   });
   if (!stored) return refuse('not-found');

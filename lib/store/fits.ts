@@ -142,6 +142,16 @@ export function hasSameInput(a: FitOptions, b: FitOptions): boolean {
   return JSON.stringify(fitOptionsSchema.parse(a)) === JSON.stringify(fitOptionsSchema.parse(b));
 }
 
+/** @returns null when the workspace has no such fit */
+export async function readFitOptions(args: {
+  workspaceId: string;
+  fitId: string;
+}): Promise<FitOptions | null> {
+  const { workspaceId, fitId: id } = args;
+  const row = await getPrisma().fit.findFirst({ where: { id, workspaceId }, select: { options: true } });
+  return row && readJson(fitOptionsSchema, row.options, 'fit.options', id);
+}
+
 export async function readFit(args: { workspaceId: string; fitId: string }): Promise<FitView | null> {
   const row = await getPrisma().fit.findFirst({
     where: { id: args.fitId, workspaceId: args.workspaceId },

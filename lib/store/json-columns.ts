@@ -1,5 +1,6 @@
 /** JSON columns: what each holds, and reading one without trusting it. */
 import { z } from 'zod';
+import { addressableSchema, priorSettingsSchema } from '../estimate/prior-schema';
 import type { FitOptions, FitProgress } from '../estimate/types';
 import { StoreError } from './store-error';
 
@@ -8,6 +9,9 @@ export const fitOptionsSchema = z.object({
   horizonMonths: z.number().int().positive(),
   measurementFloor: z.object({ focal: z.number().nonnegative(), rival: z.number().nonnegative() }),
   errorModel: z.enum(['ar1', 'process-noise']),
+  changeMonths: z.array(z.number().int()).optional(),
+  addressable: addressableSchema.optional(),
+  priors: priorSettingsSchema.optional(),
 }) satisfies z.ZodType<FitOptions>;
 
 export const fitProgressSchema = z.object({

@@ -1,9 +1,13 @@
 /** Markets: one contest between two firms, with its newest revision and fit for the list. */
-import type { Prisma } from '../../prisma/generated/client';
+import { Prisma } from '../../prisma/generated/client';
+import { priorSettingsSchema } from '../estimate/prior-schema';
+import type { PriorSettings } from '../estimate/types';
+import type { Month } from '../series/types';
 import { type Deed, insertAuditEntry } from './audit';
 import { getPrisma } from './client';
 import { FIT_VIEW_COLUMNS, type FitView, insertFit, type NewFit, toView } from './fits';
 import { createId } from './ids';
+import { readJson } from './json-columns';
 import { insertRevision, type NewRevision } from './revisions';
 
 export interface Market {
@@ -15,6 +19,15 @@ export interface Market {
   /** Smallest measurement error, sd of ln users, per firm. */
   focalError: number;
   rivalError: number;
+  /** How many could use such a product at all, users; null: not estimated. */
+  focalAddressable: number | null;
+  rivalAddressable: number | null;
+  /** One sd of both estimates, as a share of them. */
+  addressableError: number;
+  /** null: the usual ones. */
+  priors: PriorSettings | null;
+  /** Months of the events from which parameters may differ, ascending. */
+  changeMonths: Month[];
   isDemo: boolean;
   archivedAt: Date | null;
   createdAt: Date;
@@ -28,6 +41,9 @@ export interface NewMarket {
   rivalName: string;
   focalError: number;
   rivalError: number;
+  focalAddressable?: number | null;
+  rivalAddressable?: number | null;
+  addressableError?: number;
   isDemo?: boolean;
 }
 
@@ -46,6 +62,11 @@ const MARKET = {
   rivalName: true,
   focalError: true,
   rivalError: true,
+  focalAddressable: true,
+  rivalAddressable: true,
+  addressableError: true,
+  priors: true,
+  events: { where: { changesParameters: true }, orderBy: { month: 'asc' }, select: { month: true } },
   isDemo: true,
   archivedAt: true,
   createdAt: true,
@@ -72,10 +93,19 @@ export async function createMarket(args: {
 }
 
 export async function readMarket(args: { workspaceId: string; marketId: string }): Promise<Market | null> {
-  return getPrisma().market.findFirst({
+  const row = await getPrisma().market.findFirst({
     where: { id: args.marketId, workspaceId: args.workspaceId },
     select: MARKET,
   });
+  return row && toMarket(row);
+}
+
+function toMarket({ priors, events, ...row }: Prisma.MarketGetPayload<{ select: typeof MARKET }>): Market {
+  return {
+    ...row,
+    priors: readJson(priorSettingsSchema.nullable(), priors, 'market.priors', row.id),
+    changeMonths: [...new Set(events.map(({ month }) => month))],
+  };
 }
 
 /** Markets that are not archived, own before demo, newest first. */
@@ -99,7 +129,7 @@ export async function listMarkets(args: { workspaceId: string }): Promise<Market
     },
   });
   return rows.map(({ revisions, fits, ...market }) => ({
-    ...market,
+    ...toMarket(market),
     revision: revisions[0] ? toNewestRevision(revisions[0]) : null,
     fit: fits[0] ? toView(fits[0]) : null,
   }));
@@ -109,10 +139,21 @@ export async function listMarkets(args: { workspaceId: string }): Promise<Market
 export async function editMarket(args: {
   workspaceId: string;
   marketId: string;
-  changes: Partial<Pick<Market, 'name' | 'unit' | 'focalName' | 'rivalName' | 'focalError' | 'rivalError'>>;
+  changes: Partial<Omit<NewMarket, 'id' | 'isDemo'>>;
   audit?: Deed;
 }): Promise<boolean> {
   return updateMarket(args, args.changes);
+}
+
+/** @param priors null: back to the usual ones @returns false when the workspace has no such market */
+export async function setPriors(args: {
+  workspaceId: string;
+  marketId: string;
+  priors: PriorSettings | null;
+  audit?: Deed;
+}): Promise<boolean> {
+  const priors = args.priors ? (args.priors as unknown as Prisma.InputJsonObject) : Prisma.DbNull;
+  return updateMarket(args, { priors });
 }
 
 /** Takes a market off the list; its issued forecasts stay. @returns false when there is no such market on the list */

@@ -47,18 +47,6 @@ const ROWS: [table: string, row: Record<string, unknown>][] = [
     },
   ],
   [
-    'analysis',
-    {
-      id: 'n',
-      workspaceId: 'w',
-      marketId: 'k',
-      revisionId: 'r',
-      fitId: 'f',
-      kind: 'backtest',
-      engineVersion: '1',
-    },
-  ],
-  [
     'scenario',
     { id: 'c', workspaceId: 'w', marketId: 'k', name: 'spring', pushes: '[]', updatedAt: '2026-01-01' },
   ],

@@ -46,7 +46,7 @@ describe('schema and migrations', () => {
   it('would be seen to differ: a changed delete rule and a new column are a difference', async () => {
     const [file] = readSchema().files;
     const changed = file!.content
-      .replace('isDemo      Boolean', 'extra Int?\n  isDemo      Boolean')
+      .replace('  isDemo ', '  extra Int?\n  isDemo ')
       .replace('onDelete: NoAction', 'onDelete: Restrict');
     const difference = await findSchemaDifference(readMigrations(), {
       files: [{ ...file!, content: changed }],

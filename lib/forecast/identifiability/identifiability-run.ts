@@ -50,7 +50,7 @@ function* runIdentifiability(
     2 + PROFILED.length,
     computeSignPatternInSteps({
       observations,
-      priors: buildPriors(observations),
+      priors: buildPriors(observations, options),
       floors: floorsOf(input),
       point: pointOf(input),
       seed: options.seed,

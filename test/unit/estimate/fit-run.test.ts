@@ -5,7 +5,14 @@ import { createFitRun, type Fit } from '@/lib/estimate/fit-run';
 import type { FitInput, FitProgress } from '@/lib/estimate/types';
 import { quantiles } from '@/lib/numeric/quantile';
 import type { MonthlySeries } from '@/lib/series/types';
-import { COEXISTING, RIVAL_LOSES, simulateSeries, simulateWandering, type Truth } from './simulated-market';
+import {
+  COEXISTING,
+  FIRST_MONTH,
+  RIVAL_LOSES,
+  simulateSeries,
+  simulateWandering,
+  type Truth,
+} from './simulated-market';
 
 function runToEnd(series: MonthlySeries, options: Partial<FitInput['options']> = {}) {
   const run = createFitRun({ series, options: { ...DEFAULT_FIT_OPTIONS, ...options } });
@@ -90,22 +97,21 @@ describe('what a series may hold besides', () => {
     expect(fitOf(base).choice.harmonics).toBe(0);
   });
 
-  it('one break is found in its month; none in a series without', () => {
-    const before = simulateSeries(COEXISTING, 30, 0.02, 5);
-    const changed: Truth = {
-      ...COEXISTING,
-      k1: 4e5,
-      alpha: 1.3,
-      n1: before.focal[29]!,
-      n2: before.rival[29]!,
-    };
-    const after = simulateSeries(changed, 25, 0.02, 6);
+  const before = simulateSeries(COEXISTING, 30, 0.02, 5);
+  const broken = (after: MonthlySeries): MonthlySeries => {
     const join = (a: (number | null)[], b: (number | null)[]) => [...a, ...b.slice(1)];
-    const fit = fitOf({
-      ...before,
-      focal: join(before.focal, after.focal),
-      rival: join(before.rival, after.rival),
-    });
+    return { ...before, focal: join(before.focal, after.focal), rival: join(before.rival, after.rival) };
+  };
+  const changed: Truth = {
+    ...COEXISTING,
+    k1: 4e5,
+    alpha: 1.3,
+    n1: before.focal[29]!,
+    n2: before.rival[29]!,
+  };
+
+  it('one break is found in its month; none in a series without', () => {
+    const fit = fitOf(broken(simulateSeries(changed, 25, 0.02, 6)));
     expect(fit.choice.breakChance).toBeGreaterThan(0.9);
     const [month] = quantiles(readColumn(fit.draws, 'breakMonth'), [0.5]);
     expect(Math.abs(month - 29)).toBeLessThanOrEqual(3);
@@ -131,6 +137,55 @@ describe('what a series may hold besides', () => {
     expect(fit.observations.firms[1].entry).toBe(9);
     expect(fit.draws.values.every(Number.isFinite)).toBe(true);
     expect(quantiles(readColumn(fit.draws, 'r2'), [0.5])[0]).toBeGreaterThan(0.05);
+  });
+});
+
+describe('a marked month', () => {
+  const FALLEN: Truth = { ...COEXISTING, k1: 2.5e5, alpha: 1.3 };
+  const MARK = 30;
+  const join = (a: (number | null)[], b: (number | null)[]) => [...a, ...b.slice(1)];
+  /** Other parameters from month MARK on, seen for `further` months. */
+  function changedAtMark(further: number): MonthlySeries {
+    const before = simulateSeries(COEXISTING, MARK, 0.02, 5);
+    const last = { n1: before.focal[MARK - 1]!, n2: before.rival[MARK - 1]! };
+    const after = simulateSeries({ ...FALLEN, ...last }, further + 1, 0.02, 6);
+    return { ...before, focal: join(before.focal, after.focal), rival: join(before.rival, after.rival) };
+  }
+  const markedAt = (month: number) => ({ changeMonths: [FIRST_MONTH + month] });
+
+  it('is where parameters changed, if they did: the month is known and the later ones are in force', () => {
+    const fit = fitOf(changedAtMark(24), markedAt(MARK - 1));
+    const [mark] = fit.choice.markedBreaks;
+    expect([fit.choice.markedBreaks.length, mark.month]).toEqual([1, MARK - 1]);
+    expect(mark.chance).toBeGreaterThan(0.66);
+    const months = readColumn(fit.draws, 'breakMonth');
+    expect(months.filter((month) => month === mark.month).length / months.length).toBeGreaterThan(0.6);
+    expect(Math.max(...missesOf(fit, FALLEN))).toBeLessThan(1.2);
+  });
+
+  it('is believed less where nothing changed, and costs little there', () => {
+    const series = simulateSeries(COEXISTING, 48, 0.02, 3);
+    const fit = fitOf(series, markedAt(24));
+    expect(fit.choice.markedBreaks[0].chance).toBeLessThan(0.4);
+    expect(Math.max(...missesOf(fit, COEXISTING))).toBeLessThan(1.2);
+  });
+
+  it('near the end, where an unmarked break could not be told, opens the outlook to both', () => {
+    const series = changedAtMark(3);
+    const [plain, marked] = [fitOf(series), fitOf(series, markedAt(MARK - 1))];
+    expect(plain.choice.markedBreaks).toEqual([]);
+    expect(marked.choice.markedBreaks[0].chance).toBeGreaterThan(0.25);
+    const widthOf = (fit: Fit) => {
+      const [low, high] = quantiles(readColumn(fit.draws, 'k1'), [0.05, 0.95]);
+      return Math.log(high / low);
+    };
+    expect(widthOf(marked)).toBeGreaterThan(widthOf(plain));
+  });
+
+  it('outside the series changes no number', () => {
+    const series = simulateSeries(RIVAL_LOSES, 24, 0.03, 4);
+    const outside = { changeMonths: [FIRST_MONTH, FIRST_MONTH - 5, FIRST_MONTH + 24] };
+    expect(fitOf(series, outside).draws.values).toEqual(fitOf(series).draws.values);
   });
 });
 

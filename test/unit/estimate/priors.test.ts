@@ -1,5 +1,11 @@
 import { describe, expect, it } from 'vitest';
-import { buildPriors, computePriorCells, createLogPrior, drawFromPrior } from '@/lib/estimate/priors';
+import {
+  buildPriors,
+  computePriorCells,
+  createLogPrior,
+  drawFromPrior,
+  USUAL_PRIORS,
+} from '@/lib/estimate/priors';
 import { createStream } from '@/lib/numeric/random';
 import { COEXISTING, observe, simulateSeries, toTheta } from './simulated-market';
 
@@ -56,5 +62,33 @@ describe('the prior', () => {
       if (theta[4] < Math.log(0.2) && theta[5] < Math.log(0.2)) low++;
     }
     expect(low / 10_000).toBeGreaterThan(0.1);
+  });
+
+  it('takes settings where somebody gives them, and the usual ones otherwise', () => {
+    const observations = observe(simulateSeries(COEXISTING, 36, 0.03, 1));
+    expect(buildPriors(observations, { priors: USUAL_PRIORS })).toEqual(priors);
+    const growth = { meanLog: Math.log(0.05), sdLog: 0.3 };
+    const set = buildPriors(observations, { priors: { ...USUAL_PRIORS, growth, noCompetition: 0.6 } });
+    expect([set.parameters.r1, set.parameters.r2]).toEqual([growth, growth]);
+    // the more of the prior lies near no competition, the likelier both coefficients are below 1
+    expect(computePriorCells(set).bothBelow).toBeGreaterThan(computePriorCells(priors).bothBelow + 0.2);
+  });
+
+  it('puts an estimate of the addressable market in the place of the saturation level, firm by firm', () => {
+    const observations = observe(simulateSeries(COEXISTING, 36, 0.03, 1));
+    const addressable = { focal: 2e6, rival: null, relativeError: 0.5 };
+    const { parameters } = buildPriors(observations, { addressable });
+    expect(parameters.k1).toEqual({ meanLog: Math.log(2e6), sdLog: Math.log(1.5) });
+    expect(parameters.k2).toEqual(priors.parameters.k2);
+  });
+
+  it('stays a density without any weight near no competition', () => {
+    const observations = observe(simulateSeries(COEXISTING, 36, 0.03, 1));
+    const logPrior = createLogPrior(
+      buildPriors(observations, { priors: { ...USUAL_PRIORS, noCompetition: 0 } }),
+    );
+    const gradient = new Float64Array(8);
+    expect(logPrior(toTheta(COEXISTING), gradient)).toBeGreaterThan(-1e3);
+    expect(gradient.every(Number.isFinite)).toBe(true);
   });
 });

@@ -90,6 +90,9 @@ export default async function DataPage({ params }: { params: Promise<{ id: strin
               rivalName: market.rivalName,
               focalError: market.focalError,
               rivalError: market.rivalError,
+              focalAddressable: market.focalAddressable,
+              rivalAddressable: market.rivalAddressable,
+              addressableError: market.addressableError,
             }}
           />
         </Question>
