@@ -6,8 +6,9 @@ import { axisAroundZero, monthTicks } from './axis-ticks';
 import type { BriefFacts } from './facts';
 import { spellOdds } from './odds-strip';
 import { labelOutcome, toneOfOutcome } from './outcomes';
+import { writeEffect } from './push-effect';
 import { alignOdds } from './push-odds';
-import { namePushes, writeEffect } from './push-words';
+import { namePushes } from './push-words';
 import { plainText, possessive, sentence } from './text';
 import type {
   DifferenceRow,

@@ -95,7 +95,7 @@ function explain(words: Words, comparison: ScenarioComparison, grammar: Grammar)
     case 'temporary-crosses':
       return `${decides}, and in ${countCrossed(words, comparison)} ${grammar.carries} the market across the tipping line; elsewhere ${fading(words, comparison, grammar)}`;
     case 'lasting-crosses':
-      return explainLastingMove(words, comparison, grammar);
+      return explainLastingMove(comparison, grammar);
     case 'lasting-same-outcome':
       return explainLastingStay(words, comparison, grammar);
   }
@@ -121,26 +121,12 @@ function fading(words: Words, { effect }: ScenarioComparison, { wins }: Grammar)
   return `${wins} fades with a half-life of ${numbers.number(halfLife.q50, halfLife)} months (${numbers.numberInterval(halfLife)})`;
 }
 
-function explainLastingMove(words: Words, comparison: ScenarioComparison, grammar: Grammar): string {
-  const isRecruitsOnly = comparison.pushes.filter(isActive).every(({ kind }) => kind === 'recruits');
+function explainLastingMove({ pushes }: ScenarioComparison, grammar: Grammar): string {
+  const isRecruitsOnly = pushes.filter(isActive).every(({ kind }) => kind === 'recruits');
   const how = isRecruitsOnly
     ? `${grammar.recruits} the market across the tipping line`
     : `${grammar.changes} how much room the firms take from each other, which decides who is left`;
-  return `${grammar.lasts}, ${how}; ${nameGain(words, comparison.destinations)}`;
-}
-
-/** The end that gains most, by whichever outcome it comes about. */
-function nameGain(words: Words, { before, after }: ScenarioComparison['destinations']): string {
-  const names = {
-    shared: 'both firms stay',
-    focalAlone: `${words.focal} is alone in the end, by exclusion or by head start,`,
-    rivalAlone: `${words.rival} is alone in the end, by exclusion or by head start,`,
-  };
-  const keys = ['shared', 'focalAlone', 'rivalAlone'] as const;
-  const key = keys.reduce((best, one) =>
-    after[one] - before[one] > after[best] - before[best] ? one : best,
-  );
-  return `the chance that ${names[key]} goes from ${words.numbers.chance(before[key])} to ${words.numbers.chance(after[key])}`;
+  return `${grammar.lasts}, ${how}`;
 }
 
 function explainLastingStay(words: Words, comparison: ScenarioComparison, { lasts }: Grammar): string {

@@ -470,7 +470,7 @@ export interface Caution {
 
 /** What one scenario does, ready to draw: made from a ScenarioComparison by `buildPushBrief`. */
 export interface PushBrief {
-  /** "It moves the path, not the destination. ..." */
+  /** The verdict on destination or path with its probability and why, how far on the way, and who gains in the end. */
   sentences: Sentence[];
   plain: string;
   odds: PushOddsRow[];

@@ -3,8 +3,7 @@ import { writeBreakEven, writeLastUsefulMonth, writeSmallestPush } from '../brie
 import type { BriefFacts } from '../brief/facts';
 import { writeMoney } from '../brief/money-words';
 import { buildPushBrief } from '../brief/push-brief';
-import { writeDestinationOrPath } from '../brief/push-verdict';
-import { describePush, writePath } from '../brief/push-words';
+import { describePush } from '../brief/push-words';
 import { buildSideBySide } from '../brief/side-by-side';
 import { plainText } from '../brief/text';
 import type { FigureTable, Sentence } from '../brief/types';
@@ -27,8 +26,7 @@ function renderScenario(words: Words, { name, comparison, answers }: ComparedSce
   const currency = money?.assumed.currency;
   return [
     [name, ...pushes.map((push) => wrapText(`- ${describePush(words, push)}`, 2))].join('\n'),
-    wrapText(plainText(writeDestinationOrPath(words, comparison))),
-    wrapText(plainText(writePath(words, comparison))),
+    renderSentences(brief.sentences),
     section(
       'Odds before and after',
       renderTable(brief.odds.map(({ label, before, after }) => [label, before, after])),

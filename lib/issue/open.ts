@@ -3,7 +3,6 @@ import { type BriefOptions, buildBrief } from '../brief/build-brief';
 import type { BriefFacts } from '../brief/facts';
 import { writeMoney } from '../brief/money-words';
 import { buildPushBrief } from '../brief/push-brief';
-import { writeDestinationOrPath } from '../brief/push-verdict';
 import { describePush } from '../brief/push-words';
 import { buildSideBySide, type SideBySide } from '../brief/side-by-side';
 import type { Brief, PushBrief, Sentence } from '../brief/types';
@@ -16,8 +15,6 @@ export interface OpenedScenario {
   name: string;
   /** Each push in words. */
   pushes: string[];
-  /** Destination or path. */
-  verdict: Sentence;
   push: PushBrief;
   /** Empty where no money was counted. */
   money: Sentence[];
@@ -84,7 +81,6 @@ function openScenario(words: Words, { name, pushes, comparison, answers }: Issue
   return {
     name,
     pushes: pushes.map((push) => describePush(words, push)),
-    verdict: writeDestinationOrPath(words, comparison),
     push: buildPushBrief(comparison, words.facts, words.locale),
     money: comparison.money ? writeMoney(words, comparison.money) : [],
     answers: openAnswers(words, answers ?? {}, currency),

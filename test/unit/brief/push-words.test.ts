@@ -62,7 +62,7 @@ function say(effect: Partial<ScenarioEffect>, change: Partial<ScenarioComparison
   );
 }
 
-describe('destination or path', () => {
+describe('what a scenario does in sentences', () => {
   const worst = { monthsAhead: 10, q05: -0.06, q50: -0.04, q95: -0.02 };
   const temporary = {
     destination: 'stays',
@@ -74,11 +74,11 @@ describe('destination or path', () => {
     returnHalfLifeMonths: { q05: 8, q50: 11, q95: 16 },
   } as const;
 
-  it('a temporary push that fades', () => {
+  it('a temporary push that fades: the verdict with its reason, then how far', () => {
     expect(say(temporary)).toBe(
-      'It moves the path, not the destination. ' +
-        'Quillfern’s share is 4 points lower at its worst (October 2026; 90 % interval \u22126 to \u22122 points) and back within half a point by June 2029. ' +
-        'The push ends, and what it wins fades: near the destination half of a gain is gone after 11 months (8 to 16).',
+      'It is virtually certain (>99 % of the draws) to move the path, not the destination: where no head start decides, ' +
+        'a push that ends cannot change who is left, and what it wins fades with a half-life of 11 months (8 to 16). ' +
+        'Quillfern’s share is 4 points lower at its worst (October 2026; 90 % interval \u22126 to \u22122 points) and back within half a point by June 2029.',
     );
   });
 
@@ -96,6 +96,7 @@ describe('destination or path', () => {
   it('a trifle', () => {
     const trifle = { monthsAhead: 10, q05: -0.006, q50: -0.004, q95: -0.002 };
     const text = say({ ...temporary, worstShareDifference: trifle });
+    expect(text).toContain('to leave path and destination about as they are');
     expect(text).toContain('Quillfern’s share hardly moves: by less than half a point');
     expect(text).not.toContain('at its worst');
   });
@@ -106,10 +107,10 @@ describe('destination or path', () => {
       { ...temporary, reason: 'temporary-same-side' },
       { odds: { before: odds, after: odds } },
     );
-    expect(text).toContain('It moves the path, not the destination.');
     expect(text).toContain(
-      'The head start decides in 30 % of the draws, but this push carries the market across the tipping line in none of the draws.',
+      'to move the path, not the destination: the head start decides in 30 % of the draws',
     );
+    expect(text).toContain('yet it carries the market across the tipping line in none of them');
   });
 
   it.each([
@@ -117,7 +118,7 @@ describe('destination or path', () => {
     [0.4, 'It is about as likely as not (40 % of the draws) to move the destination'],
     [0.8, 'It is likely (80 % of the draws) to move the destination'],
     [1, 'It is virtually certain (>99 % of the draws) to move the destination'],
-  ])('a crossing in %d of the draws', (probabilityMoves, start) => {
+  ])('a crossing in %d of the draws: who gains in the end comes last', (probabilityMoves, start) => {
     const destination = probabilityMoves > 0.66 ? 'moves' : 'may-move';
     const destinations = {
       before: { shared: 0, focalAlone: 0.95, rivalAlone: 0.05 },
@@ -127,13 +128,30 @@ describe('destination or path', () => {
       { ...temporary, destination, probabilityMoves, reason: 'temporary-crosses' },
       { destinations },
     );
-    expect(
-      text.startsWith(
-        `${start}, by carrying the market across the tipping line: Marrowby alone goes from 5 % to 10 %.`,
-      ),
-    ).toBe(true);
+    expect(text.startsWith(`${start}: the head start decides in `)).toBe(true);
+    expect(text).toMatch(
+      /The chance that Marrowby is alone in the end, by exclusion or by head start, goes from 5 % to 10 %\.$/,
+    );
     expect(text).not.toContain('not the destination');
     expect(text).not.toContain('back within');
+  });
+
+  it('names the end that gains, whichever it is', () => {
+    const moves = {
+      ...temporary,
+      destination: 'moves',
+      probabilityMoves: 0.9,
+      reason: 'lasting-crosses',
+    } as const;
+    const before = { shared: 0.2, focalAlone: 0.4, rivalAlone: 0.4 };
+    const gains = {
+      'both firms stay goes': { shared: 0.8, focalAlone: 0.1, rivalAlone: 0.1 },
+      'Quillfern is alone in the end': { shared: 0.1, focalAlone: 0.8, rivalAlone: 0.1 },
+      'Marrowby is alone in the end': { shared: 0.1, focalAlone: 0.1, rivalAlone: 0.8 },
+    };
+    for (const [part, after] of Object.entries(gains)) {
+      expect(say(moves, { destinations: { before, after } })).toContain(`The chance that ${part}`);
+    }
   });
 
   it('a lasting push that moves where they settle', () => {
@@ -145,7 +163,7 @@ describe('destination or path', () => {
       settledShareDifference: settled,
     });
     expect(text).toContain(
-      'It moves where they settle, not who stays: as long as it lasts, Quillfern’s share settles 6 points lower (90 % interval \u22129 to \u22123 points).',
+      'to move where they settle, not who is left: as long as it lasts, Quillfern’s share settles 6 points lower (90 % interval \u22129 to \u22123 points).',
     );
     expect(text).toContain('In December 2027 Quillfern’s share is');
     expect(text).not.toContain('fades');

@@ -61,12 +61,12 @@ describe('a forecast issued with several scenarios', () => {
     expect(issued.scenarios!.map(({ name }) => name)).toEqual(['They push', 'We answer']);
   });
 
-  it('opens with every scenario, its verdict, money and answers, and side by side', () => {
+  it('opens with every scenario, its effect, money and answers, and side by side', () => {
     const { scenarios, scenario, sideBySide, brief } = openIssued(reread(issued));
     expect(scenario).toEqual(scenarios[0]);
     expect(sideBySide!.series).toEqual(['No push', 'They push', 'We answer']);
     const [they, we] = scenarios;
-    expect(plainText(they!.verdict)).toContain('path, not the destination');
+    expect(plainText(they!.push.sentences[0]!)).toContain('path, not the destination');
     expect(they!.answers).toEqual({ smallestPush: [], lastUsefulMonth: [], breakEven: [], chanceMap: null });
     expect(we!.pushes).toHaveLength(2);
     expect(we!.money.map(plainText).join(' ')).toContain('EUR');
