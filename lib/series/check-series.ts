@@ -62,8 +62,9 @@ function findFutureMonths(
   thisMonth?: Month,
 ): SeriesProblem[] {
   const last = firstMonth + focal.length - 1;
-  if (thisMonth === undefined || last <= thisMonth) return [];
+  if (thisMonth === undefined || last < thisMonth) return [];
   const detail = { row: source.rowOf(last), column: source.month, value: formatMonth(last) };
+  if (last === thisMonth) return [makeWarning('month-unfinished', detail)];
   return [makeWarning('month-in-future', { ...detail, other: { row: null, value: formatMonth(thisMonth) } })];
 }
 

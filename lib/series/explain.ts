@@ -42,6 +42,36 @@ const EXPLANATIONS: Record<SeriesProblemCode, (problem: SeriesProblem) => Explan
     why: 'Counts are read from CSV, TSV or semicolon text; a workbook or a PDF is something else, whatever its name ends with.',
     tryThis: 'In the spreadsheet, save the sheet as “CSV UTF-8”, or copy its cells and paste them.',
   }),
+  'workbook-locked': () => ({
+    what: 'This workbook is locked with a password, or is of the old kind before .xlsx.',
+    why: 'Its sheets cannot be read without the spreadsheet program.',
+    tryThis: 'Open it there and save it as .xlsx without a password, or copy its cells and paste them.',
+  }),
+  'workbook-empty': ({ value }) => ({
+    what: `This is a ${value}, not a workbook of sheets.`,
+    why: 'It is packed like a workbook, but holds no sheets that can be read.',
+    tryThis: 'Save the table as .xlsx or as CSV, or copy its cells and paste them.',
+  }),
+  'workbook-macros': () => ({
+    what: 'This workbook carries macros.',
+    why: 'Files with programs in them are not opened here.',
+    tryThis: 'Save it as .xlsx, which leaves the macros out.',
+  }),
+  'workbook-swollen': ({ value, other }) => ({
+    what: `Unpacked, this workbook would hold ${value}.`,
+    why: `At most ${other?.value} are unpacked.`,
+    tryThis: 'Keep the sheet with the counts only, or save that sheet as CSV.',
+  }),
+  'workbook-broken': () => ({
+    what: 'This workbook could not be read.',
+    why: 'It is damaged, or something else with the ending of a workbook.',
+    tryThis: 'Open it in the spreadsheet program and save it anew, or copy its cells and paste them.',
+  }),
+  'firm-not-found': ({ value, readings }) => ({
+    what: `No row names the firm ${quote(value)}.`,
+    why: 'It was chosen as one of the two firms.',
+    tryThis: `Choose one of ${listNames(readings ?? [])}.`,
+  }),
   'no-header': ({ row, value }) => ({
     what: `Row ${row} already holds data: ${quote(value)}.`,
     why: 'Without a header the columns have no names, so they are called by their letters.',
@@ -89,7 +119,7 @@ const EXPLANATIONS: Record<SeriesProblemCode, (problem: SeriesProblem) => Explan
   'month-duplicate': (problem) => ({
     what: `${describePlace(problem)}: ${quote(problem.value)} is the month of row ${problem.other?.row} again.`,
     why: `A month has one count per firm: row ${problem.other?.row} is used, row ${problem.row} is not.`,
-    tryThis: 'Delete the row that is wrong. Daily or weekly rows must be brought to one row a month first.',
+    tryThis: 'Use this row instead, or leave it out.',
   }),
   'month-missing': ({ row, value, other }) => ({
     what: other ? `The months ${value} to ${other.value} have no row.` : `The month ${value} has no row.`,
@@ -100,6 +130,16 @@ const EXPLANATIONS: Record<SeriesProblemCode, (problem: SeriesProblem) => Explan
     what: `${describePlace(problem)}: ${problem.value} lies after the current month, ${problem.other?.value}.`,
     why: 'A planned or forecast figure would be taken for an observed one.',
     tryThis: 'Keep observed months only.',
+  }),
+  'month-partial': ({ row, value }) => ({
+    what: `The rows do not fill ${value} (last row ${row}).`,
+    why: 'A month at the beginning or the end of which days are missing would count too little or too early. It is left out.',
+    tryThis: 'Use it as it stands if its rows are complete for what you count.',
+  }),
+  'month-unfinished': (problem) => ({
+    what: `${describePlace(problem)}: ${problem.value} is the current month.`,
+    why: 'A month that has not ended often counts too few users. It is used as it stands.',
+    tryThis: 'Leave the row out unless the count is final.',
   }),
   'count-unreadable': (problem) => ({
     what: `${describePlace(problem)}: ${quote(problem.value)} is not a count.`,
@@ -168,9 +208,6 @@ const EXPLANATIONS: Record<SeriesProblemCode, (problem: SeriesProblem) => Explan
 };
 
 function adviseMonth(value: string): string {
-  if (/\bq[1-4]\b|quarter/i.test(value))
-    return 'Quarters are too coarse: give one row a month, as in 2024-03.';
-  if (/^\d{4}-?w\d{1,2}|\bweek\b/i.test(value)) return 'Bring weeks to one row a month, as in 2024-03.';
   if (/^\d{5}$/.test(value))
     return 'This looks like a spreadsheet’s day number: format the column as a date before saving.';
   if (/^(sum|total|average|mean)/i.test(value)) return 'Nothing needs doing when the row is a sum or a note.';

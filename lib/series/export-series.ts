@@ -36,7 +36,11 @@ export function toCsv({ series, focalName, rivalName, exclusions = [] }: NamedSe
 
 /** Shortest form that reads back to the same double; 12.345 gets a zero more, for it could also be twelve thousand. */
 function writeCount(count: number | null): string {
-  if (count === null) return '';
+  return count === null ? '' : spellCount(count);
+}
+
+/** A number that reads back as itself: 12.345 gets a zero more. */
+export function spellCount(count: number): string {
   return readCountText(String(count)).kind === 'ambiguous' ? `${count}0` : String(count);
 }
 

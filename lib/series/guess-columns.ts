@@ -2,6 +2,7 @@
  * Which column is the month, and which two are the firms' counts. A guess for the preview and the command line; people can choose
  * others. The first column of counts is taken for the focal firm.
  */
+import { guessLong } from './long-layout';
 import { readMonthColumn } from './month-column';
 import { readCountText } from './number';
 import type { ColumnGuess, TableRow } from './types';
@@ -25,7 +26,10 @@ export function guessColumns(header: readonly string[], rows: readonly TableRow[
   const counts = columns.filter((column) => column !== month && shareOfCounts(column.cells) >= MIN_SHARE);
   const firms = counts.filter(({ name, cells }) => !SUPPORT_HEADER.test(name) && !isRunningNumber(cells));
   const [focal, rival] = firms.length >= 2 ? firms : counts;
-  return { month: month?.name ?? null, focal: focal?.name ?? null, rival: rival?.name ?? null };
+  const others = columns.filter((column) => column !== month && !counts.includes(column));
+  const long = guessLong(month, others, firms.length > 0 ? firms : counts);
+  if (long) return { month: month!.name, ...long };
+  return { month: month?.name ?? null, focal: focal?.name ?? null, rival: rival?.name ?? null, long: null };
 }
 
 interface Column {
@@ -44,7 +48,7 @@ function guessMonth(columns: Column[]): Column | undefined {
 
 /** Open cells with one reading, such as 03/24, are months only in a column that says so. */
 function shareOfMonths(cells: string[], isNamed: boolean): number {
-  return shareOf(readMonthColumn(cells), (reading) => {
+  return shareOf(readMonthColumn(cells, undefined, isNamed), (reading) => {
     return (
       reading.kind === 'month' || (reading.kind === 'ambiguous' && (isNamed || reading.months.length > 1))
     );

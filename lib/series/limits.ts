@@ -10,6 +10,10 @@ export const MAX_TEXT_LENGTH = 20_000_000;
 export const MAX_ROWS = 200_000;
 export const MAX_COLUMNS = 500;
 
+/** A workbook: sheets offered at most, and bytes of its parts once unpacked. */
+export const MAX_SHEETS = 50;
+export const MAX_UNPACKED_BYTES = 150_000_000;
+
 /** Longest span from the first to the last month: fifty years. Beyond it a mistyped year is the likely cause. */
 export const MAX_SERIES_MONTHS = 600;
 

@@ -3,14 +3,17 @@
  *   - a part above 12 anywhere rules out a layout for all cells written in the same shape;
  *   - of the layouts left, only one may give one row a month. To prove the day order this takes 13 rows: a run of 12 days
  *     ("01/01/2024" to "01/12/2024") and 12 months look alike, a longer run of days would show a day above 12;
- *   - years of two digits could be days of a year not given, so they too must give one row a month.
+ *   - years of two digits could be days of a year not given, so they too must give one row a month;
+ *   - numbers of five digits are a spreadsheet's day numbers only where the whole column is made of them.
  * What stays open is reported with its readings, never guessed.
  */
-import { type MonthLayout, type MonthShape, type MonthText, readMonthText, yearOf } from './month';
-import type { DateOrder, Month } from './types';
+import { type MonthShape, type MonthText, readMonthText, yearOf } from './month';
+import type { MonthLayout } from './period';
+import type { DateOrder, Grain, Month } from './types';
 
 export type MonthReading =
-  | { kind: 'month'; month: Month }
+  /** `day`: days since 1970-01-01 where the text names a day or a week. */
+  | { kind: 'month'; month: Month; period: Grain; day: number | null }
   | { kind: 'ambiguous'; months: Month[] }
   | { kind: 'empty' }
   | { kind: 'unreadable' };
@@ -24,16 +27,29 @@ const ROWS_TO_SEE_PATTERN = 3;
 /** Largest span of months per row that still counts as one row a month: a third of the months may be missing. */
 const MAX_SPAN_PER_ROW = 1.5;
 
-/** One reading per text, in the same order. `dateOrder` is the answer of a person and settles the order of day and month. */
-export function readMonthColumn(texts: readonly string[], dateOrder?: DateOrder): MonthReading[] {
+/**
+ * One reading per text, in the same order. `dateOrder` is the answer of a person and settles the order of day and month.
+ * `mayBeSerials`: false where counts could be taken for day numbers.
+ */
+export function readMonthColumn(
+  texts: readonly string[],
+  dateOrder?: DateOrder,
+  mayBeSerials = true,
+): MonthReading[] {
   const cells = texts.map(readMonthText);
+  const areSerials =
+    mayBeSerials && cells.every(({ shape }, index) => shape === 'serial' || texts[index].trim() === '');
   const layouts = new Map<MonthShape, MonthLayout | null>();
   for (const shape of new Set(cells.map((cell) => cell.shape))) {
     const group = cells.filter((cell) => cell.shape === shape && cell.candidates.length > 0);
-    layouts.set(shape, shape === 'certain' ? null : settleLayout(shape, group, dateOrder));
+    layouts.set(
+      shape,
+      shape === 'certain' || shape === 'serial' ? null : settleLayout(shape, group, dateOrder),
+    );
   }
   return cells.map((cell, index) => {
     if (texts[index].trim() === '') return { kind: 'empty' };
+    if (cell.shape === 'serial' && !areSerials) return { kind: 'unreadable' };
     return settleCell(cell, layouts.get(cell.shape) ?? null);
   });
 }
@@ -41,11 +57,15 @@ export function readMonthColumn(texts: readonly string[], dateOrder?: DateOrder)
 function settleCell({ shape, candidates }: MonthText, layout: MonthLayout | null): MonthReading {
   if (candidates.length === 0) return { kind: 'unreadable' };
   const chosen = candidates.find((one) => one.layout === layout);
-  if (chosen) return { kind: 'month', month: chosen.month };
+  if (chosen) return asMonth(chosen);
   const months = [...new Set(candidates.map(({ month }) => month))];
-  const needsLayout = shape !== 'certain' && shape !== 'full-year-last';
-  if (months.length === 1 && !needsLayout) return { kind: 'month', month: months[0] };
+  const needsLayout = shape.startsWith('short-year');
+  if (months.length === 1 && !needsLayout) return asMonth(candidates[0]);
   return { kind: 'ambiguous', months };
+}
+
+function asMonth({ month, period, day }: MonthText['candidates'][number]): MonthReading {
+  return { kind: 'month', month, period, day };
 }
 
 /** The one layout that the column proves, or null. */

@@ -2,27 +2,16 @@
  * Calendar months as integers: month = year * 12 + (month of the year - 1). Differences are months; no clock, no time zone.
  * A text is read into every month that it could name; `month-column.ts` settles the open ones with the rest of the column.
  */
-import { MAX_YEAR, MIN_YEAR } from './limits';
+import { dayNumber, readYear } from './calendar';
 import { monthOfYearFromName } from './month-names';
+import { type MonthLayout, type PeriodText, readQuarter, readSerial, readWeek } from './period';
 import type { Month } from './types';
 
 const MONTHS_PER_YEAR = 12;
 const LAST_DAY = 31;
 
-/** Two-digit years below this are 20xx, from it on 19xx (common practice, POSIX strptime). */
-const SHORT_YEAR_PIVOT = 69;
-
 /** A number such as 31.5, which is no month of a two-digit year. */
 const DECIMAL = /^\d{1,2}\.\d{1,2}$/;
-
-/** In which order the parts of a text are taken. */
-export type MonthLayout =
-  | 'year-month'
-  | 'month-year'
-  | 'year-month-day'
-  | 'day-month-year'
-  | 'month-day-year'
-  | 'name';
 
 /** How a text is written; texts of one shape in one column share one layout. */
 export type MonthShape =
@@ -30,12 +19,13 @@ export type MonthShape =
   | 'full-year-last'
   | 'short-year'
   | 'short-year-with-day'
-  | 'short-year-name';
+  | 'short-year-name'
+  | 'serial';
 
 export interface MonthText {
   shape: MonthShape;
   /** Every month the text could name, by layout. Empty: no month at all. */
-  candidates: { layout: MonthLayout; month: Month }[];
+  candidates: PeriodText[];
 }
 
 /** `monthOfYear` 1 to 12. Throws when it is not: the caller has checked it. */
@@ -69,7 +59,7 @@ export function formatMonth(month: Month): string {
 /** The month that a single text names beyond doubt ("2024-03", "31 Mar 2024", "03/2024", "25/03/2024"), else null. */
 export function parseMonth(text: string): Month | null {
   const { shape, candidates } = readMonthText(text);
-  if (candidates.length === 0 || shape.startsWith('short-year')) return null;
+  if (candidates.length === 0 || shape === 'serial' || shape.startsWith('short-year')) return null;
   return candidates.every(({ month }) => month === candidates[0].month) ? candidates[0].month : null;
 }
 
@@ -85,7 +75,10 @@ export function readMonthText(text: string): MonthText {
   if (/^\d{8}$/.test(plain)) return readNumbers([plain.slice(0, 4), plain.slice(4, 6), plain.slice(6)]);
   if (DECIMAL.test(plain)) return nothing;
   if (/^\d{1,4}([-/. ])\d{1,4}(\1\d{1,4})?$/.test(plain)) return readNumbers(plain.split(/[-/. ]/));
-  return readNamed(plain);
+  const period = readQuarter(plain) ?? readWeek(plain);
+  if (period) return asText('certain', period);
+  const serial = readSerial(plain);
+  return serial ? asText('serial', serial) : readNamed(plain);
 }
 
 const nothing: MonthText = { shape: 'certain', candidates: [] };
@@ -128,9 +121,7 @@ function readNamed(plain: string): MonthText {
   return asText(shape, candidate('name', year, String(monthNumber), days[0]));
 }
 
-type Candidate = MonthText['candidates'][number];
-
-function asText(shape: MonthShape, ...candidates: (Candidate | null)[]): MonthText {
+function asText(shape: MonthShape, ...candidates: (PeriodText | null)[]): MonthText {
   return { shape, candidates: candidates.filter((one) => one !== null) };
 }
 
@@ -139,18 +130,14 @@ function candidate(
   layout: MonthLayout,
   yearText: string,
   monthText: string,
-  dayText = '1',
-): Candidate | null {
+  dayText?: string,
+): PeriodText | null {
   const year = readYear(yearText);
   const monthNumber = Number(monthText);
-  const day = Number(dayText);
-  if (year === null || monthText.length > 2 || dayText.length > 2) return null;
+  const day = Number(dayText ?? '1');
+  if (year === null || monthText.length > 2 || (dayText?.length ?? 0) > 2) return null;
   if (!(monthNumber >= 1 && monthNumber <= MONTHS_PER_YEAR && day >= 1 && day <= LAST_DAY)) return null;
-  return { layout, month: makeMonth(year, monthNumber) };
-}
-
-function readYear(text: string): number | null {
-  const number = Number(text);
-  if (text.length === 2) return number < SHORT_YEAR_PIVOT ? 2000 + number : 1900 + number;
-  return text.length === 4 && number >= MIN_YEAR && number <= MAX_YEAR ? number : null;
+  const month = makeMonth(year, monthNumber);
+  if (dayText === undefined) return { layout, month, period: 'month', day: null };
+  return { layout, month, period: 'day', day: dayNumber(year, monthNumber, day) };
 }

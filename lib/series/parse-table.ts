@@ -42,13 +42,20 @@ export function readTable(text: string): TableReading {
 
   const { delimiter, lines, problems } = splitCells(body);
   if (lines.length > MAX_ROWS) {
-    return unusable(
-      makeError('too-large', {
-        value: `more than ${MAX_ROWS} rows`,
-        other: { row: null, value: `${MAX_ROWS} rows` },
-      }),
-    );
+    return unusable(tooManyRows());
   }
+  return shapeLines(delimiter, lines, problems);
+}
+
+/** A sheet of a workbook, its cells as texts. */
+export function readGrid(rows: readonly string[][]): TableReading {
+  if (rows.length > MAX_ROWS) return unusable(tooManyRows());
+  const lines = rows.map((cells, index) => ({ row: index + 1, cells: cells.map((cell) => cell.trim()) }));
+  return shapeLines('', lines, []);
+}
+
+/** Titles above the header off, then header and rows. */
+function shapeLines(delimiter: string, lines: TableRow[], problems: SeriesProblem[]): TableReading {
   const filled = lines.filter(({ cells }) => cells.some((cell) => cell !== ''));
   if (filled.length === 0) return unusable(makeError('empty-file'));
   const headerIndex = Math.max(
@@ -101,9 +108,14 @@ function unusable(problem: SeriesProblem): TableReading {
     delimiter: ',',
     header: [],
     rows: [],
-    guess: { month: null, focal: null, rival: null },
+    guess: { month: null, focal: null, rival: null, long: null },
     problems: [problem],
   };
+}
+
+function tooManyRows(): SeriesProblem {
+  const other = { row: null, value: `${MAX_ROWS} rows` };
+  return makeError('too-large', { value: `more than ${MAX_ROWS} rows`, other });
 }
 
 function isText(body: string): boolean {

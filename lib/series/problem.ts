@@ -2,6 +2,7 @@
  * Making and listing problems.
  */
 import { cutText } from './clean-name';
+import { fixesOf } from './fixes';
 import { MAX_QUOTED_LENGTH, MAX_ROW_PROBLEMS } from './limits';
 import type { SeriesProblem, SeriesProblemCode } from './types';
 
@@ -21,7 +22,8 @@ function makeProblem(
   detail: ProblemDetail,
 ): SeriesProblem {
   const value = detail.value == null ? null : cutText(detail.value, MAX_QUOTED_LENGTH);
-  return { code, severity, row: null, column: null, ...detail, value };
+  const fixes = fixesOf(code);
+  return { code, severity, row: null, column: null, ...detail, value, ...(fixes && { fixes }) };
 }
 
 /** True when the problem stops the file from being fitted, however good its other rows are. */

@@ -3,29 +3,35 @@
  *   - months without a row between the first and the last one are gaps;
  *   - a zero before the first count means not launched; a later zero becomes a gap, for the method works on logarithms;
  *   - of two rows for one month the first stands;
+ *   - daily and weekly rows are brought to months, a quarter stands in its last month;
  *   - months at either end in which neither firm is known are cut off.
+ * Choices among the fixes of problems are applied in a second reading, so that what was chosen about can be listed and changed.
  * Today's month, needed to notice future ones, is an argument: nothing here reads a clock.
  */
+import { assembleSeries } from './assemble-series';
 import { checkSeries } from './check-series';
 import { cleanName } from './clean-name';
-import { MAX_SERIES_MONTHS } from './limits';
-import { formatMonth } from './month';
+import { type ColumnIndexes, findColumns } from './find-columns';
+import { type Corrections, NO_CORRECTIONS, problemKey, readCorrections } from './fixes';
+import { detectGrain } from './grain';
+import { toWide } from './long-layout';
 import { readMonthColumn } from './month-column';
-import { type CountReading, readCountColumn } from './number';
+import { wordNotes } from './notes';
 import { readTable } from './parse-table';
-import { isBlocking, listProblems, makeError, makeWarning } from './problem';
+import { isBlocking, listProblems } from './problem';
+import { type RowsToRead, readFineRows, readMonthRows } from './read-rows';
 import type {
+  Grain,
   Month,
   MonthlySeries,
   SeriesMapping,
   SeriesProblem,
   SeriesReading,
   TableReading,
-  TableRow,
 } from './types';
 
 export interface ReadingOptions {
-  /** The current month of the reader; without it no month counts as future. */
+  /** The current month of the reader; without it no month counts as future or unfinished. */
   thisMonth?: Month;
 }
 
@@ -47,23 +53,22 @@ export function readSeriesFromTable(
   const focalName = cleanName(mapping.focal);
   const rivalName = cleanName(mapping.rival);
   const { columns, problems } = findColumns(table, mapping);
-  if (columns === null)
-    return { series: null, focalName, rivalName, problems: listProblems([...table.problems, ...problems]) };
-
-  const { month, focal, rival } = columns;
-  const names = { month: table.header[month], focal: table.header[focal], rival: table.header[rival] };
-  const dated = dateRows(table.rows, month, names.month, mapping, problems);
-  const counts = {
-    focal: readCounts(dated, focal, names.focal, mapping, problems),
-    rival: readCounts(dated, rival, names.rival, mapping, problems),
-  };
-  const { series, rowOf } = assemble(dated, counts, names, problems);
-  if (series !== null) problems.push(...checkSeries(series, { ...names, rowOf }, options.thisMonth));
+  if (columns === null) {
+    const found = listProblems([...table.problems, ...problems]);
+    return { series: null, focalName, rivalName, grain: 'month', notes: [], problems: found };
+  }
+  const plain = readOnce(table, mapping, columns, options, NO_CORRECTIONS);
+  const corrections = readCorrections(plain.problems, mapping.fixes);
+  const isCorrected = Object.values(mapping.fixes ?? {}).length > 0;
+  const reading = isCorrected ? readOnce(table, mapping, columns, options, corrections) : plain;
+  const { series, grain, names } = reading;
   return {
     series,
     focalName: names.focal,
     rivalName: names.rival,
-    problems: listProblems([...table.problems, ...problems]),
+    grain,
+    notes: wordNotes({ grain, mapping, names, isSerial: reading.isSerial, thousands: corrections.thousands }),
+    problems: listProblems([...table.problems, ...mergeProblems(plain.problems, reading.problems)]),
   };
 }
 
@@ -72,182 +77,66 @@ export function canFit(reading: SeriesReading): boolean {
   return reading.series !== null && !reading.problems.some(isBlocking);
 }
 
-interface Names {
-  month: string;
-  focal: string;
-  rival: string;
+interface OneReading {
+  series: MonthlySeries | null;
+  grain: Grain;
+  /** The months were a spreadsheet's day numbers. */
+  isSerial: boolean;
+  names: RowsToRead['names'];
+  problems: SeriesProblem[];
 }
 
-interface ColumnIndexes {
-  month: number;
-  focal: number;
-  rival: number;
-}
-
-/** A row whose month is known and not taken by an earlier row. */
-interface DatedRow extends TableRow {
-  month: Month;
-}
-
-function findColumns(
+function readOnce(
   table: TableReading,
   mapping: SeriesMapping,
-): { columns: ColumnIndexes | null; problems: SeriesProblem[] } {
-  if (table.header.length === 0) return { columns: null, problems: [] };
-  const columns = {
-    month: findColumn(table.header, mapping.month),
-    focal: findColumn(table.header, mapping.focal),
-    rival: findColumn(table.header, mapping.rival),
-  };
-  const problems = (['month', 'focal', 'rival'] as const)
-    .filter((role) => columns[role] < 0)
-    .map((role) => makeError('column-not-found', { value: mapping[role], readings: table.header.slice() }));
-  const isDistinct = new Set(Object.values(columns)).size === 3;
-  if (problems.length === 0 && !isDistinct) {
-    const twice = columns.focal === columns.rival ? mapping.focal : mapping.month;
-    problems.push(makeError('same-column-twice', { column: cleanName(twice) }));
-  }
-  return { columns: problems.length === 0 ? columns : null, problems };
-}
-
-/** The exact header, else the only one that differs in capitals alone; -1 when there is none. */
-function findColumn(header: readonly string[], name: string): number {
-  const wanted = cleanName(name);
-  const exact = header.indexOf(wanted);
-  if (exact >= 0) return exact;
-  const alike = header.flatMap((column, index) =>
-    column.toLowerCase() === wanted.toLowerCase() ? [index] : [],
-  );
-  return alike.length === 1 ? alike[0] : -1;
-}
-
-function dateRows(
-  rows: readonly TableRow[],
-  column: number,
-  name: string,
-  mapping: SeriesMapping,
-  problems: SeriesProblem[],
-): DatedRow[] {
+  columns: ColumnIndexes,
+  { thisMonth }: ReadingOptions,
+  corrections: Corrections,
+): OneReading {
+  const kept = table.rows.filter(({ row }) => !corrections.skippedRows.has(row));
+  const long =
+    columns.long && toWide({ ...table, rows: kept }, mapping, { month: columns.month, ...columns.long });
+  const { month, focal, rival } = long ? { month: 0, focal: 1, rival: 2 } : columns;
+  const { header, rows } = long ? long.table : { header: table.header, rows: kept };
+  const problems = long ? [...long.problems] : [];
   const readings = readMonthColumn(
-    rows.map(({ cells }) => cells[column]),
+    rows.map(({ cells }) => cells[month]),
     mapping.dateOrder,
   );
-  const firstRows = new Map<Month, number>();
-  const dated: DatedRow[] = [];
-  for (const [index, reading] of readings.entries()) {
-    const { row, cells } = rows[index];
-    const place = { row, column: name, value: cells[column] };
-    if (reading.kind === 'ambiguous') {
-      problems.push(makeError('month-ambiguous', { ...place, readings: reading.months.map(formatMonth) }));
-    } else if (reading.kind !== 'month') {
-      problems.push(makeError('month-unreadable', place));
-    } else if (firstRows.has(reading.month)) {
-      const other = { row: firstRows.get(reading.month)!, value: formatMonth(reading.month) };
-      problems.push(makeError('month-duplicate', { ...place, other }));
-    } else {
-      firstRows.set(reading.month, row);
-      dated.push({ ...rows[index], month: reading.month });
-    }
-  }
-  return dated;
-}
-
-/** Users per dated row; null where there is no usable count. */
-function readCounts(
-  dated: readonly DatedRow[],
-  column: number,
-  name: string,
-  mapping: SeriesMapping,
-  problems: SeriesProblem[],
-): (number | null)[] {
-  const readings = readCountColumn(
-    dated.map(({ cells }) => cells[column]),
-    mapping.decimalMark,
+  const grain = detectGrain(readings);
+  const names = { month: header[month], focal: header[focal], rival: header[rival] };
+  const toRead: RowsToRead = {
+    rows,
+    readings,
+    columns: { month, focal, rival },
+    names,
+    rowOfCell: long?.rowOfCell ?? ((row) => row),
+    mapping,
+    corrections,
+  };
+  const monthRows =
+    grain === 'day' || grain === 'week'
+      ? readFineRows(toRead, grain, problems)
+      : readMonthRows(toRead, problems);
+  const inTime = monthRows.filter(
+    (row) => !(corrections.skipsFuture && thisMonth !== undefined && row.month > thisMonth),
   );
-  problems.push(...findMissing(dated, readings, column, name));
-  return readings.map((reading, index) => {
-    const place = { row: dated[index].row, column: name, value: dated[index].cells[column] };
-    if (reading.kind === 'unreadable') problems.push(makeError('count-unreadable', place));
-    if (reading.kind === 'ambiguous') {
-      problems.push(
-        makeError('count-ambiguous', { ...place, readings: [String(reading.point), String(reading.comma)] }),
-      );
-    }
-    if (reading.kind !== 'count') return null;
-    if (reading.value < 0) problems.push(makeError('count-negative', place));
-    return reading.value < 0 ? null : reading.value;
-  });
+  const { series, rowOf } = assembleSeries(inTime, names, problems);
+  if (series !== null) {
+    const found = checkSeries(series, { ...names, rowOf }, thisMonth);
+    problems.push(...found.filter(({ code }) => !(grain === 'quarter' && code === 'month-missing')));
+  }
+  const isSerial = rows.length > 0 && /^\d{5}([.,]\d+)?$/.test(rows[0].cells[month]);
+  return { series, grain, isSerial, names, problems };
 }
 
-/** One problem for each run of rows without a count. */
-function findMissing(
-  dated: readonly DatedRow[],
-  readings: CountReading[],
-  column: number,
-  name: string,
+/** What there is to choose stays listed once chosen; the rest is as the corrected reading found it. */
+function mergeProblems(
+  plain: readonly SeriesProblem[],
+  corrected: readonly SeriesProblem[],
 ): SeriesProblem[] {
-  const problems: SeriesProblem[] = [];
-  for (let start = 0; start < readings.length; start++) {
-    if (readings[start].kind !== 'missing') continue;
-    let end = start;
-    while (readings[end + 1]?.kind === 'missing') end++;
-    const { row, cells } = dated[start];
-    const other = end > start ? { row: dated[end].row, value: formatMonth(dated[end].month) } : undefined;
-    problems.push(makeWarning('count-missing', { row, column: name, value: cells[column], other }));
-    start = end;
-  }
-  return problems;
-}
-
-interface Counts {
-  focal: (number | null)[];
-  rival: (number | null)[];
-}
-
-/** Rows in any order -> consecutive months. */
-function assemble(dated: DatedRow[], counts: Counts, names: Names, problems: SeriesProblem[]) {
-  const byMonth = new Map(dated.map((row, index) => [row.month, index]));
-  const rowOf = (month: Month) => (byMonth.has(month) ? dated[byMonth.get(month)!].row : null);
-  const known = dated.filter((_, index) => counts.focal[index] !== null || counts.rival[index] !== null);
-  if (known.length === 0) {
-    problems.push(makeError('too-short-to-fit', { value: '0' }));
-    return { series: null, rowOf };
-  }
-
-  const months = known.map(({ month }) => month);
-  const firstMonth = months.reduce((a, b) => Math.min(a, b));
-  const lastMonth = months.reduce((a, b) => Math.max(a, b));
-  const length = lastMonth - firstMonth + 1;
-  if (length > MAX_SERIES_MONTHS) {
-    const span = `${formatMonth(firstMonth)} to ${formatMonth(lastMonth)}`;
-    const other = { row: null, value: `${MAX_SERIES_MONTHS} months` };
-    problems.push(
-      makeError('too-large', { column: names.month, value: `${length} months (${span})`, other }),
-    );
-    return { series: null, rowOf };
-  }
-  const pick = (values: (number | null)[]) =>
-    Array.from({ length }, (_, index) => values[byMonth.get(firstMonth + index) ?? -1] ?? null);
-  const series: MonthlySeries = { firstMonth, focal: pick(counts.focal), rival: pick(counts.rival) };
-  problems.push(...clearInnerZeros(series.focal, firstMonth, names.focal, rowOf));
-  problems.push(...clearInnerZeros(series.rival, firstMonth, names.rival, rowOf));
-  return { series, rowOf };
-}
-
-/** Zeros after the first positive count become gaps, in place. */
-function clearInnerZeros(
-  counts: (number | null)[],
-  firstMonth: Month,
-  column: string,
-  rowOf: (month: Month) => number | null,
-): SeriesProblem[] {
-  const launch = counts.findIndex((count) => count !== null && count > 0);
-  const problems: SeriesProblem[] = [];
-  for (let index = launch < 0 ? counts.length : launch; index < counts.length; index++) {
-    if (counts[index] !== 0) continue;
-    counts[index] = null;
-    const month = firstMonth + index;
-    problems.push(makeWarning('zero-inside', { row: rowOf(month), column, value: formatMonth(month) }));
-  }
-  return problems;
+  if (plain === corrected) return [...plain];
+  const chosenAbout = plain.filter(({ fixes }) => fixes !== undefined);
+  const keys = new Set(chosenAbout.map(problemKey));
+  return [...chosenAbout, ...corrected.filter((problem) => !keys.has(problemKey(problem)))];
 }

@@ -30,12 +30,23 @@ export interface SeriesProblem {
   readings?: string[];
   /** The place this one clashes or compares with: the earlier duplicate, the count before a jump, the end of a gap. */
   other?: { row: number | null; value: string };
+  /** What can be done about it, what is done without a choice first; absent: nothing to choose. */
+  fixes?: ProblemFix[];
 }
+
+/** Use as it stands; keep the cell as a gap; leave the row out; take the firm's counts times a thousand. */
+export type ProblemFix = 'use' | 'gap' | 'skip-row' | 'times-thousand';
 
 export type SeriesProblemCode =
   | 'empty-file'
   | 'too-large'
   | 'not-text'
+  | 'workbook-locked'
+  | 'workbook-empty'
+  | 'workbook-macros'
+  | 'workbook-swollen'
+  | 'workbook-broken'
+  | 'firm-not-found'
   | 'no-header'
   | 'too-few-columns'
   | 'column-not-found'
@@ -47,6 +58,8 @@ export type SeriesProblemCode =
   | 'month-duplicate'
   | 'month-missing'
   | 'month-in-future'
+  | 'month-partial'
+  | 'month-unfinished'
   | 'count-unreadable'
   | 'count-ambiguous'
   | 'count-negative'
@@ -66,14 +79,27 @@ export type DecimalMark = 'point' | 'comma';
 /** Which number comes first in 03/04/2024. */
 export type DateOrder = 'day-first' | 'month-first';
 
-/** Which columns to read, by header; the last two settle a file that could be read two ways. */
+/** How rows finer than months are brought to months: their mean, or the last one of each month. */
+export type Aggregation = 'mean' | 'last';
+
+/** Which columns to read, by header, and how to read a file that could be read two ways. */
 export interface SeriesMapping {
   month: string;
+  /** Header of the firm's counts; in the long layout the firm's name as it stands in the column of firms. */
   focal: string;
   rival: string;
+  /** Long layout, one row per month and firm: headers of the column that names the firm and of the one that counts. */
+  long?: { firm: string; users: string };
   decimalMark?: DecimalMark;
   dateOrder?: DateOrder;
+  /** For daily and weekly rows; absent: the mean. */
+  aggregation?: Aggregation;
+  /** Choices among the fixes of problems, keyed by `problemKey`. */
+  fixes?: Record<string, ProblemFix>;
 }
+
+/** How often the rows come. */
+export type Grain = 'day' | 'week' | 'month' | 'quarter';
 
 /** A row of the file below the header; `cells` are trimmed and as many as the header has. */
 export interface TableRow {
@@ -85,13 +111,16 @@ export interface TableRow {
 /** Headers that look like the month and the two counts; null where none does. */
 export interface ColumnGuess {
   month: string | null;
+  /** In the long layout the two firms with the most rows. */
   focal: string | null;
   rival: string | null;
+  /** null: each firm has a column of its own. */
+  long: { firm: string; users: string } | null;
 }
 
 /** A file as a table, before anything is taken for a month or a count. Unusable files have no header and no rows. */
 export interface TableReading {
-  /** What separates the cells: comma, semicolon, tab or bar. */
+  /** What separates the cells: comma, semicolon, tab or bar; a sheet of a workbook has none. */
   delimiter: string;
   /** Column names: cleaned, never empty, no two alike. */
   header: string[];
@@ -105,5 +134,16 @@ export interface SeriesReading {
   series: MonthlySeries | null;
   focalName: string;
   rivalName: string;
+  grain: Grain;
+  /** How the file was read where it could be read otherwise, a sentence each. */
+  notes: string[];
   problems: SeriesProblem[];
 }
+
+/** A sheet of a workbook as texts, row by row. */
+export interface WorkbookSheet {
+  name: string;
+  rows: string[][];
+}
+
+export type WorkbookReading = { ok: true; sheets: WorkbookSheet[] } | { ok: false; problem: SeriesProblem };

@@ -46,7 +46,7 @@ export function understand(table: TableReading, choices: ReadingChoices, thisMon
     mapping,
     reading: mapping
       ? readSeriesFromTable(table, mapping, { thisMonth })
-      : { series: null, focalName: '', rivalName: '', problems: table.problems },
+      : { series: null, focalName: '', rivalName: '', grain: 'month', notes: [], problems: table.problems },
     notes: [],
   };
 }

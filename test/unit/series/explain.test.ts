@@ -14,8 +14,20 @@ function rows(count: number, write: (index: number) => string): string {
 
 const good = rows(14, (index) => `${20 + index},${30 - (index % 4)}`);
 
+/** Days from 2 January 2023 to 10 March 2024. */
+const daily = [
+  'Month,A,B',
+  ...Array.from({ length: 434 }, (_, day) => {
+    const date = new Date(Date.UTC(2023, 0, 2 + day)).toISOString().slice(0, 10);
+    return `${date},${200 + day},${300 - (day % 40)}`;
+  }),
+].join('\n');
+
+/** Codes of workbooks, which are no text: `read-workbook.test.ts` provokes them. */
+type WorkbookCode = Extract<SeriesProblemCode, `workbook-${string}`>;
+
 /** A file that shows each problem. The type demands one for every code. */
-const FILES: Record<SeriesProblemCode, string> = {
+const FILES: Record<Exclude<SeriesProblemCode, WorkbookCode>, string> = {
   'empty-file': ' ',
   'too-large': 'x'.repeat(MAX_TEXT_LENGTH + 1),
   'not-text': 'PK\u0003\u0004',
@@ -30,6 +42,9 @@ const FILES: Record<SeriesProblemCode, string> = {
   'month-duplicate': `${good}2023-01,5,6`,
   'month-missing': `${good}2024-06,30,30`,
   'month-in-future': good,
+  'month-unfinished': good.slice(0, good.lastIndexOf('2024-02')),
+  'month-partial': daily,
+  'firm-not-found': 'Month,Firm,Users\n2023-01,A,5\n2023-01,C,6',
   'count-unreadable': `${good}2024-03,many,30`,
   'count-ambiguous': `${good}2024-03,"1,234",30`,
   'count-negative': `${good}2024-03,-3,30`,
@@ -44,19 +59,22 @@ const FILES: Record<SeriesProblemCode, string> = {
   'more-problems': `${good}${'x,1,2\n'.repeat(MAX_ROW_PROBLEMS + 1)}`,
 };
 
-function findProblem(code: SeriesProblemCode): SeriesProblem | undefined {
+function findProblem(code: keyof typeof FILES): SeriesProblem | undefined {
   const rival = code === 'same-column-twice' ? 'A' : 'B';
+  const plain = { month: 'Month', focal: 'A', rival };
   const mapping =
     code === 'no-header'
       ? { month: 'Column A', focal: 'Column B', rival: 'Column C' }
-      : { month: 'Month', focal: 'A', rival };
+      : code === 'firm-not-found'
+        ? { ...plain, long: { firm: 'Firm', users: 'Users' } }
+        : plain;
   return readSeries(FILES[code], mapping, { thisMonth: makeMonth(2024, 1) }).problems.find(
     (problem) => problem.code === code,
   );
 }
 
 describe('every problem can happen and is explained in three parts', () => {
-  test.each(Object.keys(FILES) as SeriesProblemCode[])('%s', (code) => {
+  test.each(Object.keys(FILES) as (keyof typeof FILES)[])('%s', (code) => {
     const problem = findProblem(code);
     expect(problem).toBeDefined();
     const { what, why, tryThis } = explainProblem(problem!);
@@ -65,7 +83,10 @@ describe('every problem can happen and is explained in three parts', () => {
       expect(sentence).not.toMatch(/undefined|null|NaN|\[object/);
     }
     if (problem!.row !== null) expect(`${what} ${why}`.toLowerCase()).toContain(`row ${problem!.row}`);
-    if (problem!.column !== null && problem!.code !== 'month-missing' && problem!.code !== 'too-large') {
+    if (
+      problem!.column !== null &&
+      !['month-missing', 'month-partial', 'too-large'].includes(problem!.code)
+    ) {
       expect(what).toContain(`“${problem!.column}”`);
     }
   });
@@ -84,8 +105,6 @@ test('an ambiguous month shows both readings', () => {
 });
 
 test.each([
-  ['2024-Q1', 'Quarters'],
-  ['2024-W05', 'Bring weeks'],
   ['45352', 'day number'],
   ['Total', 'Nothing needs doing'],
   ['soon', 'Write months as'],

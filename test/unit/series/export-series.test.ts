@@ -72,6 +72,6 @@ test('months left out stand with their reasons in a fourth column, which is read
   const series = { firstMonth: makeMonth(2024, 1), focal: [1, 2], rival: [3, 4] };
   const exclusions = [{ month: makeMonth(2024, 2), reason: '=strike' }];
   const text = toCsv({ series, focalName: 'A', rivalName: 'B', exclusions });
-  expect(text).toBe("Month,A,B,Left out because\r\n2024-01,1,3,\r\n2024-02,2,4,'=strike\r\n");
+  expect(text).toBe('Month,A,B,Left out because\r\n2024-01,1,3,\r\n2024-02,2,4,"\'=strike"\r\n');
   expect(readSeries(text, { month: 'Month', focal: 'A', rival: 'B' }).series).toEqual(series);
 });

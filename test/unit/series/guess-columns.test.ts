@@ -39,16 +39,22 @@ test.each([
   ['no header', '2024-01,10,20\n2024-02,11,21', ['Column A', 'Column B', 'Column C']],
   ['two dates', 'Created,Month,A,B\n2025-01-05,2024-01,1,2\n2025-01-05,2024-02,3,4', ['Month', 'A', 'B']],
 ])('%s', (_, text, [month, focal, rival]) => {
-  expect(readTable(text).guess).toEqual({ month, focal, rival });
+  expect(readTable(text).guess).toEqual({ month, focal, rival, long: null });
 });
 
 test('what is not there is not guessed', () => {
-  expect(readTable('Name,A,B\nx,1,2\ny,3,4').guess).toEqual({ month: null, focal: 'A', rival: 'B' });
+  expect(readTable('Name,A,B\nx,1,2\ny,3,4').guess).toEqual({
+    month: null,
+    focal: 'A',
+    rival: 'B',
+    long: null,
+  });
   expect(readTable('Month,A,B\n2024-01,1,text\n2024-02,2,more').guess).toEqual({
     month: 'Month',
     focal: 'A',
     rival: null,
+    long: null,
   });
   expect(readTable('exp,hours,A\n1,6.5,3\n1,31.5,4\n2,12.5,4').guess.month).toBeNull();
-  expect(readTable('').guess).toEqual({ month: null, focal: null, rival: null });
+  expect(readTable('').guess).toEqual({ month: null, focal: null, rival: null, long: null });
 });

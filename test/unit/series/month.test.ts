@@ -91,10 +91,10 @@ test.each([
   ['31/13/2024'],
   ['1824-03'],
   ['2224-03'],
-  ['2024-Q1'],
-  ['Q1 2024'],
-  ['2024-W05'],
-  ['45352'],
+  ['2024-Q5'],
+  ['5Q24'],
+  ['2024-W54'],
+  ['1234'],
   ['Total'],
   ['March'],
   ['Mar Apr 2024'],
@@ -156,4 +156,25 @@ test('no text is too strange to read', () => {
       return month === null || Number.isInteger(month);
     }),
   );
+});
+
+test.each([
+  ['2024-Q1', 'quarter', '2024-03', null],
+  ['Q3 2024', 'quarter', '2024-09', null],
+  ['4Q24', 'quarter', '2024-12', null],
+  // ISO 8601: week 1 of 2025 begins on Monday, 30 December 2024, and its Thursday lies in January
+  ['2025-W01', 'week', '2025-01', Date.UTC(2024, 11, 30) / 86_400_000],
+  ['Week 5 2024', 'week', '2024-02', Date.UTC(2024, 0, 29) / 86_400_000],
+  ['2024-03-31', 'day', '2024-03', Date.UTC(2024, 2, 31) / 86_400_000],
+  ['Mar 2024', 'month', '2024-03', null],
+])('%j is a %s of %s', (text, period, month, day) => {
+  const [candidate] = readMonthText(text).candidates;
+  expect(candidate).toMatchObject({ period, day });
+  expect(formatMonth(candidate!.month)).toBe(month);
+});
+
+test('a number of five digits names a day of a spreadsheet, but no month by itself', () => {
+  // ECMA-376: 45352 is 1 March 2024 in the 1900 system
+  expect(readMonthText('45352').candidates).toMatchObject([{ day: Date.UTC(2024, 2, 1) / 86_400_000 }]);
+  expect(parseMonth('45352')).toBeNull();
 });

@@ -9,7 +9,7 @@ const table = readTable(readFileSync('test/browser/data/gause-paramecium.csv', '
 const source = readTable(readFileSync('test/reference/data/gause1934_app_t3_paramecium.csv', 'utf8'));
 
 test('the columns are guessed', () => {
-  expect(table.guess).toEqual({ month: 'Month', focal: 'P. aurelia', rival: 'P. caudatum' });
+  expect(table.guess).toEqual({ month: 'Month', focal: 'P. aurelia', rival: 'P. caudatum', long: null });
 });
 
 test('every counted day is a month, the day not counted is a gap, and nothing stops a fit', () => {

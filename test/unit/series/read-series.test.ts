@@ -201,7 +201,10 @@ test('a mistyped year is named instead of a series of a century', () => {
 test('what comes after the month of the reader is noticed, and only when that month is given', () => {
   const reading = readSeries(fileWith(), mapping, { thisMonth: makeMonth(2024, 10) });
   expect(listed(reading)).toEqual([['month-in-future', 'warning', 25, 'Month', '2024-12']]);
-  expect(readSeries(fileWith(), mapping, { thisMonth: makeMonth(2024, 12) }).problems).toEqual([]);
+  expect(readSeries(fileWith(), mapping, { thisMonth: makeMonth(2025, 1) }).problems).toEqual([]);
+  expect(listed(readSeries(fileWith(), mapping, { thisMonth: makeMonth(2024, 12) }))).toEqual([
+    ['month-unfinished', 'warning', 25, 'Month', '2024-12'],
+  ]);
 });
 
 test('a flood of bad rows is counted, not listed', () => {
