@@ -40,7 +40,7 @@ const MAY_IMPORT = {
   ],
 };
 const PURE = ['numeric', 'dynamics', 'series', 'estimate', 'forecast', 'scenario', 'brief', 'issue'];
-const LIBRARIES_OF_PURE_PARTS = ['pure-rand', 'ml-levenberg-marquardt', 'ml-matrix', 'zod', 'papaparse'];
+const LIBRARIES_OF_PURE_PARTS = ['pure-rand', 'ml-levenberg-marquardt', 'ml-matrix', 'zod', 'papaparse', 'read-excel-file', 'fflate'];
 
 const directions = Object.entries(MAY_IMPORT).map(([part, allowed]) => ({
   name: `direction-${part}`,
