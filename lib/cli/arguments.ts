@@ -27,6 +27,9 @@ export const MAX_SEED = 2 ** 32 - 1;
 
 const OPTIONS = {
   columns: { type: 'string' },
+  sheet: { type: 'string' },
+  firms: { type: 'string' },
+  aggregate: { type: 'string' },
   'decimal-mark': { type: 'string' },
   'date-order': { type: 'string' },
   months: { type: 'string' },
@@ -60,7 +63,16 @@ export function wantsJson(args: readonly string[]): boolean {
 }
 
 type Values = FitValues & ScenarioValues;
-type FitValues = Partial<Record<'columns' | 'decimal-mark' | 'date-order' | 'months' | 'seed', string>>;
+type FitOption =
+  | 'columns'
+  | 'sheet'
+  | 'firms'
+  | 'aggregate'
+  | 'decimal-mark'
+  | 'date-order'
+  | 'months'
+  | 'seed';
+type FitValues = Partial<Record<FitOption, string>>;
 
 const COMMANDS = ['forecast', 'scenario'];
 
@@ -88,6 +100,11 @@ function readFitRequest(values: FitValues, file: string): FitRequest | string {
   if (columns?.length !== 3 && columns !== null) {
     return '--columns takes three headers: month,focal,rival. Put one that holds a comma into double quotes.';
   }
+  const firms = values.firms === undefined ? null : splitColumns(values.firms);
+  if (firms?.length !== 2 && firms !== null)
+    return '--firms takes two names: focal,rival. Put one that holds a comma into double quotes.';
+  const aggregation = values.aggregate;
+  if (!isOneOf(aggregation, ['mean', 'last'])) return '--aggregate takes mean or last.';
   const horizonMonths = readInteger(values.months, DEFAULT_FIT_OPTIONS.horizonMonths, 1, MAX_HORIZON_MONTHS);
   if (horizonMonths === null) return `--months takes a whole number from 1 to ${MAX_HORIZON_MONTHS}.`;
   const seed = readInteger(values.seed, DEFAULT_FIT_OPTIONS.seed, 0, MAX_SEED);
@@ -98,7 +115,17 @@ function readFitRequest(values: FitValues, file: string): FitRequest | string {
   if (!isOneOf(dateOrder, ['day-first', 'month-first']))
     return '--date-order takes day-first or month-first.';
 
-  return { file, columns: columns as FitRequest['columns'], decimalMark, dateOrder, horizonMonths, seed };
+  return {
+    file,
+    columns: columns as FitRequest['columns'],
+    sheet: values.sheet ?? null,
+    firms: firms as FitRequest['firms'],
+    aggregation,
+    decimalMark,
+    dateOrder,
+    horizonMonths,
+    seed,
+  };
 }
 
 function notUnderstood(reason: string): Command {

@@ -4,10 +4,9 @@ import { DEFAULT_FIT_OPTIONS } from '../estimate/defaults';
 import type { DrawSet, FitStatus } from '../estimate/types';
 import type { FitReport } from '../forecast/report';
 import { makeMonth } from '../series/month';
-import { readTable } from '../series/parse-table';
 import { isBlocking } from '../series/problem';
 import { canFit, readSeriesFromTable } from '../series/read-series';
-import type { MonthlySeries, SeriesProblem, SeriesReading } from '../series/types';
+import type { MonthlySeries, SeriesProblem, SeriesReading, TableReading } from '../series/types';
 import { chooseColumns } from './choose-columns';
 import { type CommandFailure, fail, failWithProblems } from './command-end';
 import type { FitRequest } from './fit-request';
@@ -26,10 +25,10 @@ export interface FittedFile {
   draws: DrawSet;
 }
 
-export function fitFile(request: FitRequest, terminal: Terminal): FittedFile | CommandFailure {
-  const input = readInput(request.file);
-  if (!input.ok) return fail('file-unreadable', input.message);
-  const reading = readFile(input.text, request);
+export async function fitFile(request: FitRequest, terminal: Terminal): Promise<FittedFile | CommandFailure> {
+  const input = await readInput(request.file, request.sheet);
+  if (!input.ok) return fail(input.exit, input.message);
+  const reading = readCounts(input.table, request);
   if ('exit' in reading) return reading;
 
   const { seed, horizonMonths } = request;
@@ -58,8 +57,7 @@ export function toFacts({ reading, report }: Pick<FittedFile, 'reading' | 'repor
   };
 }
 
-function readFile(text: string, request: FitRequest): FittableReading | CommandFailure {
-  const table = readTable(text);
+function readCounts(table: TableReading, request: FitRequest): FittableReading | CommandFailure {
   if (table.header.length === 0) return failWithProblems('data-unusable', table.problems);
   const choice = chooseColumns(table, request);
   if (!choice.ok) return fail('data-unusable', choice.message, table.problems);

@@ -9,9 +9,13 @@ import { toForecastJson } from './forecast-json';
 import { renderOutlook } from './forecast-text';
 import type { Terminal } from './terminal';
 
-export function forecast(request: FitRequest, asJson: boolean, terminal: Terminal): CommandEnd {
+export async function forecast(
+  request: FitRequest,
+  asJson: boolean,
+  terminal: Terminal,
+): Promise<CommandEnd> {
   const startedAt = performance.now();
-  const fitted = fitFile(request, terminal);
+  const fitted = await fitFile(request, terminal);
   if ('exit' in fitted) return fitted;
   const { reading, report } = fitted;
   const milliseconds = performance.now() - startedAt;

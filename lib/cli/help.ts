@@ -19,12 +19,16 @@ forecast reads two firms' monthly user counts and prints where their market is h
 scenario says what pushes by either firm would change: destination or path, share and users at 6, 12 and 24 months
 against no push, odds before and after, what it is worth, and the smallest push that answers it.
 
-FILE is CSV, TSV or semicolon text with a header: a month column (2024-03, 03/2024, Mar 2024, 2024-03-31) and one
-column of users per firm. At least ${MIN_MONTHS_TO_FIT} months in which both are known are needed. "-" reads standard input.
+FILE is CSV, TSV or semicolon text or an .xlsx workbook with a header: a month column (2024-03, 03/2024, Mar 2024,
+2024-03-31) and one column of users per firm, or one row per month and firm. Days and weeks are brought to months. At least ${MIN_MONTHS_TO_FIT} months in which both are known are needed. "-" reads standard input.
 
 Options
   --columns M,F,R       headers of the month, the focal firm and the rival; without it the month column is found and
                         the first two columns of counts are taken, the first of them as the focal firm
+  --sheet NAME          sheet of a workbook; without it the first one with a table
+  --firms F,R           focal firm and rival by name, where each row is a month of one firm; --columns then names the
+                        month, the column of firms and the one that counts
+  --aggregate HOW       mean or last: how days or weeks become months (mean if not given)
   --months N            months to forecast, 1 to ${MAX_HORIZON_MONTHS} (${DEFAULT_FIT_OPTIONS.horizonMonths} if not given)
   --seed N              seed of the random draws; the same seed gives the same numbers (${DEFAULT_FIT_OPTIONS.seed} if not given)
   --decimal-mark MARK   point or comma, for counts such as 1,234 that could be read two ways

@@ -16,7 +16,7 @@ export async function main(args: readonly string[]): Promise<number> {
   const terminal = openTerminal(process.stderr);
   const asJson = wantsJson(args);
   try {
-    return await write(run(args, asJson, terminal), asJson, terminal);
+    return await write(await run(args, asJson, terminal), asJson, terminal);
   } catch (error) {
     terminal.clearProgress();
     const detail = error instanceof Error ? `${error.name}: ${error.message.split('\n')[0]}` : String(error);
@@ -25,7 +25,7 @@ export async function main(args: readonly string[]): Promise<number> {
   }
 }
 
-function run(args: readonly string[], asJson: boolean, terminal: Terminal): CommandEnd {
+async function run(args: readonly string[], asJson: boolean, terminal: Terminal): Promise<CommandEnd> {
   const command = readArguments(args);
   switch (command.kind) {
     case 'help':

@@ -7,11 +7,15 @@ import { toScenarioJson } from './scenario-output';
 import { renderScenarios } from './scenario-text';
 import type { Terminal } from './terminal';
 
-export function scenario(request: ScenarioRequest, asJson: boolean, terminal: Terminal): CommandEnd {
+export async function scenario(
+  request: ScenarioRequest,
+  asJson: boolean,
+  terminal: Terminal,
+): Promise<CommandEnd> {
   // a slip in a scenario is told before the fit, which takes a while
   const asked = listScenarios(request);
   if ('exit' in asked) return asked;
-  const fitted = fitFile(request, terminal);
+  const fitted = await fitFile(request, terminal);
   if ('exit' in fitted) return fitted;
   const scenarios = compareScenarios(fitted, asked, request);
   const facts = toFacts(fitted);

@@ -12,6 +12,9 @@ test('a file alone takes every default', () => {
   expect(understood(['forecast', 'a.csv'])).toEqual({
     file: 'a.csv',
     columns: null,
+    sheet: null,
+    firms: null,
+    aggregation: undefined,
     decimalMark: undefined,
     dateOrder: undefined,
     horizonMonths: DEFAULT_FIT_OPTIONS.horizonMonths,
@@ -44,6 +47,24 @@ test('every option is read, wherever it stands', () => {
       dateOrder: 'day-first',
     },
   );
+});
+
+test('a sheet, firms and the way to months are read', () => {
+  const line = [
+    'forecast',
+    'a.xlsx',
+    '--sheet',
+    'Users',
+    '--firms',
+    '"Tarn, Ltd",Ours',
+    '--aggregate',
+    'last',
+  ];
+  expect(understood(line)).toMatchObject({
+    sheet: 'Users',
+    firms: ['Tarn, Ltd', 'Ours'],
+    aggregation: 'last',
+  });
 });
 
 test.each([[['--help']], [['-h']], [['help']], [['forecast', '--help']]])('%j asks for help', (line) => {

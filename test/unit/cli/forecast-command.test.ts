@@ -2,6 +2,7 @@ import { mkdtempSync, rmSync, writeFileSync } from 'node:fs';
 import { tmpdir } from 'node:os';
 import { join } from 'node:path';
 import { afterAll, describe, expect, test } from 'vitest';
+import writeXlsxFile from 'write-excel-file/node';
 import type { CommandEnd } from '@/lib/cli/command-end';
 import type { FitRequest } from '@/lib/cli/fit-request';
 import { forecast } from '@/lib/cli/forecast-command';
@@ -23,11 +24,13 @@ function rows(count: number, write: (index: number) => string): string {
   ].join('\n');
 }
 
-function run(content: string | Uint8Array, change: Partial<FitRequest> = {}): CommandEnd {
+const { seed, horizonMonths } = DEFAULT_FIT_OPTIONS;
+const request = { columns: null, sheet: null, firms: null, seed, horizonMonths };
+
+function run(content: string | Uint8Array, change: Partial<FitRequest> = {}): Promise<CommandEnd> {
   const file = join(folder, 'counts.csv');
   writeFileSync(file, content);
-  const { seed, horizonMonths } = DEFAULT_FIT_OPTIONS;
-  return forecast({ file, columns: null, seed, horizonMonths, ...change }, false, silent);
+  return forecast({ ...request, file, ...change }, false, silent);
 }
 
 function failureOf(end: CommandEnd) {
@@ -40,7 +43,7 @@ const rising = rows(24, (i) => `${100 + 9 * i},${50 + 4 * i + (i % 3)}`);
 describe('what cannot be fitted ends with its own code and a sentence', () => {
   test.each([
     ['empty', '', 'data-unusable', 'empty'],
-    ['a workbook', Uint8Array.of(0x50, 0x4b, 3, 4, 20, 0, 6, 0), 'data-unusable', 'not a text file'],
+    ['a workbook', Uint8Array.of(0x50, 0x4b, 3, 4, 20, 0, 6, 0), 'data-unusable', 'could not be read'],
     ['no months', 'x,A,B\none,1,2\ntwo,3,4', 'data-unusable', 'no column of months'],
     [
       'one count column',
@@ -53,28 +56,28 @@ describe('what cannot be fitted ends with its own code and a sentence', () => {
     ['nothing ever changes', rows(20, () => '9,8'), 'data-unusable', 'ever changes'],
     ['eleven months', rows(11, (i) => `${9 + i},${20 - i}`), 'too-short', '11 months'],
     ['a header alone', 'Month,A,B', 'data-unusable', 'no column of months'],
-  ])('%s', (_, content, exit, part) => {
-    const end = failureOf(run(content));
+  ])('%s', async (_, content, exit, part) => {
+    const end = failureOf(await run(content));
     expect(end.exit).toBe(exit);
     expect(end.message).toContain(part);
     expect(end.message).not.toMatch(/undefined|null|\n|Error/);
     expect(toErrorJson(end.exit, end.message, end.problems).error.code).toBe(exit);
   });
 
-  test('a column that is not there', () => {
-    const end = failureOf(run(rising, { columns: ['Month', 'A', 'Holm'] }));
+  test('a column that is not there', async () => {
+    const end = failureOf(await run(rising, { columns: ['Month', 'A', 'Holm'] }));
     expect(end.exit).toBe('data-unusable');
     expect(end.message).toContain('“Holm”');
   });
 
-  test('a file that is not there, and a folder', () => {
+  test('a file that is not there, and a folder', async () => {
     for (const file of [join(folder, 'none.csv'), folder]) {
-      expect(failureOf(run(rising, { file })).exit).toBe('file-unreadable');
+      expect(failureOf(await run(rising, { file })).exit).toBe('file-unreadable');
     }
   });
 
-  test('months that are too few because cells are unreadable name those cells', () => {
-    const end = failureOf(run(rows(14, (i) => (i < 4 ? `about ${i},7` : `${9 + i},${20 - i}`))));
+  test('months that are too few because cells are unreadable name those cells', async () => {
+    const end = failureOf(await run(rows(14, (i) => (i < 4 ? `about ${i},7` : `${9 + i},${20 - i}`))));
     expect(end.exit).toBe('too-short');
     expect(end.problems.filter(({ code }) => code === 'count-unreadable').map(({ row }) => row)).toEqual([
       2, 3, 4, 5,
@@ -82,7 +85,7 @@ describe('what cannot be fitted ends with its own code and a sentence', () => {
   });
 });
 
-test('a fit reports true progress and warns of nothing when all is well', () => {
+test('a fit reports true progress and warns of nothing when all is well', async () => {
   const lines: string[] = [];
   const warnings: string[] = [];
   const file = 'seed/markets/night-buses.csv';
@@ -91,10 +94,41 @@ test('a fit reports true progress and warns of nothing when all is well', () => 
     clearProgress: () => {},
     warn: (line) => warnings.push(line),
   };
-  const { seed, horizonMonths } = DEFAULT_FIT_OPTIONS;
-  const end = forecast({ file, columns: null, seed, horizonMonths }, false, terminal);
+  const end = await forecast({ ...request, file }, false, terminal);
   expect(end.exit).toBe('ok');
   expect(warnings).toEqual([]);
   expect(lines[0]).toMatch(/^starts \d+ of \d+$/);
   expect(lines.some((line) => /draws [1-9]\d* of [1-9]\d*/.test(line))).toBe(true);
+});
+
+describe('files of other kinds are read', () => {
+  const counts = Array.from(
+    { length: 24 },
+    (_, i) => [formatMonth(first + i), 100 + 9 * i, 50 + 4 * i + (i % 3)] as const,
+  );
+
+  test('a sheet of a workbook, by its name or the first one with a table', async () => {
+    const sheets = [
+      { sheet: 'Notes', data: [[{ value: 'for the board' }]] },
+      {
+        sheet: 'Users',
+        data: [['Month', 'A', 'B'], ...counts].map((cells) => cells.map((value) => ({ value }))),
+      },
+    ];
+    const bytes = new Uint8Array(await writeXlsxFile(sheets as never).toBuffer());
+    const byName = await run(bytes, { sheet: 'Users', horizonMonths: 3 });
+    expect(byName.exit).toBe('ok');
+    expect(await run(bytes, { horizonMonths: 3 })).toEqual(byName);
+    expect(failureOf(await run(bytes, { sheet: 'Other' })).message).toContain('“Notes”, “Users”');
+  });
+
+  test('one row per month and firm, with the firms that are named', async () => {
+    const long = counts.flatMap(([month, a, b]) => [`${month},A,${a}`, `${month},B,${b}`]);
+    const text = ['Month,Firm,Users', ...long].join('\n');
+    const end = await run(text, { firms: ['B', 'A'], horizonMonths: 3 });
+    expect(end.exit).toBe('ok');
+    const wide = counts.map(([month, a, b]) => `${month},${b},${a}`);
+    expect(end).toEqual(await run(['Month,B,A', ...wide].join('\n'), { horizonMonths: 3 }));
+    expect(failureOf(await run(text, { firms: ['A', 'Nobody'] })).message).toContain('“Nobody”');
+  });
 });
