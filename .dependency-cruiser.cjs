@@ -40,7 +40,15 @@ const MAY_IMPORT = {
   ],
 };
 const PURE = ['numeric', 'dynamics', 'series', 'estimate', 'forecast', 'scenario', 'brief', 'issue'];
-const LIBRARIES_OF_PURE_PARTS = ['pure-rand', 'ml-levenberg-marquardt', 'ml-matrix', 'zod', 'papaparse', 'read-excel-file', 'fflate'];
+const LIBRARIES_OF_PURE_PARTS = [
+  'pure-rand',
+  'ml-levenberg-marquardt',
+  'ml-matrix',
+  'zod',
+  'papaparse',
+  'read-excel-file',
+  'fflate',
+];
 
 const directions = Object.entries(MAY_IMPORT).map(([part, allowed]) => ({
   name: `direction-${part}`,
