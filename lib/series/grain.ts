@@ -59,7 +59,11 @@ export function toMonths(
   aggregation: Aggregation,
 ): MonthRow[] {
   const byMonth = new Map<Month, FineRow[]>();
-  for (const row of rows) byMonth.set(row.month, [...(byMonth.get(row.month) ?? []), row]);
+  for (const row of rows) {
+    const own = byMonth.get(row.month);
+    if (own) own.push(row);
+    else byMonth.set(row.month, [row]);
+  }
   const months = [...byMonth.keys()].sort((a, b) => a - b);
   return months.map((month) => {
     const own = byMonth.get(month)!.sort((a, b) => a.day - b.day);

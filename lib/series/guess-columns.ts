@@ -10,6 +10,9 @@ import type { ColumnGuess, TableRow } from './types';
 /** Rows looked at. */
 const ROWS_TO_GUESS_FROM = 200;
 
+/** Rows looked at for firms, taken from all over the table: one firm may fill the first hundreds. */
+const ROWS_TO_FIND_FIRMS = 2000;
+
 /** Share of the filled cells that must be months, or counts. */
 const MIN_SHARE = 0.6;
 
@@ -21,20 +24,33 @@ const SUPPORT_HEADER =
 
 export function guessColumns(header: readonly string[], rows: readonly TableRow[]): ColumnGuess {
   const sample = rows.slice(0, ROWS_TO_GUESS_FROM);
-  const columns = header.map((name, index) => ({ name, cells: sample.map(({ cells }) => cells[index]) }));
+  const columns = header.map((name, index) => ({
+    name,
+    index,
+    cells: sample.map(({ cells }) => cells[index]),
+  }));
   const month = guessMonth(columns);
   const counts = columns.filter((column) => column !== month && shareOfCounts(column.cells) >= MIN_SHARE);
   const firms = counts.filter(({ name, cells }) => !SUPPORT_HEADER.test(name) && !isRunningNumber(cells));
   const [focal, rival] = firms.length >= 2 ? firms : counts;
   const others = columns.filter((column) => column !== month && !counts.includes(column));
-  const long = guessLong(month, others, firms.length > 0 ? firms : counts);
+  const spread = spreadOf(rows);
+  const widen = ({ name, index }: Column) => ({ name, cells: spread.map(({ cells }) => cells[index]) });
+  const users = firms.length > 0 ? firms : counts;
+  const long = guessLong(month && widen(month), others.map(widen), users);
   if (long) return { month: month!.name, ...long };
   return { month: month?.name ?? null, focal: focal?.name ?? null, rival: rival?.name ?? null, long: null };
 }
 
 interface Column {
   name: string;
+  index: number;
   cells: string[];
+}
+
+function spreadOf(rows: readonly TableRow[]): TableRow[] {
+  const every = Math.ceil(rows.length / ROWS_TO_FIND_FIRMS);
+  return rows.filter((_, index) => index % every === 0);
 }
 
 function guessMonth(columns: Column[]): Column | undefined {
