@@ -11,6 +11,7 @@ import { buildOddsStrip, spellOdds } from './odds-strip';
 import { labelOutcome } from './outcomes';
 import { buildParameterTable } from './parameters';
 import { buildPhaseMap } from './phase-map';
+import { buildPriorTable } from './prior-words';
 import { describeSampler } from './sampler-health';
 import { buildSensitivity } from './sensitivity-words';
 import { writeLeftOut } from './structure-words';
@@ -121,5 +122,6 @@ function buildTrust(words: Words): TrustSection {
     backtest: backtest ? describeBacktest(words, backtest) : null,
     identifiability: identifiability ? describeIdentifiability(words, identifiability) : null,
     leftOut: writeLeftOut(words),
+    priors: buildPriorTable(words),
   };
 }

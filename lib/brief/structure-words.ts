@@ -13,7 +13,12 @@ const LISTED_COUNTS = 4;
 export function writeLeftOut(words: Words): Sentence {
   const { structure } = words.facts.report;
   const found = structure
-    ? [tellSeason(structure), tellBreak(words, structure), tellFlagged(words, structure)].filter(Boolean)
+    ? [
+        tellSeason(structure),
+        tellMarked(words, structure),
+        tellBreak(words, structure),
+        tellFlagged(words, structure),
+      ].filter(Boolean)
     : [];
   const last = words.months.long(words.lastMonth);
   const seasons = structure && structure.seasonHarmonics > 0 ? '' : ', seasons';
@@ -35,6 +40,18 @@ function tellBreak(words: Words, { breakChance, breakMonth }: Structure): string
   );
   const when = early === late ? middle : `${middle} (${early} to ${late})`;
   return `Strengths may have changed once, around ${when}: ${words.numbers.chance(breakChance)}. The forecast goes on from the later ones where they did.`;
+}
+
+/** Months that somebody marked, with what the counts say about them. */
+function tellMarked(words: Words, { markedBreaks = [] }: Structure): string {
+  if (markedBreaks.length === 0) return '';
+  const told = markedBreaks.map(({ month, chance }) => {
+    const event = words.facts.events?.find((one) => one.month === month && one.changesParameters);
+    const what = event ? `${event.note} (${words.months.short(month)})` : words.months.short(month);
+    return `${what} ${words.numbers.chance(chance)}`;
+  });
+  const before = markedBreaks.length === 1 ? 'even odds' : 'even odds for one of them';
+  return `Chance that strengths changed with what was marked, ${before} before the counts: ${listWords(told)}. The forecast goes on from the later ones where they did.`;
 }
 
 function tellFlagged(words: Words, { flaggedCounts }: Structure): string {

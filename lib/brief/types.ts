@@ -4,6 +4,7 @@
  *
  * Numbers for drawing are plain numbers (users, months as year * 12 + month - 1, fractions of 1); strings are for reading.
  */
+import type { PriorSettings } from '../estimate/types';
 import type { Outcome } from '../forecast/outcomes';
 import type { EventMark } from './event-marks';
 
@@ -380,6 +381,26 @@ export interface TrustSection {
   backtest: BacktestPart | null;
   /** What more months and other values would tell; null: not analysed. */
   identifiability: IdentifiabilityPart | null;
+  /** What was assumed before the counts; null: not kept by the version that made the outlook. */
+  priors: PriorTable | null;
+}
+
+export interface PriorTable {
+  title: string;
+  caption: Sentence;
+  rows: PriorLine[];
+  /** As numbers, for the form that changes them. */
+  settings: PriorSettings;
+}
+
+export interface PriorLine {
+  id: 'growth' | 'k1' | 'k2' | 'alpha' | 'beta' | 'noCompetition';
+  label: string;
+  middle: string;
+  /** Nine in ten of it; empty where there is none. */
+  interval: string;
+  /** 'addressable': from a stated addressable market. */
+  mark: 'usual' | 'changed' | 'addressable';
 }
 
 export interface IdentifiabilityPart {

@@ -13,6 +13,7 @@ import { PageFrame } from '../frame/page-frame';
 import { IdentifiabilityStanding } from '../identifiability/identifiability-standing';
 import { IssueSection } from '../issue/issue-section';
 import { ArchivedNote } from '../markets/archived-note';
+import { PriorForm } from '../priors/prior-form';
 import { TrustSection } from './trust-section';
 import { WhereSection } from './where-section';
 import { WhySection } from './why-section';
@@ -50,6 +51,11 @@ export function MarketBrief({ viewer, page, facts }: MarketBriefProps) {
           trust={brief.trust}
           cautions={brief.cautions}
           decisionStanding={<IdentifiabilityStanding page={page} canWrite={canWrite} />}
+          priorForm={
+            canWrite ? (
+              <PriorForm marketId={page.market.id} stored={page.market.priors} names={facts.market} />
+            ) : null
+          }
         >
           <BacktestStanding page={page} canWrite={canWrite} />
         </TrustSection>

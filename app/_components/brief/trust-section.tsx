@@ -6,6 +6,7 @@ import type { Caution, TrustSection as TrustSectionData } from '@/lib/brief/type
 import { BacktestResult } from '../backtest/backtest-result';
 import { Question } from '../frame/question';
 import { IdentifiabilityResult } from '../identifiability/identifiability-result';
+import { PriorTable } from '../priors/prior-table';
 import { SentenceText } from '../text/sentence-text';
 import styles from './sections.module.css';
 
@@ -14,11 +15,13 @@ interface TrustSectionProps {
   cautions: Caution[];
   /** Stands in the place of what more months would tell, while that is not known. */
   decisionStanding?: ReactNode;
+  /** Below the assumptions: the form that changes them, or nothing. */
+  priorForm?: ReactNode;
   /** Stands in the place of the backtest while there is none. */
   children?: ReactNode;
 }
 
-export function TrustSection({ trust, cautions, decisionStanding, children }: TrustSectionProps) {
+export function TrustSection({ trust, cautions, decisionStanding, priorForm, children }: TrustSectionProps) {
   return (
     <Question id="trust" question={trust.question} note={<SentenceText sentence={trust.note} />}>
       <ul className={styles.unknowns}>
@@ -32,6 +35,7 @@ export function TrustSection({ trust, cautions, decisionStanding, children }: Tr
       <p className={styles.leftOut}>
         <SentenceText sentence={trust.leftOut} />
       </p>
+      {trust.priors ? <PriorTable priors={trust.priors}>{priorForm}</PriorTable> : null}
       {trust.backtest ? <BacktestResult backtest={trust.backtest} /> : children}
       <div className={styles.sampler}>
         <p>

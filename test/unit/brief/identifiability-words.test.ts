@@ -134,7 +134,7 @@ describe('error scales', () => {
     const errorScales = { log: verdict('notIdentified'), raw: verdict('notIdentified'), disagree: false };
     const text = finding('error-scales', { errorScales });
     expect(text).toContain('do not settle any outcome');
-    expect(text).toContain(`the growth of ${focalName} does not bend`);
+    expect(text).toContain(`how far ${focalName} would get alone`);
     expect(text).not.toMatch(/staying|head start/);
   });
 

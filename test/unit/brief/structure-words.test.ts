@@ -32,6 +32,21 @@ describe('what the series holds besides growth and competition', () => {
     expect(text).toMatch(/changed once, around \w+ \d{4} \(\w+ \d{4} to \w+ \d{4}\): 62\s%/);
   });
 
+  it('tells of marked months by their notes, with the chance and what it was before', () => {
+    const markedBreaks = [{ month: first + 9, chance: 0.92 }];
+    const event = { month: first + 9, note: 'New prices', changesParameters: true };
+    const structure = { ...PLAIN, markedBreaks };
+    const report = { ...facts.report, structure };
+    const text = plainText(writeLeftOut(createWords({ ...facts, report, events: [event] })));
+    expect(text).toMatch(
+      /^Chance that strengths changed with what was marked, even odds before the counts: New prices \(\w+ \d{4}\) 92\s%\./,
+    );
+    // an outlook may outlive its event
+    expect(say(structure)).toMatch(/before the counts: \w+ \d{4} 92\s%\./);
+    const two = say({ ...PLAIN, markedBreaks: [...markedBreaks, { month: first + 20, chance: 0.03 }] });
+    expect(two).toContain('even odds for one of them before the counts');
+  });
+
   it('names the firm and month of a count that was nearly ignored', () => {
     const text = say({ ...PLAIN, flaggedCounts: [{ firm: 2, month: first }] });
     expect(text).toContain(
