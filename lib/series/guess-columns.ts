@@ -13,6 +13,8 @@ const ROWS_TO_GUESS_FROM = 200;
 /** Rows looked at for firms, taken from all over the table: one firm may fill the first hundreds. */
 const ROWS_TO_FIND_FIRMS = 2000;
 
+const GOLDEN_RATIO = (1 + Math.sqrt(5)) / 2;
+
 /** Share of the filled cells that must be months, or counts. */
 const MIN_SHARE = 0.6;
 
@@ -48,9 +50,10 @@ interface Column {
   cells: string[];
 }
 
+/** Steps of the golden ratio fall evenly and in no rhythm that the rows could have (Weyl). */
 function spreadOf(rows: readonly TableRow[]): TableRow[] {
-  const every = Math.ceil(rows.length / ROWS_TO_FIND_FIRMS);
-  return rows.filter((_, index) => index % every === 0);
+  const share = ROWS_TO_FIND_FIRMS / rows.length;
+  return share >= 1 ? [...rows] : rows.filter((_, index) => (index * GOLDEN_RATIO) % 1 < share);
 }
 
 function guessMonth(columns: Column[]): Column | undefined {

@@ -58,3 +58,15 @@ test('what is not there is not guessed', () => {
   expect(readTable('exp,hours,A\n1,6.5,3\n1,31.5,4\n2,12.5,4').guess.month).toBeNull();
   expect(readTable('').guess).toEqual({ month: null, focal: null, rival: null, long: null });
 });
+
+test.each([
+  ['one firm after the other', (index: number) => [Math.floor(index / 1500), index % 1500]],
+  ['two firms in turn', (index: number) => [index % 2, Math.floor(index / 2)]],
+] as const)('firms are found in a long table with %s', (_, place) => {
+  const rows = Array.from({ length: 6000 }, (_, index) => {
+    const [firm, month] = place(index) as [number, number];
+    return `${1900 + Math.floor(month / 12)}-${String((month % 12) + 1).padStart(2, '0')},Firm ${firm},${100 + index}`;
+  });
+  const { guess } = readTable(['Month,Firm,Users', ...rows].join('\n'));
+  expect(guess.long).toEqual({ firm: 'Firm', users: 'Users' });
+});
