@@ -15,7 +15,8 @@ import { thinTicks } from './forecast-layout';
 import { EventLines, LeftOutCounts } from './history-marks';
 
 const Y_AXIS_WIDTH = 52;
-const RIGHT = 14;
+/** Half of the label of a last month. */
+const RIGHT = 34;
 const numbers = createNumberFormat(LOCALE);
 const months = createMonthFormat(LOCALE);
 

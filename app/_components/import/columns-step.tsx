@@ -1,82 +1,129 @@
 'use client';
 
-/** Which column is the month, which the focal firm's count, which the rival's; and how to read a table that could be read two ways. */
-import type { DateOrder, DecimalMark, SeriesMapping, SeriesProblem } from '@/lib/series/types';
+/** Which sheet and which columns are read, how rows become months, and the questions that the cells leave open. */
+import type { Aggregation, SeriesMapping } from '@/lib/series/types';
 import { ChoiceField } from '../controls/choice-field';
+import { AmbiguityQuestions } from './ambiguity-questions';
 import styles from './columns-step.module.css';
 import { TableSample } from './table-sample';
-import type { Understood } from './understand';
+import type { ReadingChoices, Understood } from './understood';
 
 interface ColumnsStepProps {
   understood: Understood;
-  mapping: SeriesMapping;
-  onChange: (mapping: SeriesMapping) => void;
+  onChoose: (choices: ReadingChoices) => void;
 }
 
-const DECIMAL_MARKS = [
-  { value: '', label: 'as the cells tell' },
-  { value: 'point', label: 'a point: 1,234.5' },
-  { value: 'comma', label: 'a comma: 1.234,5' },
+const LAYOUTS = [
+  { value: 'wide', label: 'a column for each firm' },
+  { value: 'long', label: 'a row for each month and firm' },
 ];
 
-const DATE_ORDERS = [
-  { value: '', label: 'as the cells tell' },
-  { value: 'day-first', label: 'day first: 31/01/2024' },
-  { value: 'month-first', label: 'month first: 01/31/2024' },
+const AGGREGATIONS: { value: Aggregation; label: string }[] = [
+  { value: 'mean', label: 'the mean of its rows' },
+  { value: 'last', label: 'its last row' },
 ];
 
-export function ColumnsStep({ understood, mapping, onChange }: ColumnsStepProps) {
-  const { problems } = understood.reading;
-  const options = understood.header.map((name) => ({ value: name, label: name }));
-  const isDateOpen = mapping.dateOrder !== undefined || hasCode(problems, 'month-ambiguous');
-  const isMarkOpen = mapping.decimalMark !== undefined || hasCode(problems, 'count-ambiguous');
+export function ColumnsStep({ understood, onChoose }: ColumnsStepProps) {
+  const { sheets, sheet, mapping, reading } = understood;
+  const change = (changes: Partial<SeriesMapping>) =>
+    onChoose({ sheet, mapping: mapping && { ...mapping, ...changes } });
+  const isFine = reading.grain === 'day' || reading.grain === 'week';
   return (
     <>
-      <TableSample understood={understood} mapping={mapping} />
-      <div className={styles.columns}>
-        <ChoiceField
-          label="Month"
-          value={mapping.month}
-          options={options}
-          onChange={(event) => onChange({ ...mapping, month: event.target.value })}
-        />
-        <ChoiceField
-          label="Focal firm: whose side the brief takes"
-          value={mapping.focal}
-          options={options}
-          onChange={(event) => onChange({ ...mapping, focal: event.target.value })}
-        />
-        <ChoiceField
-          label="Rival"
-          value={mapping.rival}
-          options={options}
-          onChange={(event) => onChange({ ...mapping, rival: event.target.value })}
-        />
-        {isDateOpen ? (
+      {sheets.length > 1 ? (
+        <div className={styles.columns}>
           <ChoiceField
-            label="Dates are written with"
-            value={mapping.dateOrder ?? ''}
-            options={DATE_ORDERS}
-            onChange={(event) =>
-              onChange({ ...mapping, dateOrder: (event.target.value || undefined) as DateOrder })
-            }
+            label="Sheet"
+            value={String(sheet)}
+            options={sheets.map((name, index) => ({ value: String(index), label: name }))}
+            onChange={(event) => onChoose({ sheet: Number(event.target.value), mapping: null })}
           />
-        ) : null}
-        {isMarkOpen ? (
-          <ChoiceField
-            label="Fractions are written with"
-            value={mapping.decimalMark ?? ''}
-            options={DECIMAL_MARKS}
-            onChange={(event) =>
-              onChange({ ...mapping, decimalMark: (event.target.value || undefined) as DecimalMark })
-            }
-          />
-        ) : null}
-      </div>
+        </div>
+      ) : null}
+      {mapping ? (
+        <>
+          <TableSample understood={understood} mapping={mapping} />
+          <div className={styles.columns}>
+            <ColumnChoices understood={understood} mapping={mapping} onChange={change} />
+            {isFine ? (
+              <ChoiceField
+                label={`The rows are ${reading.grain === 'day' ? 'days' : 'weeks'}. A month counts as`}
+                value={mapping.aggregation ?? 'mean'}
+                options={AGGREGATIONS}
+                onChange={(event) => change({ aggregation: event.target.value as Aggregation })}
+              />
+            ) : null}
+          </div>
+          <AmbiguityQuestions problems={reading.problems} mapping={mapping} onChange={change} />
+        </>
+      ) : null}
     </>
   );
 }
 
-function hasCode(problems: SeriesProblem[], code: SeriesProblem['code']): boolean {
-  return problems.some((problem) => problem.code === code);
+interface ColumnChoicesProps {
+  understood: Understood;
+  mapping: SeriesMapping;
+  onChange: (changes: Partial<SeriesMapping>) => void;
+}
+
+function ColumnChoices({ understood, mapping, onChange }: ColumnChoicesProps) {
+  const { header, firms } = understood;
+  const { long } = mapping;
+  const columns = header.map((name) => ({ value: name, label: name }));
+  const choices = long ? firms.map((name) => ({ value: name, label: name })) : columns;
+  return (
+    <>
+      <ChoiceField
+        label="Layout"
+        value={long ? 'long' : 'wide'}
+        options={LAYOUTS}
+        onChange={(event) => onChange(changeLayout(header, mapping, event.target.value === 'long'))}
+      />
+      <ChoiceField
+        label="Month"
+        value={mapping.month}
+        options={columns}
+        onChange={(event) => onChange({ month: event.target.value })}
+      />
+      {long ? (
+        <>
+          <ChoiceField
+            label="Names of the firms"
+            value={long.firm}
+            options={columns}
+            onChange={(event) =>
+              onChange({ long: { ...long, firm: event.target.value }, focal: '', rival: '' })
+            }
+          />
+          <ChoiceField
+            label="Users"
+            value={long.users}
+            options={columns}
+            onChange={(event) => onChange({ long: { ...long, users: event.target.value } })}
+          />
+        </>
+      ) : null}
+      <ChoiceField
+        label="Focal firm: whose side the brief takes"
+        value={mapping.focal}
+        options={choices}
+        onChange={(event) => onChange({ focal: event.target.value })}
+      />
+      <ChoiceField
+        label="Rival"
+        value={mapping.rival}
+        options={choices}
+        onChange={(event) => onChange({ rival: event.target.value })}
+      />
+    </>
+  );
+}
+
+/** Another layout starts from the columns in their order; choices about single problems were of the other layout. */
+function changeLayout(header: string[], { month }: SeriesMapping, isLong: boolean): Partial<SeriesMapping> {
+  const [first, second] = header.filter((name) => name !== month);
+  return isLong
+    ? { long: { firm: first!, users: second! }, focal: '', rival: '', fixes: undefined }
+    : { long: undefined, focal: first, rival: second, fixes: undefined };
 }

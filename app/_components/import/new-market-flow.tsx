@@ -13,29 +13,26 @@ import styles from './flow.module.css';
 import { type MarketDetails, MarketFields, UNTOUCHED_DETAILS } from './market-fields';
 import { SourceNote } from './source-note';
 import { SourceStep } from './source-step';
+import { hasColumns } from './understood';
 import { UnderstoodStep } from './understood-step';
 import { type Reading, useReading } from './use-reading';
 
 export function NewMarketFlow() {
   const reading = useReading();
-  const { understood, choices } = reading;
+  const { understood } = reading;
   const [details, setDetails] = useState(UNTOUCHED_DETAILS);
   return (
     <>
       <Question id="counts" question="What are the counts?" note={<CountsNote />}>
         <SourceStep reading={reading} />
       </Question>
-      {understood?.mapping ? (
+      {understood && hasColumns(understood) ? (
         <Question
           id="columns"
           question="Which column is which?"
           note={<p>Guessed from the header and the cells. Change what is wrong.</p>}
         >
-          <ColumnsStep
-            understood={understood}
-            mapping={understood.mapping}
-            onChange={(mapping) => reading.choose({ ...choices, mapping })}
-          />
+          <ColumnsStep key={reading.sourceNumber} understood={understood} onChoose={reading.choose} />
         </Question>
       ) : null}
       {understood ? (
@@ -45,7 +42,8 @@ export function NewMarketFlow() {
           note={<p>Check it against your own sheet. Nothing is stored yet.</p>}
         >
           <UnderstoodStep
-            reading={understood.reading}
+            understood={understood}
+            onFix={reading.chooseFix}
             focalName={details.focalName ?? understood.reading.focalName}
             rivalName={details.rivalName ?? understood.reading.rivalName}
             unit={details.unit}

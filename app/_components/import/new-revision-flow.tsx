@@ -8,6 +8,7 @@ import { Question } from '../frame/question';
 import { ColumnsStep } from './columns-step';
 import styles from './flow.module.css';
 import { SourceStep } from './source-step';
+import { hasColumns } from './understood';
 import { UnderstoodStep } from './understood-step';
 import { type Reading, useReading } from './use-reading';
 
@@ -22,7 +23,7 @@ export function NewRevisionFlow({ base: newest, unit, knownFiles }: NewRevisionF
   // Kept: when the page comes again with a newer revision, what was read still belongs to this one.
   const [base] = useState(newest);
   const reading = useReading();
-  const { understood, choices } = reading;
+  const { understood } = reading;
   const known = knownFiles.find(({ fileHash }) => fileHash === reading.fileHash);
   return (
     <>
@@ -41,16 +42,13 @@ export function NewRevisionFlow({ base: newest, unit, knownFiles }: NewRevisionF
       </Question>
       {understood ? (
         <Question id="understood" question="What was understood?" note={<p>Nothing is stored yet.</p>}>
-          {understood.mapping ? (
-            <ColumnsStep
-              understood={understood}
-              mapping={understood.mapping}
-              onChange={(mapping) => reading.choose({ ...choices, mapping })}
-            />
+          {hasColumns(understood) ? (
+            <ColumnsStep key={reading.sourceNumber} understood={understood} onChoose={reading.choose} />
           ) : null}
           <div className={styles.understood}>
             <UnderstoodStep
-              reading={understood.reading}
+              understood={understood}
+              onFix={reading.chooseFix}
               focalName={base.focalName}
               rivalName={base.rivalName}
               unit={unit}

@@ -1,6 +1,6 @@
 /** What the page and the reading worker tell each other. Numbers tie an answer to what was asked; older answers are dropped. */
 import type { Month } from '@/lib/series/types';
-import type { ReadingChoices, Understood } from './understand';
+import type { ReadingChoices, Understood } from './understood';
 
 export type ReadingRequest =
   /** A new source: it is read and kept for later choices. */

@@ -1,16 +1,15 @@
 /** Reads files and pastes away from the page, which stays awake: decoding, hashing, parsing, checking. */
 import { sha256 } from '@noble/hashes/sha2.js';
 import { bytesToHex } from '@noble/hashes/utils.js';
-import type { TableReading } from '@/lib/series/types';
 import type { ReadingAnswer, ReadingRequest } from './reading-messages';
-import { openBytes, openText, understand } from './understand';
+import { type OpenSource, openBytes, openText, understand } from './understand';
 
-let open: { table: TableReading; fileHash: string | null } | null = null;
+let open: { source: OpenSource; fileHash: string | null } | null = null;
 
 async function openSource(source: File | string): Promise<typeof open> {
-  if (typeof source === 'string') return { table: openText(source), fileHash: null };
+  if (typeof source === 'string') return { source: openText(source), fileHash: null };
   const bytes = new Uint8Array(await source.arrayBuffer());
-  return { table: openBytes(bytes), fileHash: bytesToHex(sha256(bytes)) };
+  return { source: await openBytes(bytes), fileHash: bytesToHex(sha256(bytes)) };
 }
 
 async function answer(request: ReadingRequest): Promise<ReadingAnswer> {
@@ -24,7 +23,7 @@ async function answer(request: ReadingRequest): Promise<ReadingAnswer> {
     }
   }
   if (!open) return { kind: 'unreadable', number };
-  const understood = understand(open.table, choices, thisMonth);
+  const understood = understand(open.source, choices, thisMonth);
   return { kind: 'understood', number, understood, fileHash: open.fileHash };
 }
 

@@ -1,18 +1,27 @@
 /** The first rows of a table as they stand, with the chosen columns marked, so that a wrong choice is seen at once. */
 import type { SeriesMapping } from '@/lib/series/types';
 import styles from './table-sample.module.css';
-import type { Understood } from './understand';
+import type { Understood } from './understood';
 
 /** Beyond these columns only the chosen ones are shown. */
 const MOST_COLUMNS = 8;
 
 export function TableSample({ understood, mapping }: { understood: Understood; mapping: SeriesMapping }) {
   const { header, sample, rowCount } = understood;
-  const roles = new Map([
-    [mapping.month, 'month'],
-    [mapping.focal, 'focal'],
-    [mapping.rival, 'rival'],
-  ]);
+  const { long } = mapping;
+  const roles = new Map<string, string>(
+    long
+      ? [
+          [mapping.month, 'month'],
+          [long.firm, 'firm'],
+          [long.users, 'users'],
+        ]
+      : [
+          [mapping.month, 'month'],
+          [mapping.focal, 'focal'],
+          [mapping.rival, 'rival'],
+        ],
+  );
   const columns = header
     .map((name, index) => ({ name, index, role: roles.get(name) }))
     .filter(({ role }, index) => role !== undefined || index < MOST_COLUMNS);

@@ -1,33 +1,45 @@
 'use client';
 
+/** What was understood from the table: one sentence, how it was read, the chart and the months, and every problem. */
 import { LOCALE } from '@/app/_lib/locale';
-/** What was understood from the table: one sentence, the chart and the months, and every problem. */
 import { createMonthFormat } from '@/lib/brief/month-words';
 import { MIN_MONTHS_TO_FIT } from '@/lib/series/limits';
-import { canFit } from '@/lib/series/read-series';
-import type { MonthlySeries, SeriesReading } from '@/lib/series/types';
+import type { MonthlySeries, ProblemFix } from '@/lib/series/types';
 import { HistoryFigure } from '../figures/history-figure';
 import { ProblemList } from './problem-list';
+import { isAsked, type Understood } from './understood';
 import styles from './understood-step.module.css';
 
 interface UnderstoodStepProps {
-  reading: SeriesReading;
+  understood: Understood;
+  onFix: (key: string, fix: ProblemFix) => void;
   focalName: string;
   rivalName: string;
   unit: string;
 }
 
-export function UnderstoodStep({ reading, focalName, rivalName, unit }: UnderstoodStepProps) {
+export function UnderstoodStep({ understood, onFix, focalName, rivalName, unit }: UnderstoodStepProps) {
+  const { reading, notes, mapping, canFit } = understood;
   return (
     <div>
       <p className={styles.summary} aria-live="polite">
         {reading.series ? describeSeries(reading.series) : 'Nothing could be read as counts yet.'}
       </p>
+      {notes.length > 0 ? <p className={styles.notes}>{notes.join(' ')}</p> : null}
       {reading.series ? (
         <HistoryFigure series={reading.series} focalName={focalName} rivalName={rivalName} unit={unit} />
       ) : null}
-      <ProblemList problems={reading.problems} />
-      {canFit(reading) ? null : (
+      {reading.problems.some(isAsked) ? (
+        <p className={styles.blocked}>
+          First answer what is asked above: cells that it concerns are not read yet.
+        </p>
+      ) : null}
+      <ProblemList
+        problems={reading.problems.filter((problem) => !isAsked(problem))}
+        fixes={mapping?.fixes}
+        onFix={onFix}
+      />
+      {canFit ? null : (
         <p className={styles.blocked}>
           Nothing can be stored until what concerns the whole file is corrected.
         </p>

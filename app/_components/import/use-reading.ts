@@ -4,9 +4,9 @@
 import { useCallback, useEffect, useRef, useState } from 'react';
 import { MAX_FILE_BYTES } from '@/app/_lib/upload-limit';
 import { makeMonth } from '@/lib/series/month';
-import { canFit } from '@/lib/series/read-series';
+import type { ProblemFix } from '@/lib/series/types';
 import type { ReadingAnswer, ReadingRequest } from './reading-messages';
-import { NO_CHOICES, type ReadingChoices, type Understood } from './understand';
+import { NO_CHOICES, type ReadingChoices, type Understood } from './understood';
 
 export interface GivenSource {
   /** null: pasted or typed. */
@@ -20,6 +20,8 @@ export type ReadingState = 'nothing' | 'reading' | 'read' | 'too-large' | 'unrea
 export interface Reading {
   state: ReadingState;
   source: GivenSource | null;
+  /** Another one for each source. */
+  sourceNumber: number;
   choices: ReadingChoices;
   /** Stays while other choices are read. */
   understood: Understood | null;
@@ -28,12 +30,15 @@ export interface Reading {
   giveFile(file: File): void;
   giveText(text: string): void;
   choose(choices: ReadingChoices): void;
+  /** What is done about one problem of the table. */
+  chooseFix(key: string, fix: ProblemFix): void;
   cancel(): void;
 }
 
 interface Standing {
   state: ReadingState;
   source: GivenSource | null;
+  sourceNumber: number;
   choices: ReadingChoices;
   understood: Understood | null;
   fileHash: string | null;
@@ -42,6 +47,7 @@ interface Standing {
 const NOTHING: Standing = {
   state: 'nothing',
   source: null,
+  sourceNumber: 0,
   choices: NO_CHOICES,
   understood: null,
   fileHash: null,
@@ -78,21 +84,34 @@ export function useReading(): Reading {
       stop();
       if (source.size > MAX_FILE_BYTES) return setStanding({ ...NOTHING, state: 'too-large', source });
       if (typeof given === 'string' && given.trim() === '') return setStanding(NOTHING);
-      setStanding({ ...NOTHING, state: 'reading', source });
+      setStanding(({ sourceNumber }) => ({
+        ...NOTHING,
+        state: 'reading',
+        source,
+        sourceNumber: sourceNumber + 1,
+      }));
       ask({ kind: 'open', source: given, choices: NO_CHOICES });
     },
     [ask, stop],
   );
 
   const { understood } = standing;
+
+  function choose(choices: ReadingChoices) {
+    setStanding((before) => ({ ...before, state: 'reading', choices }));
+    ask({ kind: 'choose', choices });
+  }
+
   return {
     ...standing,
-    canFit: standing.state === 'read' && understood !== null && canFit(understood.reading),
+    canFit: standing.state === 'read' && (understood?.canFit ?? false),
     giveFile: give,
     giveText: give,
-    choose(choices) {
-      setStanding((before) => ({ ...before, state: 'reading', choices }));
-      ask({ kind: 'choose', choices });
+    choose,
+    chooseFix(key, fix) {
+      if (!understood?.mapping) return;
+      const { sheet, mapping } = understood;
+      choose({ sheet, mapping: { ...mapping, fixes: { ...mapping.fixes, [key]: fix } } });
     },
     cancel() {
       stop();
