@@ -14,6 +14,16 @@ const BY_FIELD: Record<string, Partial<Record<FieldProblem['code'], string>>> = 
     'wrong-format': 'Give a percentage between 0 and 100.',
     'too-large': 'Give a percentage between 0 and 100.',
   },
+  focalAddressable: {
+    'wrong-format': 'Write a number of users, or leave it empty.',
+    'too-small': 'Write a number of users above zero, or leave it empty.',
+    'too-large': 'This is more than there are people.',
+  },
+  rivalAddressable: {
+    'wrong-format': 'Write a number of users, or leave it empty.',
+    'too-small': 'Write a number of users above zero, or leave it empty.',
+    'too-large': 'This is more than there are people.',
+  },
   expiresAt: { 'wrong-format': 'This is not a date.' },
 };
 

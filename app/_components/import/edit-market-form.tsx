@@ -1,6 +1,6 @@
 'use client';
 
-/** Changes a market's names, unit and measurement errors. Other errors make the outlook stale; names change no number. */
+/** Changes a market's names, unit, measurement errors and addressable market. Other errors make the outlook stale; names change no number. */
 import { useState, useTransition } from 'react';
 import { editMarketAction } from '@/app/_actions/edit-market';
 import type { FieldSentences } from '@/app/_lib/explain-field';
@@ -8,7 +8,7 @@ import type { MarketEdit } from '@/lib/services/forms';
 import { Button } from '../controls/button';
 import { type Explanation, ProblemNote } from '../controls/problem-note';
 import styles from './flow.module.css';
-import { type MarketDetails, MarketFields } from './market-fields';
+import { type MarketDetails, MarketFields, readDetails } from './market-fields';
 
 interface EditMarketFormProps {
   marketId: string;
@@ -20,6 +20,9 @@ export function EditMarketForm({ marketId, market }: EditMarketFormProps) {
     ...market,
     focalError: String(market.focalError),
     rivalError: String(market.rivalError),
+    focalAddressable: spellUsers(market.focalAddressable),
+    rivalAddressable: spellUsers(market.rivalAddressable),
+    addressableError: String(market.addressableError),
   });
   const [fields, setFields] = useState<FieldSentences>({});
   const [explanation, setExplanation] = useState<Explanation | null>(null);
@@ -28,12 +31,9 @@ export function EditMarketForm({ marketId, market }: EditMarketFormProps) {
   const save = () =>
     startTransition(async () => {
       const refusal = await editMarketAction(marketId, {
-        name: details.name,
-        unit: details.unit,
+        ...readDetails(details),
         focalName: details.focalName ?? market.focalName,
         rivalName: details.rivalName ?? market.rivalName,
-        focalError: Number(details.focalError),
-        rivalError: Number(details.rivalError),
       });
       setFields(refusal.fields);
       setExplanation(refusal.explanation);
@@ -55,4 +55,8 @@ export function EditMarketForm({ marketId, market }: EditMarketFormProps) {
       </div>
     </>
   );
+}
+
+function spellUsers(users: number | null): string {
+  return users === null ? '' : String(users);
 }

@@ -10,7 +10,7 @@ import { ProblemNote } from '../controls/problem-note';
 import { Question } from '../frame/question';
 import { ColumnsStep } from './columns-step';
 import styles from './flow.module.css';
-import { type MarketDetails, MarketFields, UNTOUCHED_DETAILS } from './market-fields';
+import { type MarketDetails, MarketFields, readDetails, UNTOUCHED_DETAILS } from './market-fields';
 import { SourceNote } from './source-note';
 import { SourceStep } from './source-step';
 import { hasColumns } from './understood';
@@ -80,12 +80,9 @@ function StoreMarket({ reading, details, onChange }: StoreMarketProps) {
     if (!series) return;
     startTransition(async () => {
       const answer = await createMarketAction({
-        name: details.name,
-        unit: details.unit,
+        ...readDetails(details),
         focalName: details.focalName ?? columnNames.focal,
         rivalName: details.rivalName ?? columnNames.rival,
-        focalError: Number(details.focalError),
-        rivalError: Number(details.rivalError),
         fileName: source?.fileName ?? null,
         fileHash,
         canonicalText: toCanonicalText(series),

@@ -62,7 +62,8 @@ export default async function DataPage({ params }: { params: Promise<{ id: strin
         question="What happened?"
         note={
           <p>
-            Price changes, outages, launches: they stand on the charts. The fit looks for changes by itself.
+            Price changes, outages, launches: they stand on the charts. The fit looks for changes by itself;
+            one from which strengths may have changed tells it where.
           </p>
         }
       >
