@@ -1,5 +1,6 @@
 /** What `elbowroom scenario FILE` prints for people: each scenario in the words of the page, then all of them side by side. */
 import { writeBreakEven, writeLastUsefulMonth, writeSmallestPush } from '../brief/answer-words';
+import { writeCautions } from '../brief/cautions';
 import type { BriefFacts } from '../brief/facts';
 import { writeMoney } from '../brief/money-words';
 import { buildPushBrief } from '../brief/push-brief';
@@ -15,7 +16,8 @@ export function renderScenarios(facts: BriefFacts, scenarios: readonly ComparedS
   const words = createWords(facts);
   const blocks = scenarios.flatMap((scenario) => renderScenario(words, scenario));
   if (scenarios.length > 1) blocks.push(renderFigureTable(buildSideBySide(scenarios, facts).table));
-  blocks.push(wrapText('Forecasts are estimates and no investment advice.'));
+  const cautions = writeCautions(words, true).map(({ text }) => wrapText(`- ${text}`, 2));
+  blocks.push(section('Cautions', cautions.join('\n')));
   return `${blocks.join('\n\n')}\n`;
 }
 

@@ -131,6 +131,7 @@ describe('a scenario of a file', () => {
       'Smallest counter-push',
       'Last useful month',
       'Break-even spend',
+      'Cautions',
     ]) {
       expect(stdout).toMatch(new RegExp(`^${title}$`, 'm'));
     }
