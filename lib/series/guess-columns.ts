@@ -10,11 +10,6 @@ import type { ColumnGuess, TableRow } from './types';
 /** Rows looked at. */
 const ROWS_TO_GUESS_FROM = 200;
 
-/** Rows looked at for firms, taken from all over the table: one firm may fill the first hundreds. */
-const ROWS_TO_FIND_FIRMS = 2000;
-
-const GOLDEN_RATIO = (1 + Math.sqrt(5)) / 2;
-
 /** Share of the filled cells that must be months, or counts. */
 const MIN_SHARE = 0.6;
 
@@ -36,8 +31,8 @@ export function guessColumns(header: readonly string[], rows: readonly TableRow[
   const firms = counts.filter(({ name, cells }) => !SUPPORT_HEADER.test(name) && !isRunningNumber(cells));
   const [focal, rival] = firms.length >= 2 ? firms : counts;
   const others = columns.filter((column) => column !== month && !counts.includes(column));
-  const spread = spreadOf(rows);
-  const widen = ({ name, index }: Column) => ({ name, cells: spread.map(({ cells }) => cells[index]) });
+  // All rows: one firm may fill the first thousands.
+  const widen = ({ name, index }: Column) => ({ name, cells: rows.map(({ cells }) => cells[index]) });
   const users = firms.length > 0 ? firms : counts;
   const long = guessLong(month && widen(month), others.map(widen), users);
   if (long) return { month: month!.name, ...long };
@@ -48,12 +43,6 @@ interface Column {
   name: string;
   index: number;
   cells: string[];
-}
-
-/** Steps of the golden ratio fall evenly and in no rhythm that the rows could have (Weyl). */
-function spreadOf(rows: readonly TableRow[]): TableRow[] {
-  const share = ROWS_TO_FIND_FIRMS / rows.length;
-  return share >= 1 ? [...rows] : rows.filter((_, index) => (index * GOLDEN_RATIO) % 1 < share);
 }
 
 function guessMonth(columns: Column[]): Column | undefined {

@@ -30,9 +30,10 @@ export function guessLong(
   const users = counts[0];
   if (!month || !users) return null;
   for (const column of columns) {
+    if (!hasFewNames(column.cells)) continue;
     const firms = rankFirms(column.cells);
     const [focal, rival] = firms;
-    if (!focal || !rival || firms.length > MAX_FIRMS || rival.rows < MIN_ROWS_PER_FIRM) continue;
+    if (!focal || !rival || rival.rows < MIN_ROWS_PER_FIRM) continue;
     const pairs = new Set(month.cells.map((cell, index) => `${cell}\n${column.cells[index]}`));
     const isEach = pairs.size >= MIN_DISTINCT_SHARE * month.cells.length;
     const areMonthsShared = new Set(month.cells).size < pairs.size;
@@ -40,6 +41,11 @@ export function guessLong(
       return { focal: focal.name, rival: rival.name, long: { firm: column.name, users: users.name } };
   }
   return null;
+}
+
+function hasFewNames(cells: readonly string[]): boolean {
+  const names = new Set<string>();
+  return cells.every((cell) => names.add(cell).size <= MAX_FIRMS);
 }
 
 /** Names of a column of firms, the one with the most rows first, then as they stand. */
