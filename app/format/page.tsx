@@ -30,19 +30,28 @@ export default async function FormatPage() {
         </pre>
         <Rules>
           <li>
-            Commas, semicolons, tabs or bars between the cells; cells with such a mark inside in quotes.
+            CSV, TSV or text, with commas, semicolons, tabs or bars between the cells; cells with such a mark
+            inside in quotes. UTF-8, UTF-16 or Windows-1252.
           </li>
-          <li>A first row with names. Title lines above it, and columns that are not needed, do no harm.</li>
-          <li>Text in UTF-8, UTF-16 or Windows-1252, with or without a byte order mark.</li>
-          <li>Rows in any order. Cells can also be pasted from a spreadsheet.</li>
+          <li>An Excel workbook (.xlsx) without password and macros; the sheet can be chosen.</li>
+          <li>A column for each firm, or a row for each month and firm: month, firm, users.</li>
+          <li>More columns and more firms than two do no harm: two are chosen.</li>
+          <li>A first row with names. Title lines above it are passed over. Rows in any order.</li>
         </Rules>
       </Question>
       <Question id="months" question="How are months written?">
         <Rules>
-          <li>2024-03, 2024/03, 03/2024, 202403, Mar 2024, March 2024, März 2024, 2024-03-31, 31.03.2024.</li>
+          <li>
+            2024-03, 2024/03, 03/2024, 202403, Mar 2024, March 2024, März 2024, 2024-03-31, 31.03.2024, and a
+            spreadsheet’s day numbers.
+          </li>
           <li>
             03/04/2024 can be 3 April or March 4: other dates of the column decide, and where none does you
             are asked once, with both readings shown. The same for years of two digits.
+          </li>
+          <li>
+            Rows can be days or weeks: a month counts as their mean or its last row, as you choose, and a
+            month that they do not fill is left out. A quarter (2024-Q1) stands in its last month.
           </li>
           <li>A month without a row is a gap. Gaps are allowed; they make the answer less sure.</li>
         </Rules>
@@ -65,7 +74,7 @@ export default async function FormatPage() {
       </Question>
       <Question id="looks" question="What is looked at twice?">
         <Rules>
-          <li>Two rows for one month; months after the current one; gaps.</li>
+          <li>Two rows for one month; months after the current one, and the current one itself; gaps.</li>
           <li>
             A change of more than {JUMP_FACTOR} times in a month; one firm in thousands and the other not.
           </li>

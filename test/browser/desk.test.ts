@@ -2,6 +2,7 @@
  * The series desk in a browser: files of many spellings, an import by keyboard alone, corrections in the grid, two people saving
  * at once, events, the history of revisions, names that would harm a careless program, a large file.
  */
+import { createHash } from 'node:crypto';
 import { mkdtempSync, rmSync, writeFileSync } from 'node:fs';
 import { tmpdir } from 'node:os';
 import { join } from 'node:path';
@@ -85,6 +86,27 @@ describe.sequential('files', () => {
     await page.getByRole('button', { name: 'Store the counts and fit' }).waitFor();
   });
 
+  test('a dropped file is read; stored, its name and hash are kept, and the same file again is told at once', async () => {
+    const { page } = analyst;
+    await openNew(page);
+    const folder = mkdtempSync(join(tmpdir(), 'elbowroom-desk-'));
+    writeFileSync(join(folder, 'dropped.csv'), PLAIN_CSV);
+    await dropFile(page, join(folder, 'dropped.csv'));
+    await page.getByText(UNDERSTOOD).waitFor();
+    await page.getByLabel('Name of the market').fill('Dropped');
+    await page.getByRole('button', { name: 'Store the counts and fit' }).click();
+    await marketOpened(page);
+    const url = page.url();
+    await page.goto(`${url}/data`);
+    await giveFile(page, textFile('renamed.csv', PLAIN_CSV));
+    await page.getByText(/the very file that revision 1 came from/).waitFor();
+    expect(await page.getByRole('button', { name: /Store revision/ }).count()).toBe(0);
+    await page.goto(`${url}/data/revisions/1`);
+    const hash = createHash('sha256').update(PLAIN_CSV).digest('hex');
+    expect(await page.getByRole('main').textContent()).toMatch(new RegExp(`dropped.csv.*${hash}`));
+    rmSync(folder, { recursive: true });
+  });
+
   test('what is done about a problem can be chosen, changes the preview and is kept on record', async () => {
     const { page } = analyst;
     await openNew(page);
@@ -145,6 +167,9 @@ describe.sequential('files', () => {
     console.info(`preview of 18 MB: ${elapsed} ms, longest task ${Math.round(longest)} ms`);
     expect(elapsed).toBeLessThan(PREVIEW_LIMIT_MS);
     expect(longest).toBeLessThan(LONGEST_TASK_MS);
+    await giveFile(page, large);
+    await page.getByRole('button', { name: 'Cancel' }).click();
+    await page.getByText('not read: you cancelled it').waitFor();
     writeFileSync(join(folder, 'larger.csv'), Buffer.alloc(20_000_001, 'x'));
     await giveFile(page, join(folder, 'larger.csv'));
     await page.getByText(/At most 20 MB are read/).waitFor();
@@ -355,4 +380,15 @@ describe.sequential('the desk on other screens', () => {
 
 function measureOverflow(page: Page): Promise<number> {
   return page.evaluate(() => document.documentElement.scrollWidth - document.documentElement.clientWidth);
+}
+
+/** Lets a file of the disk fall on the zone, as the system reports it to the browser. */
+async function dropFile(page: Page, path: string): Promise<void> {
+  const box = await page.getByText('or drop it here').boundingBox();
+  if (!box) throw new Error('there is no zone to drop on');
+  const session = await page.context().newCDPSession(page);
+  const data = { items: [], files: [path], dragOperationsMask: 1 };
+  for (const type of ['dragEnter', 'dragOver', 'drop'] as const)
+    await session.send('Input.dispatchDragEvent', { type, x: box.x + 5, y: box.y + 5, data });
+  await session.detach();
 }
