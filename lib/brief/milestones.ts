@@ -9,7 +9,9 @@ import type { MilestoneRow, Sentence } from './types';
 import { otherFirm, type Words } from './words';
 
 export function writeMilestones(words: Words): MilestoneRow[] {
-  const rows = [describeOvertaking(words), describeNearDestination(words)];
+  // nobody overtakes alone
+  const hasContest = !words.facts.report.structure?.exit;
+  const rows = [...(hasContest ? [describeOvertaking(words)] : []), describeNearDestination(words)];
   const halfLife = describeHalfLife(words);
   return halfLife ? [...rows, halfLife] : rows;
 }

@@ -10,6 +10,7 @@ import { labelOutcome, winnerOf } from './outcomes';
 import { LIKELY_ABOVE, likelyVerb, wordProbability } from './probability-words';
 import { capitalise, possessive, run, sentence } from './text';
 import type { Sentence, Verdict } from './types';
+import { writeExit } from './verdict-exit';
 import { milestoneClause, settlingSentence } from './verdict-support';
 import { writeUndecided } from './verdict-undecided';
 import { type FirmRole, otherFirm, type Words } from './words';
@@ -18,6 +19,8 @@ import { type FirmRole, otherFirm, type Words } from './words';
 const INDEPENDENT_BELOW = 0.2;
 
 export function writeVerdict(words: Words): Verdict {
+  const { structure } = words.facts.report;
+  if (structure?.exit) return writeExit(words, structure.exit);
   const { odds } = words.facts.report.outlook;
   const decided = decideOutcome(odds);
   if (!decided) return writeUndecided(words);

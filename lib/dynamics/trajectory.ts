@@ -15,17 +15,20 @@ export interface TrajectoryGrid {
   /** Month index in which each firm enters. The smaller one must be 0. */
   entry1: number;
   entry2: number;
+  /** Month index from which on a firm has no users; absent: it stays. */
+  exit1?: number;
+  exit2?: number;
 }
 
 export interface Trajectory {
   readonly grid: TrajectoryGrid;
   /** Integration steps taken since creation: the measure of work. */
   readonly steps: number;
-  /** ln users of each firm per month after `run`; -Infinity before its entry. */
+  /** ln users of each firm per month after `run`; -Infinity before its entry and from its exit on. */
   readonly logLevel1: Float64Array;
   readonly logLevel2: Float64Array;
   /**
-   * Integrates. `theta`: eight log parameters.
+   * Integrates. `theta`: eight log parameters; a start of -Infinity is a firm without users, which stays so.
    * @returns false when the path is not finite, not positive, or too fast to follow; the levels are then meaningless
    */
   run(theta: ArrayLike<number>): boolean;
@@ -36,7 +39,7 @@ export interface Trajectory {
   pullBack(weight1: Float64Array, weight2: Float64Array, gradient: Float64Array): void;
   /**
    * Integrates like `run` and fills d ln N_i(t) / d theta_j.
-   * @param out length 2 x months x 8: firm-major, then month, then parameter; 0 before a firm's entry
+   * @param out length 2 x months x 8: firm-major, then month, then parameter; 0 before a firm's entry and from its exit on
    */
   fillSensitivities(theta: ArrayLike<number>, out: Float64Array): boolean;
 }
@@ -47,6 +50,9 @@ export interface Trajectory {
  */
 export function createTrajectory(grid: TrajectoryGrid): Trajectory {
   const { months, entry1, entry2 } = grid;
+  /** Month from which on a firm has no users: its exit, or its entry when it starts without any. */
+  let exit1 = months;
+  let exit2 = months;
   checkGrid(grid);
   const flow = createMonthFlow(months);
   const { state, tangent, adjoint } = flow;
@@ -59,10 +65,15 @@ export function createTrajectory(grid: TrajectoryGrid): Trajectory {
     flow.setParameters(Math.exp(theta[0]), Math.exp(theta[1]), Math.exp(theta[4]), Math.exp(theta[5]));
     state[0] = 0;
     state[1] = 0;
+    exit1 = theta[6] === Number.NEGATIVE_INFINITY ? entry1 : (grid.exit1 ?? months);
+    exit2 = theta[7] === Number.NEGATIVE_INFINITY ? entry2 : (grid.exit2 ?? months);
     for (let t = 0; t < months; t++) {
       if (t === entry1) state[0] = Math.exp(theta[6] - theta[2]);
       if (t === entry2) state[1] = Math.exp(theta[7] - theta[3]);
-      if (!isUsable(state[0], t >= entry1) || !isUsable(state[1], t >= entry2)) return false;
+      if (t === exit1) state[0] = 0;
+      if (t === exit2) state[1] = 0;
+      if (!isUsable(state[0], t >= entry1 && t < exit1) || !isUsable(state[1], t >= entry2 && t < exit2))
+        return false;
       levelX[t] = state[0];
       levelY[t] = state[1];
       logLevel1[t] = theta[2] + Math.log(state[0]);
@@ -81,15 +92,17 @@ export function createTrajectory(grid: TrajectoryGrid): Trajectory {
     let sum2 = 0;
     for (let t = months - 1; t >= 0; t--) {
       if (t < months - 1) flow.pullBack(t);
-      if (t >= entry1) {
+      if (t >= entry1 && t < exit1) {
         adjoint[0] += weight1[t] / levelX[t];
         sum1 += weight1[t];
       }
-      if (t >= entry2) {
+      if (t >= entry2 && t < exit2) {
         adjoint[1] += weight2[t] / levelY[t];
         sum2 += weight2[t];
       }
-      // before its entry a firm's level is 0 whatever the parameters are
+      // before its entry and from its exit on a firm's level is 0 whatever the parameters are
+      if (t === exit1) adjoint[0] = 0;
+      if (t === exit2) adjoint[1] = 0;
       if (t === entry1) {
         start1 = adjoint[0] * levelX[t];
         adjoint[0] = 0;
@@ -115,8 +128,12 @@ export function createTrajectory(grid: TrajectoryGrid): Trajectory {
     for (let t = 0; t < months; t++) {
       if (t === entry1) enter(tangent, 0, levelX[t]);
       if (t === entry2) enter(tangent, 1, levelY[t]);
-      writeLogSensitivities(tangent, 0, t >= entry1 ? 1 / levelX[t] : 0, out, t * PARAMETER_COUNT);
-      writeLogSensitivities(tangent, 1, t >= entry2 ? 1 / levelY[t] : 0, out, (months + t) * PARAMETER_COUNT);
+      if (t === exit1) leave(tangent, 0);
+      if (t === exit2) leave(tangent, 1);
+      const has1 = t >= entry1 && t < exit1;
+      const has2 = t >= entry2 && t < exit2;
+      writeLogSensitivities(tangent, 0, has1 ? 1 / levelX[t] : 0, out, t * PARAMETER_COUNT);
+      writeLogSensitivities(tangent, 1, has2 ? 1 / levelY[t] : 0, out, (months + t) * PARAMETER_COUNT);
       if (t < months - 1) flow.pushForward(t);
     }
     return true;
@@ -144,15 +161,20 @@ function checkGrid({ months, entry1, entry2 }: TrajectoryGrid): void {
   }
 }
 
-/** A firm's scaled level may be 0 only before its entry; NaN and overflow fail. */
-function isUsable(level: number, hasEntered: boolean): boolean {
-  return hasEntered ? level > 0 && level < Number.POSITIVE_INFINITY : level === 0;
+/** A firm's scaled level may be 0 only before its entry and from its exit on; NaN and overflow fail. */
+function isUsable(level: number, isThere: boolean): boolean {
+  return isThere ? level > 0 && level < Number.POSITIVE_INFINITY : level === 0;
 }
 
 /** At its entry a firm's level depends on its own start alone. */
 function enter(tangent: Float64Array, row: number, level: number): void {
   for (let column = 0; column < TANGENT_COLUMNS; column++) tangent[2 * column + row] = 0;
   tangent[2 * (4 + row) + row] = level;
+}
+
+/** From its exit on a firm's level depends on nothing. */
+function leave(tangent: Float64Array, row: number): void {
+  for (let column = 0; column < TANGENT_COLUMNS; column++) tangent[2 * column + row] = 0;
 }
 
 /** d ln N / d theta of one firm from the scaled tangents. */

@@ -6,7 +6,7 @@
 import { createTrajectory } from '../dynamics/trajectory';
 import type { RandomStream } from '../numeric/random';
 import { ar1LogLikelihood, type ErrorGradient } from './ar1-errors';
-import type { FirmObservations, Observations } from './observations';
+import { type FirmObservations, gridOf, type Observations } from './observations';
 import { PARAMETERS } from './parameters';
 import type { Posterior } from './posterior';
 import { createLogPrior, type Priors } from './priors';
@@ -48,7 +48,7 @@ export function createAr1Posterior(
   measurementFloor: FitOptions['measurementFloor'],
 ): Posterior {
   const { months, firms } = observations;
-  const trajectory = createTrajectory({ months, entry1: firms[0].entry, entry2: firms[1].entry });
+  const trajectory = createTrajectory(gridOf(observations));
   const logPrior = createLogPrior(priors);
   const floors = [measurementFloor.focal, measurementFloor.rival].map((floor) =>
     Math.max(floor, SMALLEST_ERROR),

@@ -6,7 +6,7 @@
  * z ln users, Phi_t one month of the competitive growth system, its parameters those of the segment (before or after a break). Mean
  * through Phi, covariance through F = d Phi / d z (Jazwinski 1970; Kristensen, Madsen & Jorgensen 2004); the counts of a month update
  * one after the other; a month without a count is predicted and not updated, so gaps are exact. A flagged count has its variance
- * multiplied by FLAGGED_INFLATION. The start of a firm is a parameter, known exactly given theta.
+ * multiplied by FLAGGED_INFLATION. The start of a firm is a parameter, known exactly given theta; so is that it has left.
  */
 import { createMonthFlow } from '../dynamics/month-flow';
 import type { FirmObservations, Observations } from './observations';
@@ -79,6 +79,8 @@ export function createKalmanFilter(observations: Observations): KalmanFilter {
   const counts = firms.map((firm) => onGrid(firm, months));
   const entry1 = firms[0].entry;
   const entry2 = firms[1].entry;
+  const exit1 = firms[0].exit ?? months;
+  const exit2 = firms[1].exit ?? months;
   const kept = new Float64Array(months * WIDTH);
   const history = {
     states: new Float64Array(months * STATE_WIDTH),
@@ -120,12 +122,12 @@ export function createKalmanFilter(observations: Observations): KalmanFilter {
     let squares = 0;
     let logs = 0;
     for (let t = 0; t < months; t++) {
-      const has1 = t >= entry1;
-      const has2 = t >= entry2;
+      const has1 = t >= entry1 && t < exit1;
+      const has2 = t >= entry2 && t < exit2;
       if (after && t === breakMonth) {
         takeSegment(after);
-        level1 = t > entry1 ? Math.exp(logLevel1 - logK1) : 0;
-        level2 = t > entry2 ? Math.exp(logLevel2 - logK2) : 0;
+        level1 = t > entry1 && has1 ? Math.exp(logLevel1 - logK1) : 0;
+        level2 = t > entry2 && has2 ? Math.exp(logLevel2 - logK2) : 0;
       }
       if (t === entry1) {
         logLevel1 = theta[6];
@@ -136,6 +138,17 @@ export function createKalmanFilter(observations: Observations): KalmanFilter {
       if (t === entry2) {
         logLevel2 = theta[7];
         level2 = Math.exp(logLevel2 - logK2);
+        p22 = 0;
+        p12 = 0;
+      }
+      // a firm that has left stays at no users, its logarithm where it was
+      if (t === exit1) {
+        level1 = 0;
+        p11 = 0;
+        p12 = 0;
+      }
+      if (t === exit2) {
+        level2 = 0;
         p22 = 0;
         p12 = 0;
       }
@@ -278,8 +291,8 @@ export function createKalmanFilter(observations: Observations): KalmanFilter {
         takeSegment(theta);
       }
       const at = t * WIDTH;
-      const has1 = t >= entry1;
-      const has2 = t >= entry2;
+      const has1 = t >= entry1 && t < exit1;
+      const has2 = t >= entry2 && t < exit2;
       if (t < months - 1) {
         const f11 = jacobians[4 * t];
         const f12 = jacobians[4 * t + 1];
@@ -350,6 +363,16 @@ export function createKalmanFilter(observations: Observations): KalmanFilter {
       }
       if (t === entry2) {
         gradient.theta[7] += by2;
+        by2 = 0;
+        by22 = 0;
+        by12 = 0;
+      }
+      if (t === exit1) {
+        by1 = 0;
+        by11 = 0;
+        by12 = 0;
+      }
+      if (t === exit2) {
         by2 = 0;
         by22 = 0;
         by12 = 0;

@@ -7,7 +7,7 @@
  */
 import { createTrajectory } from '../dynamics/trajectory';
 import type { LeastSquaresProblem } from '../numeric/least-squares-problem';
-import type { FirmObservations, Observations } from './observations';
+import { type FirmObservations, gridOf, type Observations } from './observations';
 import { INDEX, PARAMETERS } from './parameters';
 import type { Priors } from './priors';
 
@@ -34,7 +34,7 @@ export function createPenalisedProblem(
   part: CompetitionPart,
 ): PenalisedProblem {
   const { months, firms } = observations;
-  const trajectory = createTrajectory({ months, entry1: firms[0].entry, entry2: firms[1].entry });
+  const trajectory = createTrajectory(gridOf(observations));
   const sensitivities = new Float64Array(2 * months * COUNT);
   const errors = [
     new Float64Array(firms[0].months.length),

@@ -215,6 +215,7 @@ export function createStatePosterior(
     out[offset + 8] = Math.exp(filter.mean[0] + deviation);
     out[offset + 9] = Math.exp(filter.mean[1] + slope * deviation + rest);
     for (let i = 0; i < 2; i++) {
+      if (observations.firms[i].exit !== undefined) out[offset + 8 + i] = 0;
       out[offset + 10 + i] = Math.sqrt(input.observation[i]);
       out[offset + 12 + i] = Math.sqrt(input.process[i]);
     }

@@ -1,6 +1,7 @@
 /**
  * Where each draw ends, and when it gets there: follows every draw for WINDOW_MONTHS from the last month of the series.
  *
+ * A firm that has left stays away and the other one ends at its K. Else:
  * Coexistence: x* = (1-alpha)/(1-alpha beta), y* = (1-beta)/(1-alpha beta). Exclusion: (K1, 0) or (0, K2). Head start: the winner is
  * firm 1 once x >= x*, y <= y* and firm 2 once x <= x*, y >= y*, for those quarters around the saddle are never left (the system
  * is monotone in the competitive order; Murray, Mathematical Biology I, 3.5).
@@ -76,6 +77,11 @@ function placeEnd(
   const n1 = (table.k1[i] * (1 - alpha)) / (1 - alpha * beta);
   const n2 = (table.k2[i] * (1 - beta)) / (1 - alpha * beta);
   const outcome = outcomeOf(alpha, beta);
+  if (isGone(table, i)) {
+    ends.n1End[i] = table.n1[i] > 0 ? table.k1[i] : 0;
+    ends.n2End[i] = table.n2[i] > 0 ? table.k2[i] : 0;
+    return;
+  }
   if (outcome === 'coexistence') {
     ends.n1End[i] = n1;
     ends.n2End[i] = n2;
@@ -139,7 +145,14 @@ function findNear(trajectory: Trajectory, n1: number, n2: number): number {
   return month;
 }
 
+/** A firm has left: the other one grows alone, whatever the strengths are. */
+function isGone({ n1, n2 }: DrawTable, i: number): boolean {
+  return !(n1[i] > 0 && n2[i] > 0);
+}
+
 function halfLifeAt(table: DrawTable, i: number, ends: DrawEnds): number {
+  // alone: a logistic returns to K at rate r
+  if (isGone(table, i)) return Math.LN2 / (table.n1[i] > 0 ? table.r1[i] : table.r2[i]);
   const system = {
     r1: table.r1[i],
     r2: table.r2[i],

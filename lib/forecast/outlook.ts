@@ -51,7 +51,8 @@ export function computeOutlook({ fit, seed, horizonMonths, lastMonth }: OutlookI
     firstMonth: lastMonth + 1,
     odds,
     priorOdds: computePriorOdds(fit.priors),
-    decided: decideOutcome(odds),
+    // the odds of a contest decide nothing once a firm has left
+    decided: findGone(fit) === null ? decideOutcome(odds) : null,
     headStartFocalAhead:
       ends.headStartCount < MIN_DRAWS_FOR_INTERVAL ? null : ends.headStartFocalWins / ends.headStartCount,
     observations: computeSeriesBands(observations),
@@ -68,8 +69,15 @@ export function computeOutlook({ fit, seed, horizonMonths, lastMonth }: OutlookI
   return { outlook, cloud: buildCloud(table, ends) };
 }
 
-/** The firm with fewer users in the last month in which it was observed. */
+function findGone({ observations: { firms } }: Fit): 'focal' | 'rival' | null {
+  const gone = firms.findIndex(({ exit }) => exit !== undefined);
+  return gone < 0 ? null : gone === 0 ? 'focal' : 'rival';
+}
+
+/** The firm that has left, or the one with fewer users in the last month in which it was observed. */
 function whoIsBehind(fit: Fit): 'focal' | 'rival' {
+  const gone = findGone(fit);
+  if (gone) return gone;
   const [focal, rival] = fit.observations.firms.map(({ logCounts }) => logCounts[logCounts.length - 1]);
   return focal < rival ? 'focal' : 'rival';
 }

@@ -164,6 +164,8 @@ export const structureSchema = z.object({
   breakChance: probability,
   /** Month in which they did, given that they did; null when too few draws have a break. */
   breakMonth: intervalSchema.nullable(),
+  /** A firm that has left: from this month on it has no users. Absent: both are there. */
+  exit: z.object({ firm: z.union([z.literal(1), z.literal(2)]), month: z.number().int() }).optional(),
   /** Months that somebody marked, with the chance that parameters jumped in each; absent: none was marked. */
   markedBreaks: z.array(z.object({ month: z.number().int(), chance: probability })).optional(),
   /** Single counts that the fit could not believe and nearly ignored. */

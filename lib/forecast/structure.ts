@@ -14,11 +14,18 @@ export function describeStructure({ choice, draws, observations }: Fit, firstMon
     seasonHarmonics: choice.harmonics,
     breakChance: choice.breakChance,
     breakMonth: findBreakMonth(draws, choice.markedBreaks, gridStart),
+    ...describeExit(observations, gridStart),
     ...(choice.markedBreaks.length > 0 && {
       markedBreaks: choice.markedBreaks.map(({ month, chance }) => ({ month: gridStart + month, chance })),
     }),
     flaggedCounts: choice.flags.map(({ firm, month }) => ({ firm, month: gridStart + month })),
   };
+}
+
+/** At most one firm can be gone. */
+function describeExit({ firms }: Fit['observations'], gridStart: Month): Pick<Structure, 'exit'> {
+  const gone = firms.findIndex(({ exit }) => exit !== undefined);
+  return gone < 0 ? {} : { exit: { firm: gone === 0 ? 1 : 2, month: gridStart + firms[gone].exit! } };
 }
 
 /** Of breaks in months that nobody marked. */

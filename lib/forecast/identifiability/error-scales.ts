@@ -29,8 +29,12 @@ export function readPlainSeries(series: MonthlySeries, observations: Observation
     observations.skippedMonths + Math.max(observations.firms[0].entry, observations.firms[1].entry);
   const usable = (count: number | null) =>
     count !== null && count > 0 && count < Number.POSITIVE_INFINITY ? count : null;
-  const first = series.focal.slice(from).map(usable);
-  const second = series.rival.slice(from).map(usable);
+  // once a firm has left, the other one tells nothing more of the contest
+  const to =
+    observations.skippedMonths +
+    Math.min(...observations.firms.map(({ exit }) => exit ?? observations.months));
+  const first = series.focal.slice(from, to).map(usable);
+  const second = series.rival.slice(from, to).map(usable);
   const counts = [...first, ...second].filter((count) => count !== null).length;
   if (
     counts < PLAIN_PARAMETER_COUNT + SPARE_COUNTS ||

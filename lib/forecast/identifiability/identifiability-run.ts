@@ -3,7 +3,7 @@
  * months until the data decide, sensitivity.
  */
 import { SMALLEST_ERROR } from '../../estimate/ar1-posterior';
-import { type Observations, readObservations } from '../../estimate/observations';
+import { gridOf, type Observations, readObservations } from '../../estimate/observations';
 import { PARAMETERS } from '../../estimate/parameters';
 import type { PlainFit } from '../../estimate/plain-fit';
 import { createPlainProblem, type PlainSeries } from '../../estimate/plain-problem';
@@ -130,12 +130,12 @@ function pointOf({ report: { point } }: AnalysisInput): number[] {
 
 function collinearityOf(
   input: AnalysisInput,
-  { months, firms }: Observations,
+  observations: Observations,
 ): IdentifiabilityReport['collinearity'] {
   const { errors } = input.report;
   return computeCollinearity(
     Float64Array.from(pointOf(input), Math.log),
-    { months, entry1: firms[0].entry, entry2: firms[1].entry, observed: [firms[0].months, firms[1].months] },
+    { ...gridOf(observations), observed: [observations.firms[0].months, observations.firms[1].months] },
     [errors.focal.q50, errors.rival.q50],
   );
 }

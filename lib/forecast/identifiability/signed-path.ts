@@ -51,8 +51,10 @@ export function createSignedProblem(
     for (let t = 0; t < months; t++) {
       for (let i = 0; i < 2; i++) if (firms[i].entry === t) state[i] = Math.exp(phi[6 + i] - phi[2 + i]);
       for (let i = 0; i < 2; i++) {
+        const exit = firms[i].exit ?? months;
+        if (t === exit) state[i] = 0;
         logLevels[i][t] = Math.log(state[i]) + phi[2 + i];
-        if (t >= firms[i].entry && !Number.isFinite(logLevels[i][t])) return false;
+        if (t >= firms[i].entry && t < exit && !Number.isFinite(logLevels[i][t])) return false;
       }
       if (t < months - 1 && !flow.advance(0)) return false;
     }

@@ -93,6 +93,19 @@ describe('the path', () => {
     expect(first[20]).toBeLessThan(1000);
   });
 
+  it('lets a firm leave, and the other one grow alone from then on', () => {
+    const trajectory = createTrajectory({ months: 30, entry1: 0, entry2: 0, exit2: 12 });
+    expect(trajectory.run(M1)).toBe(true);
+    expect(Array.from(trajectory.logLevel2.slice(12))).toEqual(new Array(18).fill(Number.NEGATIVE_INFINITY));
+    const alone = M1.slice();
+    [alone[6], alone[7]] = [trajectory.logLevel1[12], Number.NEGATIVE_INFINITY];
+    // a firm that starts without users stays without
+    const rest = createTrajectory({ months: 18, entry1: 0, entry2: 0 });
+    expect(rest.run(alone)).toBe(true);
+    expect(Math.abs(rest.logLevel1[17] - trajectory.logLevel1[29])).toBeLessThan(1e-12);
+    expect(rest.logLevel2[17]).toBe(Number.NEGATIVE_INFINITY);
+  });
+
   it('is refused, not wrong, for parameters that are not finite or far too fast', () => {
     const trajectory = createTrajectory({ months: 24, entry1: 0, entry2: 0 });
     expect(trajectory.run(M1.map((value, j) => (j === 0 ? Number.NaN : value)))).toBe(false);
@@ -112,10 +125,10 @@ describe('the path', () => {
 });
 
 describe('the derivatives', () => {
-  it('forward: agree with central differences, late entry included', () => {
-    for (const entry2 of [0, 7]) {
+  it('forward: agree with central differences, late entry and exit included', () => {
+    for (const life2 of [{ entry2: 0 }, { entry2: 7 }, { entry2: 0, exit2: 25 }]) {
       const months = 40;
-      const trajectory = createTrajectory({ months, entry1: 0, entry2 });
+      const trajectory = createTrajectory({ months, entry1: 0, ...life2 });
       const out = new Float64Array(2 * months * PARAMETER_COUNT);
       // r x step stays clear of the next number of steps, where the discrete map changes
       const theta = logs(0.17, 0.13, 1000, 800, 0.56, 1.125, 50, 20);
@@ -130,7 +143,8 @@ describe('the derivatives', () => {
         const [above, below] = [shift(1), shift(-1)];
         for (const t of [7, 20, 39]) {
           for (const firm of [0, 1]) {
-            const slope = (above[firm][t] - below[firm][t]) / 2e-6;
+            const isGone = firm === 1 && t >= (life2.exit2 ?? months);
+            const slope = isGone ? 0 : (above[firm][t] - below[firm][t]) / 2e-6;
             expect(Math.abs(out[(firm * months + t) * PARAMETER_COUNT + j] - slope)).toBeLessThan(1e-7);
           }
         }
@@ -138,9 +152,9 @@ describe('the derivatives', () => {
     }
   });
 
-  it('reverse: equal the forward ones', () => {
+  it.each([{ entry1: 4 }, { entry1: 0, exit1: 20 }])('reverse: equal the forward ones, %o', (life1) => {
     const months = 30;
-    const trajectory = createTrajectory({ months, entry1: 4, entry2: 0 });
+    const trajectory = createTrajectory({ months, entry2: 0, ...life1 });
     const out = new Float64Array(2 * months * PARAMETER_COUNT);
     const theta = randomTheta(5);
     trajectory.fillSensitivities(theta, out);

@@ -1,9 +1,11 @@
 import { describe, expect, it } from 'vitest';
+import { createTrajectory } from '@/lib/dynamics/trajectory';
 import { DEFAULT_FIT_OPTIONS, ESS_LIMIT, R_HAT_LIMIT } from '@/lib/estimate/defaults';
 import { readColumn } from '@/lib/estimate/draws';
 import { createFitRun, type Fit } from '@/lib/estimate/fit-run';
 import type { FitInput, FitProgress } from '@/lib/estimate/types';
 import { quantiles } from '@/lib/numeric/quantile';
+import { createStream } from '@/lib/numeric/random';
 import type { MonthlySeries } from '@/lib/series/types';
 import {
   COEXISTING,
@@ -12,6 +14,7 @@ import {
   simulateSeries,
   simulateWandering,
   type Truth,
+  toTheta,
 } from './simulated-market';
 
 function runToEnd(series: MonthlySeries, options: Partial<FitInput['options']> = {}) {
@@ -186,6 +189,42 @@ describe('a marked month', () => {
     const series = simulateSeries(RIVAL_LOSES, 24, 0.03, 4);
     const outside = { changeMonths: [FIRST_MONTH, FIRST_MONTH - 5, FIRST_MONTH + 24] };
     expect(fitOf(series, outside).draws.values).toEqual(fitOf(series).draws.values);
+  });
+});
+
+describe('a firm that has left', () => {
+  const path = createTrajectory({ months: 40, entry1: 0, entry2: 0, exit2: 28 });
+  path.run(toTheta(COEXISTING));
+  const stream = createStream(3, 0);
+  const observed = (logLevel: Float64Array) =>
+    Array.from(logLevel, (value) => Math.round(Math.exp(value + 0.02 * stream.normal())));
+  const series: MonthlySeries = {
+    firstMonth: FIRST_MONTH,
+    focal: observed(path.logLevel1),
+    rival: observed(path.logLevel2),
+  };
+
+  it.each(['process-noise', 'ar1'] as const)(
+    'is no error of the fit, %s: the truth is found',
+    (errorModel) => {
+      const fit = fitOf(series, { errorModel });
+      expect(fit.observations.firms.map(({ exit }) => exit)).toEqual([undefined, 28]);
+      expect(fit.status).toBe('converged');
+      expect(Math.max(...missesOf(fit, COEXISTING))).toBeLessThan(1.2);
+      expect(new Set(readColumn(fit.draws, 'n2'))).toEqual(new Set([0]));
+      // alone the firm shows its saturation level well
+      const [low, high] = quantiles(readColumn(fit.draws, 'k1'), [0.05, 0.95]);
+      expect(Math.log(high / low)).toBeLessThan(0.3);
+    },
+  );
+
+  it('teaches more of the other one than if its zeros were gaps', () => {
+    const widthOf = (rival: (number | null)[]) => {
+      const [low, high] = quantiles(readColumn(fitOf({ ...series, rival }).draws, 'k1'), [0.05, 0.95]);
+      return Math.log(high / low);
+    };
+    const gaps = series.rival.map((count) => count || null);
+    expect(widthOf([...series.rival])).toBeLessThan(widthOf(gaps));
   });
 });
 

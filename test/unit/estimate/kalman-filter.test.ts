@@ -121,6 +121,26 @@ describe('the reverse sweep', () => {
     });
   });
 
+  it('is exact also once a firm has left', () => {
+    const rival = series.rival.map((count, t) => (t < 26 ? count : 0));
+    const leaving = createKalmanFilter(observe({ ...series, rival }));
+    const gradient = emptyGradient();
+    const input = inputOf(1e-9, change);
+    leaving.run(input);
+    leaving.sweepBack(input, gradient);
+    for (const part of ['theta', 'after'] as const) {
+      gradient[part].forEach((value, j) => {
+        const at = (step: number) => {
+          const moved = inputOf(1e-9, { season, after: after.slice(), breakMonth: 17 });
+          moved[part]![j] += step;
+          return leaving.run(moved);
+        };
+        const expected = (at(1e-5) - at(-1e-5)) / 2e-5;
+        expect(Math.abs(value - expected)).toBeLessThan(1e-4 * (1 + Math.abs(expected)));
+      });
+    }
+  });
+
   it('with process noise points the same way as the exact gradient', () => {
     const gradient = gradientAt(0.02);
     for (const part of ['theta', 'after', 'season', 'observation', 'process'] as const) {

@@ -35,6 +35,22 @@ describe('observations', () => {
     expect(reading.observations.firms[0].months.length).toBe(13);
   });
 
+  it('take a run of zeros to the end for an exit while the other firm goes on, and nothing less', () => {
+    const exitOf = (focal: (number | null)[], rival: (number | null)[]) => {
+      const reading = read(focal, rival);
+      if (!reading.ok) throw new Error(reading.status);
+      return reading.observations.firms.map(({ exit }) => exit);
+    };
+    const ending = (zeros: (number | null)[]) => [...growing(14), ...zeros];
+    expect(exitOf(ending([0, 0, 0]), growing(17))).toEqual([14, undefined]);
+    // months of the grid: it begins with the first count of either firm
+    expect(exitOf([0, 0, ...ending([0, 0, 0])], [0, 0, ...growing(17)])).toEqual([14, undefined]);
+    expect(exitOf(ending([0, 0]), growing(16))).toEqual([undefined, undefined]);
+    expect(exitOf(ending([0, null, 0]), growing(17))).toEqual([undefined, undefined]);
+    // both silent: the counts ended, not the firms
+    expect(exitOf(ending([0, 0, 0]), ending([0, 0, 0]))).toEqual([undefined, undefined]);
+  });
+
   it('are too short when fewer than twelve months are known of both firms', () => {
     const month = MIN_MONTHS_TO_FIT - 1;
     expect(read(growing(month), growing(month))).toEqual({ ok: false, status: 'too-short' });
