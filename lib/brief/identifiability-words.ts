@@ -3,9 +3,9 @@
  * parameters trade off, whether it is competition at all, and whether the kind of counting error turns the answer.
  */
 
-import type { Effect, IdentifiabilityReport, SignPattern, Verdict } from '../forecast/identifiability/report';
+import type { Effect, IdentifiabilityReport, SignPattern } from '../forecast/identifiability/report';
 import { decideOutcome } from '../forecast/odds';
-import { subjectOutcome } from './outcomes';
+import { buildErrorScales, writeErrorScales } from './error-scale-words';
 import { nameParameter } from './parameters';
 import { LIKELY_ABOVE } from './probability-words';
 import { capitalise, joinSentences, listWords, sentence, strong } from './text';
@@ -39,6 +39,7 @@ export function describeIdentifiability(words: Words, report: IdentifiabilityRep
   return {
     decision: report.decision && report.decision.futures > 0 ? buildDecision(words, report.decision) : null,
     profiles: report.profiles && buildProfiles(words, report.profiles),
+    errorScales: report.errorScales && buildErrorScales(words, report.errorScales),
     findings,
   };
 }
@@ -230,42 +231,4 @@ function describeCell(words: Words, onFocal: Effect, onRival: Effect): string {
   const onFocalFirst = onFocal === 'takes' || onRival === 'none';
   const [first, then] = [act(rival, focal, onFocal), act(focal, rival, onRival)];
   return onFocalFirst ? `${first} and ${then}` : `${then} and ${first}`;
-}
-
-function writeErrorScales(
-  words: Words,
-  { log, raw, disagree }: NonNullable<IdentifiabilityReport['errorScales']>,
-): Sentence {
-  if (disagree) {
-    return sentence(
-      strong('The kind of counting error turns the answer'),
-      `: errors that grow with the counts make the best single fit stand for ${spellVerdict(words, log)}, errors of the same size in every month for ${spellVerdict(words, raw)}. Which kind it is, the counts hardly tell.`,
-    );
-  }
-  if (log.outcome === raw.outcome) {
-    return log.outcome === 'notIdentified'
-      ? sentence(
-          `Without assumptions the counts do not settle any outcome, whichever way they err: ${whatIsUnseen(words, log)}.`,
-        )
-      : sentence(
-          `Whether the counts err in percent or by a fixed number, the best single fit stands for ${spellVerdict(words, log)}.`,
-        );
-  }
-  return sentence(
-    `If the counts err in percent, the best single fit stands for ${spellVerdict(words, log)}; if by a fixed number, for ${spellVerdict(words, raw)}.`,
-  );
-}
-
-function spellVerdict(words: Words, { outcome }: Verdict): string {
-  if (outcome === 'notIdentified') return 'no outcome at all (not identified)';
-  return outcome === 'boundary' ? 'the border between two outcomes' : subjectOutcome(words, outcome);
-}
-
-/** Clauses for a firm whose counts show no saturation level: those that only grow, and those that only fall. */
-function whatIsUnseen(words: Words, { k1, k2 }: Verdict): string {
-  const firms = [k1 === null ? words.focal : null, k2 === null ? words.rival : null].filter(
-    (name) => name !== null,
-  );
-  if (firms.length === 0) return 'no single fit settles';
-  return `they do not show how far ${listWords(firms)} would get alone`;
 }

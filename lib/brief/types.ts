@@ -406,6 +406,8 @@ export interface PriorLine {
 export interface IdentifiabilityPart {
   decision: DecisionFigure | null;
   profiles: ProfileTable | null;
+  /** Plain fits with either kind of errors; null: too few months have both firms. */
+  errorScales: ErrorScaleTable | null;
   /** Trade-offs, signs, error scales. */
   findings: UnknownLine[];
 }
@@ -429,6 +431,22 @@ export interface DecisionLine {
   sure: number;
   decidedText: string;
   sureText: string;
+}
+
+export interface ErrorScaleTable {
+  caption: Sentence;
+  /** Heads of the kind, the verdict and the values. */
+  columns: string[];
+  rows: ErrorScaleLine[];
+}
+
+export interface ErrorScaleLine {
+  id: 'log' | 'raw';
+  /** "in percent". */
+  kind: string;
+  verdict: string;
+  /** Room taken from the focal firm and from the rival, saturation levels; "not told" where the fit has none. */
+  values: string[];
 }
 
 export interface ProfileTable {

@@ -3,6 +3,7 @@ import { plainText } from '@/lib/brief/text';
 import type { IdentifiabilityPart } from '@/lib/brief/types';
 import { SentenceText } from '../text/sentence-text';
 import { DecisionFigure } from './decision-figure';
+import { ErrorScales } from './error-scales';
 import styles from './identifiability.module.css';
 import { ProfileIntervals } from './profile-intervals';
 
@@ -20,6 +21,7 @@ export function IdentifiabilityResult({ part }: { part: IdentifiabilityPart }) {
         </div>
       ) : null}
       {part.profiles ? <ProfileIntervals profiles={part.profiles} /> : null}
+      {part.errorScales ? <ErrorScales scales={part.errorScales} /> : null}
     </>
   );
 }

@@ -153,6 +153,25 @@ describe('error scales', () => {
   });
 });
 
+describe('the second opinion', () => {
+  it('has a row for either kind of error, with what it does not tell said so', () => {
+    const log = { outcome: 'coexistence' as const, alpha: 0.5, beta: 0.4, k1: 420_000, k2: 380_000 };
+    const raw = { outcome: 'notIdentified' as const, alpha: null, beta: 1.2, k1: 500_000, k2: null };
+    const table = describeFor(facts, { errorScales: { log, raw, disagree: false } }).errorScales!;
+    expect(table.rows.map(({ kind, verdict }) => [kind, verdict])).toEqual([
+      ['in percent', 'Both firms staying'],
+      ['of a fixed number', 'No outcome at all (not identified)'],
+    ]);
+    expect(table.rows[0].values.map(plain)).toEqual(['50 %', '40 %', '420,000', '380,000']);
+    expect(table.rows[1].values.map(plain)).toEqual(['not told', '120 %', '500,000', 'not told']);
+    expect(table.columns.length).toBe(2 + table.rows[0].values.length);
+  });
+
+  it('is left out where too few months have both firms', () => {
+    expect(describeFor(facts, { errorScales: null }).errorScales).toBeNull();
+  });
+});
+
 describe('what the share hangs on', () => {
   const figure = buildBrief({ ...facts, identifiability: report() }).change.sensitivity!;
 
