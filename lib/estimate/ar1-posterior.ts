@@ -140,6 +140,7 @@ export function createAr1Posterior(
     observations,
     priors,
     segments: [0],
+    errors: [SIZE, SIZE + 1, PERSISTENCE, PERSISTENCE + 1],
     columns: AR1_COLUMNS,
     breakMonth: null,
     get evaluations() {

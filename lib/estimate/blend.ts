@@ -41,6 +41,22 @@ export function blendRows(parts: readonly WeightedDraws[], count: number): Blend
   return rows;
 }
 
+/** Limits that every part must keep however small its share: below them neither measure means much. */
+const LOOSEST_R_HAT = 1.05;
+const SMALLEST_ESS = 100;
+
+/** What a part of a given weight must reach for the blend to reach `whole`, by the sums of `judgeBlend`. */
+export function limitsOfPart(
+  weight: number,
+  whole: { rHat: number; ess: number },
+): { rHatLimit: number; essLimit: number } {
+  const rHat = Math.sqrt(1 + (whole.rHat ** 2 - 1) / weight);
+  return {
+    rHatLimit: Math.min(rHat, Math.max(LOOSEST_R_HAT, whole.rHat)),
+    essLimit: Math.max(weight * whole.ess, SMALLEST_ESS),
+  };
+}
+
 /**
  * Convergence of the blend. A mean over it is sum w_k m_k: the variance of its estimate is sum w_k^2 / ESS_k of a draw's, and what the
  * chains disagree about counts with w_k^2 likewise.

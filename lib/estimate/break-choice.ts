@@ -7,7 +7,7 @@
  * averaging, Hoeting, Madigan, Raftery & Volinsky 1999). Before the data: MARKED_PRIOR that the jump was at a marked month, each alike; of
  * the rest BREAK_PRIOR that there was one in another month, each alike.
  */
-import { findLocalMode, type LocalMode } from './local-mode';
+import { findLocalMode, type LocalMode, type Thoroughness } from './local-mode';
 import type { Posterior } from './posterior';
 import { SEGMENT_MONTHS, type StatePosterior } from './state-posterior';
 
@@ -28,8 +28,9 @@ const BREAK_PRIOR = 0.2;
 /** Months tried for a break at most, evenly spread; every other month in a series of up to five years. */
 const MAX_BREAK_TRIES = 30;
 const BREAK_STEP = 2;
-/** Rounds of a climb, and tries of one slice. */
-const TRY_ROUNDS = 2;
+/** First tries, those of a break that is not out of the question, and tries of one slice. */
+const FIRST_TRIES: Thoroughness = { rounds: 2, isRough: true };
+const CLOSER_TRIES: Thoroughness = { rounds: 2, isRough: false };
 const TRIES_PER_SLICE = 6;
 /** A chance of a break below this after the first tries is not looked at more closely: it would have to grow sixfold to count. */
 const HOPELESS = 0.005;
@@ -37,7 +38,7 @@ const HOPELESS = 0.005;
 const VALLEY = 2;
 
 /** Components with a smaller share are left out: their draws would be too few to matter. */
-const MIN_WEIGHT = 0.03;
+const MIN_WEIGHT = 0.05;
 
 /** Prior chance that parameters jumped at one of the marked months: somebody saw a reason, which is as often right as wrong. */
 const MARKED_PRIOR = 0.5;
@@ -90,7 +91,7 @@ interface BreakTries {
   possible: number;
 }
 
-/** Every other month of those to try first; the ones between them only where a break is not out of the question. */
+/** Every fourth month first, in a rough way; every other one only where a break is not out of the question. */
 function* tryBreaks(
   posterior: StatePosterior,
   unbroken: LocalMode,
@@ -100,20 +101,19 @@ function* tryBreaks(
   const possible = months - 2 * SEGMENT_MONTHS + 1;
   const fine = Math.max(BREAK_STEP, Math.ceil(possible / MAX_BREAK_TRIES));
   const start = withSecondSegment(unbroken.q, posterior.dimension);
-  const modes: LocalMode[] = [];
-  function* tryFrom(first: number, step: number): Generator<undefined> {
-    for (let month = first; month <= months - SEGMENT_MONTHS; month += step) {
+  function* tryEvery(step: number, thoroughness: Thoroughness): Generator<undefined, BreakTries> {
+    const modes: LocalMode[] = [];
+    for (let month = SEGMENT_MONTHS; month <= months - SEGMENT_MONTHS; month += step) {
       posterior.breakMonth = month;
-      const mode = findLocalMode(posterior, start, information, TRY_ROUNDS);
+      const mode = findLocalMode(posterior, start, information, thoroughness);
       if (mode) modes.push(mode);
       if (modes.length % TRIES_PER_SLICE === 0) yield;
     }
+    return { modes, step, possible };
   }
-  yield* tryFrom(SEGMENT_MONTHS, 2 * fine);
-  const coarse = { modes, step: 2 * fine, possible };
+  const coarse = yield* tryEvery(2 * fine, FIRST_TRIES);
   if (chanceOfBreak(unbroken, coarse) < HOPELESS) return coarse;
-  yield* tryFrom(SEGMENT_MONTHS + fine, 2 * fine);
-  return { modes: modes.sort((a, b) => a.breakMonth! - b.breakMonth!), step: fine, possible };
+  return yield* tryEvery(fine, CLOSER_TRIES);
 }
 
 /** Without the marked months: whether the others are worth a closer look. */

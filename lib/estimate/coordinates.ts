@@ -3,17 +3,22 @@
  *
  * Growth per user is linear in the crowding form, r_i - b_ii N_i - b_ij N_j, so monthly counts pin down linear combinations of
  * (r, b_ii, b_ij): in those the likelihood is nearly normal, while in logarithms the same posterior is a set of bent, sharp ridges.
- * Near b = 0, where the logarithm has a prior and the data say little, the logarithm is the better scale. Hence, with the six log
- * parameters of each segment replaced by b12, b21, b11, b22, r1, r2 (in that order, in the same places):
+ * Near b = 0, where the logarithm has a prior and the data say little, the logarithm is the better scale. And all of it is as wide as the
+ * errors are large. Hence, with the six log parameters of each segment replaced by b12, b21, b11, b22, r1, r2 (in that order, in the same
+ * places) and the coordinates of the error model taken first:
  *
  *   v_j = value_j / unit_j = softplus(s_j)   for those six (linear when large, exponential when small)
  *   v_j = q_j = s_j                          for the rest
- *   s_j = u_j + sum_{k<j} slope_jk v_k       a triangular map (Knothe-Rosenblatt) that takes the linear correlations out
+ *   s_j = middle_j + e^(lean_j . w) u_j + sum_{k before j} slope_jk v_k       a triangular map (Knothe-Rosenblatt)
+ *   w_e = 2 tanh(z_e / 2),  z_e the standardised error coordinate e; lean = 0 for the error coordinates themselves
  *
- * The density gains the log Jacobian sum_j ln |d ln v_j / d s_j| of the six; the triangle and the map from logarithms of
- * (r, K, alpha, beta) to those of (b, r) have determinant +-1.
+ * The density gains the log Jacobian sum_j ln |d ln v_j / d s_j| of the six and sum_j lean_j . w; the map from logarithms of
+ * (r, K, alpha, beta) to those of (b, r) has determinant +-1.
  */
-import { choleskyOrNull } from '../numeric/cholesky';
+import { choleskyOrNull, sampleCovariance } from '../numeric/cholesky';
+import { quantilesInPlace } from '../numeric/quantile';
+import { fitLogScale } from './log-scale';
+import type { Posterior } from './posterior';
 
 /** Coordinates with a softplus per segment. */
 const BENT = 6;
@@ -26,34 +31,162 @@ export interface WorkingCoordinates {
   fromParameters(q: Float64Array, u: Float64Array): void;
 }
 
+/** What coordinates are made for. */
+export type Target = Pick<Posterior, 'logDensity' | 'segments' | 'errors'>;
+
 /** Where the working coordinates are made to fit: a point, and a rough covariance there (row-major, in q). */
 export interface Anchor {
   q: Float64Array;
   covariance: Float64Array;
-  /** Where six log parameters begin in q. */
-  segments: readonly number[];
 }
 
-/**
- * Coordinates fitted to an anchor, and the spread of each there.
- * @param density log density of q with its gradient
- */
+/** Coordinates fitted to an anchor, and the spread of each there. */
 export function createWorkingCoordinates(
-  density: (q: Float64Array, gradient: Float64Array | null) => number,
+  target: Target,
   anchor: Anchor,
 ): { coordinates: WorkingCoordinates; spread: Float64Array } {
-  const { q, segments } = anchor;
-  const logUnits = chooseLogUnits(anchor);
-  const covariance = toValueCovariance(anchor, logUnits);
-  const lower = choleskyOrNull(covariance, q.length);
-  return {
-    coordinates: bendCoordinates(q.length, density, segments, logUnits, regressionSlopes(lower, q.length)),
-    spread: Float64Array.from(q, (_, j) => (lower ? lower[j * q.length + j] : FALLBACK_SPREAD)),
-  };
+  const { segments } = target;
+  const n = anchor.q.length;
+  const order = orderCoordinates(target, n);
+  const logUnits = chooseLogUnits(anchor, segments);
+  const covariance = reorder(toValueCovariance(anchor, segments, logUnits), order);
+  const lower = choleskyOrNull(covariance, n);
+  const spread = new Float64Array(n).fill(FALLBACK_SPREAD);
+  if (lower) for (let p = 0; p < n; p++) spread[order[p]] = lower[p * (n + 1)];
+  const slopes = regressionSlopes(lower, n);
+  return { coordinates: bendCoordinates(target, { order, logUnits, slopes, width: null }), spread };
 }
 
 /** Spread of a coordinate when the covariance is of no use. */
 const FALLBACK_SPREAD = 0.1;
+
+/** Share of the sample beyond which, on each side, a value counts as the last one within: keeps a long tail from ruling the slopes. */
+const TAIL = 0.02;
+/** Middle part of a sample that stands for one sd on either side. */
+const SPREAD_LOW = 0.16;
+const SPREAD_HIGH = 0.84;
+/** A sample that does not vary still needs a unit; and a covariance of it a little room. */
+const SMALLEST_RELATIVE_UNIT = 1e-6;
+const ROOM = 1e-6;
+
+/** Coordinates fitted to a sample of q: unlike the curvature at a mode it knows long and lopsided tails. */
+export function fitCoordinates(target: Target, sample: readonly Float64Array[]): WorkingCoordinates {
+  const n = sample[0].length;
+  const order = orderCoordinates(target, n);
+  const { values, logUnits } = measureValues(target, sample);
+  const trimmed = values.map((row) => row.slice());
+  const column = new Float64Array(sample.length);
+  for (let j = 0; j < n; j++) {
+    const [low, high] = quantilesInPlace(readColumn(values, j, column), [TAIL, 1 - TAIL]);
+    for (const row of trimmed) row[j] = Math.min(Math.max(row[j], low), high);
+  }
+  const covariance = reorder(sampleCovariance(trimmed, n), order);
+  for (let p = 0; p < n; p++) covariance[p * (n + 1)] *= 1 + ROOM;
+  const slopes = regressionSlopes(choleskyOrNull(covariance, n), n);
+  const plain = { order, logUnits, slopes, width: null };
+  return bendCoordinates(target, { ...plain, width: fitWidth(target, plain, sample, values) });
+}
+
+function markBent(segments: readonly number[], n: number): Uint8Array {
+  const isBent = new Uint8Array(n);
+  for (const at of segments) isBent.fill(1, at, at + BENT);
+  return isBent;
+}
+
+/** v of every point of a sample, and units that suit it. */
+function measureValues(
+  { segments }: Target,
+  sample: readonly Float64Array[],
+): { values: Float64Array[]; logUnits: Float64Array } {
+  const values = sample.map((q) => {
+    const row = q.slice();
+    for (const at of segments) fillLogValues(q, at, row);
+    return row;
+  });
+  const logUnits = new Float64Array(sample[0].length);
+  const column = new Float64Array(sample.length);
+  for (const at of segments) {
+    for (let j = at; j < at + BENT; j++) {
+      const [low, middle, high] = quantilesInPlace(readColumn(values, j, column), [
+        SPREAD_LOW,
+        0.5,
+        SPREAD_HIGH,
+      ]);
+      const relative = (Math.exp(high - middle) - Math.exp(low - middle)) / 2;
+      logUnits[j] = middle + Math.log(Math.min(Math.max(relative, SMALLEST_RELATIVE_UNIT), 1));
+      for (const row of values) row[j] = Math.exp(row[j] - logUnits[j]);
+    }
+  }
+  return { values, logUnits };
+}
+
+function readColumn(rows: readonly Float64Array[], j: number, out: Float64Array): Float64Array {
+  for (let i = 0; i < rows.length; i++) out[i] = rows[i][j];
+  return out;
+}
+
+/** How wide each coordinate is for given errors: the fields of the map above. */
+interface Width {
+  middles: Float64Array;
+  /** n x errors, row-major. */
+  leans: Float64Array;
+  centres: Float64Array;
+  spreads: Float64Array;
+}
+
+function fitWidth(
+  target: Target,
+  plain: CoordinateMap,
+  sample: readonly Float64Array[],
+  values: readonly Float64Array[],
+): Width {
+  const { errors } = target;
+  const n = sample[0].length;
+  const column = new Float64Array(sample.length);
+  const centres = new Float64Array(errors.length);
+  const spreads = new Float64Array(errors.length);
+  errors.forEach((j, e) => {
+    const [low, middle, high] = quantilesInPlace(readColumn(values, j, column), [
+      SPREAD_LOW,
+      0.5,
+      SPREAD_HIGH,
+    ]);
+    centres[e] = middle;
+    spreads[e] = Math.max((high - low) / 2, SMALLEST_RELATIVE_UNIT);
+  });
+  const weights = sample.map((q) =>
+    Float64Array.from(errors, (j, e) => 2 * Math.tanh((q[j] - centres[e]) / spreads[e] / 2)),
+  );
+  const unscaled = bendCoordinates(target, plain);
+  const points = sample.map((q) => {
+    const u = new Float64Array(n);
+    unscaled.fromParameters(q, u);
+    return u;
+  });
+  const middles = new Float64Array(n);
+  const leans = new Float64Array(n * errors.length);
+  for (let j = 0; j < n; j++) {
+    if (errors.includes(j)) continue;
+    const { middle, slopes } = fitLogScale(readColumn(points, j, column), weights);
+    middles[j] = middle;
+    leans.set(slopes, j * errors.length);
+  }
+  return { middles, leans, centres, spreads };
+}
+
+/** Error coordinates first, then the others as they come. */
+function orderCoordinates({ errors }: Target, n: number): Int32Array {
+  const others = Array.from({ length: n }, (_, j) => j).filter((j) => !errors.includes(j));
+  return Int32Array.from([...errors, ...others]);
+}
+
+/** Rows and columns of a square matrix in another order. */
+function reorder(matrix: Float64Array, order: Int32Array): Float64Array {
+  const n = order.length;
+  const out = new Float64Array(n * n);
+  for (let p = 0; p < n; p++) for (let k = 0; k < n; k++) out[p * n + k] = matrix[order[p] * n + order[k]];
+  return out;
+}
 
 /** Logarithms of b12, b21, b11, b22, r1, r2 of the segment at `at`: b_ii = r_i/K_i, b12 = alpha r1/K2, b21 = beta r2/K1. */
 function fillLogValues(q: Float64Array, at: number, out: Float64Array): void {
@@ -76,7 +209,11 @@ const LOG_VALUE_ROWS = [
 ] as const;
 
 /** Covariance of v at the anchor, first order: v_j = exp(log value_j - log unit_j). */
-function toValueCovariance({ q, covariance, segments }: Anchor, logUnits: Float64Array): Float64Array {
+function toValueCovariance(
+  { q, covariance }: Anchor,
+  segments: readonly number[],
+  logUnits: Float64Array,
+): Float64Array {
   const n = q.length;
   const logValues = new Float64Array(n);
   const jacobian = new Float64Array(n * n);
@@ -95,12 +232,12 @@ function toValueCovariance({ q, covariance, segments }: Anchor, logUnits: Float6
  * Log units of the bent values: their sd under the anchor's covariance, so that softplus is linear where the data decide; never
  * more than the value itself, so that it is logarithmic where the prior does. 0 elsewhere.
  */
-function chooseLogUnits(anchor: Anchor): Float64Array {
-  const { q, segments } = anchor;
+function chooseLogUnits(anchor: Anchor, segments: readonly number[]): Float64Array {
+  const { q } = anchor;
   const logUnits = new Float64Array(q.length);
   for (const at of segments) fillLogValues(q, at, logUnits);
   // in units of the value itself the covariance of v is that of ln v
-  const relative = toValueCovariance(anchor, logUnits);
+  const relative = toValueCovariance(anchor, segments, logUnits);
   for (const at of segments) {
     for (let j = at; j < at + BENT; j++) {
       const sd = Math.sqrt(relative[j * (q.length + 1)]);
@@ -110,44 +247,77 @@ function chooseLogUnits(anchor: Anchor): Float64Array {
   return logUnits;
 }
 
-function bendCoordinates(
-  n: number,
-  density: (q: Float64Array, gradient: Float64Array | null) => number,
-  segments: readonly number[],
-  logUnits: Float64Array,
-  slopes: Float64Array,
-): WorkingCoordinates {
-  const isBent = new Uint8Array(n);
-  for (const at of segments) isBent.fill(1, at, at + BENT);
+/** The triangular map; slopes in the order of `order`, n x n row-major. */
+interface CoordinateMap {
+  order: Int32Array;
+  logUnits: Float64Array;
+  slopes: Float64Array;
+  /** null: as wide everywhere. */
+  width: Width | null;
+}
+
+function bendCoordinates(target: Target, map: CoordinateMap): WorkingCoordinates {
+  const { logDensity: density, segments, errors } = target;
+  const { order, logUnits, slopes, width } = map;
+  const n = order.length;
+  const isBent = markBent(segments, n);
   const q = new Float64Array(n);
   const gradientQ = new Float64Array(n);
+  /** v and what is pulled back to it, in the order of `order`. */
   const v = new Float64Array(n);
+  const pull = new Float64Array(n);
   const logValues = new Float64Array(n);
   const byLog = new Float64Array(n);
   const bend = new Float64Array(n);
   const bendSlope = new Float64Array(n);
-  const pull = new Float64Array(n);
+  const errorCount = errors.length;
+  const weights = new Float64Array(errorCount);
+  const byWeight = new Float64Array(errorCount);
+  const scales = new Float64Array(n).fill(1);
+  const shifts = new Float64Array(n);
 
-  /** Fills v, q and the bends; returns the log Jacobian. */
+  /** Sets the weight of error e from its value, and later the scale of every other coordinate. */
+  const setWeight = (e: number) => {
+    const { centres, spreads } = width!;
+    weights[e] = 2 * Math.tanh((v[e] - centres[e]) / spreads[e] / 2);
+  };
+  /** @returns lean . w of a coordinate */
+  const setScale = (j: number): number => {
+    const { leans } = width!;
+    let exponent = 0;
+    for (let e = 0; e < errorCount; e++) exponent += leans[j * errorCount + e] * weights[e];
+    scales[j] = Math.exp(exponent);
+    return exponent;
+  };
+
+  /** Fills v, q, bends and scales; returns the log Jacobian. */
   const unfold = (u: Float64Array): number => {
     let logJacobian = 0;
-    for (let j = 0; j < n; j++) {
+    let product = 1;
+    for (let p = 0; p < n; p++) {
+      const j = order[p];
       let s = u[j];
-      const row = j * n;
-      for (let k = 0; k < j; k++) s += slopes[row + k] * v[k];
+      if (width && p >= errorCount) {
+        logJacobian += setScale(j);
+        s = width.middles[j] + scales[j] * s;
+        shifts[j] = scales[j] * u[j];
+      }
+      const row = p * n;
+      for (let k = 0; k < p; k++) s += slopes[row + k] * v[k];
       if (isBent[j] === 0) {
-        v[j] = s;
+        v[p] = s;
         q[j] = s;
+        if (width && p < errorCount) setWeight(p);
         continue;
       }
       const tail = Math.exp(-Math.abs(s));
       const value = Math.max(s, 0) + Math.log1p(tail);
       const sigmoid = s > 0 ? 1 / (1 + tail) : tail / (1 + tail);
-      v[j] = value;
+      v[p] = value;
       bend[j] = sigmoid;
       bendSlope[j] = sigmoid / value;
       logValues[j] = logUnits[j] + Math.log(value);
-      logJacobian += Math.log(bendSlope[j]);
+      product *= bendSlope[j];
     }
     for (let i = 0; i < segments.length; i++) {
       const at = segments[i];
@@ -158,10 +328,10 @@ function bendCoordinates(
       q[at + 4] = logValues[at] - logValues[at + 4] + q[at + 3];
       q[at + 5] = logValues[at + 1] - logValues[at + 5] + q[at + 2];
     }
-    return logJacobian;
+    return logJacobian + Math.log(product);
   };
 
-  /** Chain rule backwards through the logarithms, the bends and the triangle. */
+  /** Chain rule backwards through the logarithms, the bends, the widths and the triangle. */
   const foldGradient = (gradient: Float64Array): void => {
     for (let i = 0; i < segments.length; i++) {
       const at = segments[i];
@@ -179,14 +349,23 @@ function bendCoordinates(
       byLog[at + 5] = r2 + k2 + alpha - beta;
     }
     pull.fill(0);
-    for (let j = n - 1; j >= 0; j--) {
+    byWeight.fill(0);
+    for (let p = n - 1; p >= 0; p--) {
+      const j = order[p];
+      if (width && p < errorCount)
+        pull[p] += (byWeight[p] * (1 - 0.25 * weights[p] * weights[p])) / width.spreads[p];
       const slope =
         isBent[j] === 0
-          ? pull[j] + gradientQ[j]
-          : pull[j] * bend[j] + (byLog[j] - 1) * bendSlope[j] + 1 - bend[j];
-      gradient[j] = slope;
-      const row = j * n;
-      for (let k = 0; k < j; k++) pull[k] += slope * slopes[row + k];
+          ? pull[p] + gradientQ[j]
+          : pull[p] * bend[j] + (byLog[j] - 1) * bendSlope[j] + 1 - bend[j];
+      gradient[j] = slope * scales[j];
+      if (width && p >= errorCount) {
+        const byExponent = slope * shifts[j] + 1;
+        const at = j * errorCount;
+        for (let e = 0; e < errorCount; e++) byWeight[e] += width.leans[at + e] * byExponent;
+      }
+      const row = p * n;
+      for (let k = 0; k < p; k++) pull[k] += slope * slopes[row + k];
     }
   };
 
@@ -208,10 +387,16 @@ function bendCoordinates(
     },
     fromParameters(from, u) {
       for (const at of segments) fillLogValues(from, at, logValues);
-      for (let j = 0; j < n; j++) {
-        v[j] = isBent[j] === 1 ? Math.exp(logValues[j] - logUnits[j]) : from[j];
-        let s = isBent[j] === 1 ? inverseSoftplus(v[j]) : v[j];
-        for (let k = 0; k < j; k++) s -= slopes[j * n + k] * v[k];
+      for (let p = 0; p < n; p++) {
+        const j = order[p];
+        v[p] = isBent[j] === 1 ? Math.exp(logValues[j] - logUnits[j]) : from[j];
+        let s = isBent[j] === 1 ? inverseSoftplus(v[p]) : v[p];
+        for (let k = 0; k < p; k++) s -= slopes[p * n + k] * v[k];
+        if (width && p < errorCount) setWeight(p);
+        if (width && p >= errorCount) {
+          setScale(j);
+          s = (s - width.middles[j]) / scales[j];
+        }
         u[j] = s;
       }
     },

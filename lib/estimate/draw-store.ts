@@ -16,6 +16,8 @@ export interface DrawStore {
   judge(): { rHat: number; ess: number };
   /** Row i of the table of `posterior.columns`; chains interleaved: draw i of every chain, then draw i + 1. */
   row(i: number): Float64Array;
+  /** q of draw i, in the same order. */
+  point(i: number): Float64Array;
   /** ln levels of one draw of the path of draw i; false where it does not exist. */
   fillPath(i: number, stream: RandomStream, out: Float64Array): boolean;
 }
@@ -71,9 +73,10 @@ export function createDrawStore(posterior: Posterior, chains: number, horizonMon
       };
     },
     row: (i) => table.subarray(i * width, (i + 1) * width),
+    point: (i) => points.slice(i * dimension, (i + 1) * dimension),
     fillPath(i, stream, out) {
       posterior.breakMonth = breakMonths[i];
-      return posterior.fillPath(points.slice(i * dimension, (i + 1) * dimension), stream, out);
+      return posterior.fillPath(this.point(i), stream, out);
     },
   };
 }

@@ -5,7 +5,7 @@
 import { createStream } from '../numeric/random';
 import type { Month } from '../series/types';
 import { createAr1Posterior, SMALLEST_ERROR } from './ar1-posterior';
-import { blendRows, judgeBlend, samplePaths, type WeightedDraws } from './blend';
+import { blendRows, judgeBlend, limitsOfPart, samplePaths, type WeightedDraws } from './blend';
 import { ESS_LIMIT, HYPERCUBE_STARTS, R_HAT_LIMIT } from './defaults';
 import { chooseModels, climbFrom, type ModelChoice } from './model-choice';
 import { type Observations, readObservations } from './observations';
@@ -59,13 +59,9 @@ const STARTS_PER_SLICE = 3;
 /** Ends polished at most. */
 const MAX_POINTS = 4;
 /** Rows of the blended draw set. */
-export const BLENDED_DRAWS = 4000;
+export const BLENDED_DRAWS = 2000;
 /** Sampled paths: months of history get their intervals from them. */
-const PATHS = 500;
-/** A component with a smaller share needs less accuracy of its own, for its errors count with the square of the share. */
-const MINOR_SHARE = 0.25;
-const MINOR_R_HAT = 1.05;
-const MINOR_ESS = 100;
+const PATHS = 300;
 
 export function createFitRun(input: FitInput): FitRun {
   const steps = runFit(input);
@@ -119,13 +115,11 @@ export function* runFit({ series, options }: FitInput): Generator<FitProgress, F
 
   const parts: WeightedDraws[] = [];
   for (const [k, component] of choice.value.components.entries()) {
-    const isMinor = component.weight < MINOR_SHARE;
     const sampling = runSampler(component, {
       seed: options.seed,
       firstStream: FIRST_CHAIN_STREAM + k * CHAINS,
       horizonMonths: options.horizonMonths,
-      rHatLimit: isMinor ? MINOR_R_HAT : R_HAT_LIMIT,
-      essLimit: isMinor ? MINOR_ESS : ESS_LIMIT,
+      ...limitsOfPart(component.weight, { rHat: R_HAT_LIMIT, ess: ESS_LIMIT }),
     });
     const before = countDraws(parts);
     let step = sampling.next();

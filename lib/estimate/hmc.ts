@@ -16,8 +16,8 @@ export interface HmcChain {
   move(metric: Float64Array, stepSize: number, steps: number): number;
   /** Puts the chain somewhere else. @returns whether the density is finite there */
   reset(position: Float64Array): boolean;
-  /** Takes density and gradient anew where the chain stands, after the density has changed. */
-  refresh(): void;
+  /** Puts the chain at a point whose log density is known; its gradient is taken when it is needed. */
+  take(position: Float64Array, logDensity: number): void;
 }
 
 export function createHmcChain(dimension: number, density: LogDensity, stream: RandomStream): HmcChain {
@@ -28,6 +28,7 @@ export function createHmcChain(dimension: number, density: LogDensity, stream: R
   const trialGradient = new Float64Array(n);
   const momentum = new Float64Array(n);
   let logDensity = Number.NEGATIVE_INFINITY;
+  let hasGradient = false;
 
   /** momentum += factor C' gradient. */
   const kick = (metric: Float64Array, factor: number, slope: Float64Array) => {
@@ -54,6 +55,8 @@ export function createHmcChain(dimension: number, density: LogDensity, stream: R
 
   const move = (metric: Float64Array, stepSize: number, steps: number): number => {
     for (let j = 0; j < n; j++) momentum[j] = stream.normal();
+    if (!hasGradient) density(position, gradient);
+    hasGradient = true;
     const before = logDensity - kineticEnergy();
     trial.set(position);
     kick(metric, stepSize / 2, gradient);
@@ -80,12 +83,15 @@ export function createHmcChain(dimension: number, density: LogDensity, stream: R
       return logDensity;
     },
     move,
-    refresh() {
-      logDensity = density(position, gradient);
+    take(to, itsDensity) {
+      position.set(to);
+      logDensity = itsDensity;
+      hasGradient = false;
     },
     reset(to) {
       position.set(to);
       logDensity = density(position, gradient);
+      hasGradient = true;
       return logDensity > Number.NEGATIVE_INFINITY;
     },
   };

@@ -5,7 +5,7 @@
  *
  * Good because the working coordinates make the posterior nearly normal; checked against sampling in the tests.
  */
-import { climb, negativeHessian } from '../numeric/bfgs';
+import { climb, negativeHessian, roughNegativeHessian } from '../numeric/bfgs';
 import { choleskyOrNull, invertFromCholesky } from '../numeric/cholesky';
 import { createWorkingCoordinates, type WorkingCoordinates } from './coordinates';
 import { PARAMETERS } from './parameters';
@@ -33,8 +33,15 @@ const MAX_METRIC_SD = 2.5;
 const RIDGE = 0.05;
 const MAX_RIDGES = 30;
 
-/** Rounds of climbing with coordinates fitted anew to what the round before found. */
-const MAX_ROUNDS = 4;
+/** How much work a mode is worth. */
+export interface Thoroughness {
+  /** Rounds of climbing with coordinates fitted anew to what the round before found. */
+  rounds: number;
+  /** Curvature by one-sided differences, not taken anew: half the work or less, good for telling the hopeless from the rest. */
+  isRough: boolean;
+}
+
+const THOROUGH: Thoroughness = { rounds: 4, isRough: false };
 /** The covariance that coordinates were fitted to holds when no spread turns out to be off by more than this factor. */
 const SETTLED = 2.5;
 
@@ -46,13 +53,13 @@ export function findLocalMode(
   posterior: Posterior,
   q: Float64Array,
   fitInformation: Float64Array,
-  maxRounds: number = MAX_ROUNDS,
+  { rounds, isRough }: Thoroughness = THOROUGH,
 ): LocalMode | null {
   let covariance = roughCovariance(posterior, q, fitInformation);
   if (!covariance || !(posterior.logDensity(q, null) > Number.NEGATIVE_INFINITY)) return null;
   let best: LocalMode | null = null;
-  for (let round = 0; round < maxRounds; round++) {
-    const rise: Rise | null = climbFrom(posterior, best?.q ?? q, covariance);
+  for (let round = 0; round < rounds; round++) {
+    const rise: Rise | null = climbFrom(posterior, best?.q ?? q, covariance, isRough);
     if (!rise) break;
     best = rise.mode;
     if (rise.isSettled || !rise.covariance) break;
@@ -68,19 +75,25 @@ interface Rise {
   covariance: Float64Array | null;
 }
 
-function climbFrom(posterior: Posterior, q: Float64Array, anchorCovariance: Float64Array): Rise | null {
+function climbFrom(
+  posterior: Posterior,
+  q: Float64Array,
+  anchorCovariance: Float64Array,
+  isRough: boolean,
+): Rise | null {
   const n = posterior.dimension;
-  const { coordinates, spread } = createWorkingCoordinates(posterior.logDensity, {
+  const { coordinates, spread } = createWorkingCoordinates(posterior, {
     q,
     covariance: anchorCovariance,
-    segments: posterior.segments,
   });
   const scale = spread.map((sd) => Math.min(sd, MAX_SPREAD));
   const start = new Float64Array(n);
   coordinates.fromParameters(q, start);
   if (!(coordinates.logDensity(start, null) > Number.NEGATIVE_INFINITY)) return null;
   const { point, value, hasEnded } = climb(coordinates.logDensity, start, scale);
-  const lower = factorCurvature(coordinates, point, scale);
+  const lower = isRough
+    ? factorWithRidge(roughNegativeHessian(coordinates.logDensity, point, scale), scale)
+    : factorCurvature(coordinates, point, scale);
   let logDeterminant = 0;
   for (let j = 0; lower && j < n; j++) logDeterminant += Math.log(lower[j * (n + 1)]);
   const at = new Float64Array(n);

@@ -48,6 +48,7 @@ export function createPenalisedProblem(
   };
   const means = Float64Array.from(PARAMETERS, (_, j) => priorOf(j).meanLog);
   const sds = Float64Array.from(PARAMETERS, (_, j) => priorOf(j).sdLog);
+  const whitening = firms.map((firm, i) => createWhitening(firm, guesses[i]));
   const counted = firms[0].months.length + firms[1].months.length;
 
   const evaluate = (theta: Float64Array, residuals: Float64Array, jacobian: Float64Array | null): boolean => {
@@ -57,8 +58,8 @@ export function createPenalisedProblem(
     for (let i = 0; i < 2; i++) {
       const logLevel = i === 0 ? trajectory.logLevel1 : trajectory.logLevel2;
       fillErrors(firms[i], logLevel, errors[i]);
-      whiten(firms[i], errors[i], guesses[i], residuals, row);
-      if (jacobian) whitenRows(firms[i], sensitivities, i * months, guesses[i], jacobian, row);
+      whiten(errors[i], whitening[i], residuals, row);
+      if (jacobian) whitenRows(firms[i], sensitivities, i * months, whitening[i], jacobian, row);
       row += firms[i].months.length;
     }
     for (let j = 0; j < COUNT; j++) residuals[row + j] = (theta[j] - means[j]) / sds[j];
@@ -66,7 +67,8 @@ export function createPenalisedProblem(
       jacobian.fill(0, row * COUNT);
       for (let j = 0; j < COUNT; j++) jacobian[(row + j) * COUNT + j] = 1 / sds[j];
     }
-    return residuals.every(Number.isFinite);
+    for (let k = 0; k < residuals.length; k++) if (!Number.isFinite(residuals[k])) return false;
+    return true;
   };
 
   return { parameterCount: COUNT, residualCount: counted + COUNT, evaluate, errors };
@@ -76,36 +78,45 @@ function fillErrors(firm: FirmObservations, logLevel: Float64Array, errors: Floa
   for (let k = 0; k < errors.length; k++) errors[k] = logLevel[firm.months[k]] - firm.logCounts[k];
 }
 
+/** How errors of a firm are made independent: share of the error before that is taken off, and what the rest is multiplied by. */
+interface Whitening {
+  carried: Float64Array;
+  scale: Float64Array;
+}
+
+function createWhitening({ months }: FirmObservations, { size, persistence }: ErrorGuess): Whitening {
+  const carried = Float64Array.from(months, (month, k) =>
+    k === 0 ? 0 : persistence ** (month - months[k - 1]),
+  );
+  return { carried, scale: carried.map((rho) => 1 / (size * Math.sqrt(1 - rho * rho))) };
+}
+
 function whiten(
-  firm: FirmObservations,
   errors: Float64Array,
-  guess: ErrorGuess,
+  { carried, scale }: Whitening,
   residuals: Float64Array,
   row: number,
 ): void {
-  residuals[row] = errors[0] / guess.size;
+  residuals[row] = errors[0] * scale[0];
   for (let k = 1; k < errors.length; k++) {
-    const rho = guess.persistence ** (firm.months[k] - firm.months[k - 1]);
-    residuals[row + k] = (errors[k] - rho * errors[k - 1]) / (guess.size * Math.sqrt(1 - rho * rho));
+    residuals[row + k] = (errors[k] - carried[k] * errors[k - 1]) * scale[k];
   }
 }
 
 function whitenRows(
-  firm: FirmObservations,
+  { months }: FirmObservations,
   sensitivities: Float64Array,
   firstMonth: number,
-  guess: ErrorGuess,
+  { carried, scale }: Whitening,
   jacobian: Float64Array,
   row: number,
 ): void {
-  for (let k = 0; k < firm.months.length; k++) {
+  for (let k = 0; k < months.length; k++) {
     const to = (row + k) * COUNT;
-    const from = (firstMonth + firm.months[k]) * COUNT;
-    const rho = k === 0 ? 0 : guess.persistence ** (firm.months[k] - firm.months[k - 1]);
-    const before = k === 0 ? from : (firstMonth + firm.months[k - 1]) * COUNT;
-    const scale = 1 / (guess.size * Math.sqrt(1 - rho * rho));
+    const from = (firstMonth + months[k]) * COUNT;
+    const before = k === 0 ? from : (firstMonth + months[k - 1]) * COUNT;
     for (let j = 0; j < COUNT; j++) {
-      jacobian[to + j] = (sensitivities[from + j] - rho * sensitivities[before + j]) * scale;
+      jacobian[to + j] = (sensitivities[from + j] - carried[k] * sensitivities[before + j]) * scale[k];
     }
   }
 }

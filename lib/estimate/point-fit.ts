@@ -5,7 +5,8 @@
  * 2. Distinct ends, best first: errors guessed again from the residuals, then polished to a tight tolerance.
  * 3. The best of them once more under the part of the prior without competition: a mode the starts may miss.
  */
-import { fitLeastSquares, type LeastSquaresFit } from '../numeric/least-squares';
+import { type DescentEnd, descend } from '../numeric/damped-descent';
+import { columnNorms, conditionNumber, factorise } from '../numeric/linear';
 import type { Observations } from './observations';
 import { PARAMETERS } from './parameters';
 import {
@@ -34,15 +35,14 @@ export interface Mode {
   value: number;
   /** Of the penalised residuals, prior rows included; rows x 8. */
   jacobian: Float64Array;
-  conditionNumber: number;
   evaluations: number;
 }
 
 type Pair = readonly [ErrorGuess, ErrorGuess];
 
 /** First pass: a value to 1e-6 of itself tells the basins apart; the polish follows. */
-const FIRST_PASS = { gradientTolerance: 1e-3, maxIterations: 60, bursts: 3 };
-const SECOND_PASS = { gradientTolerance: 1e-6, bursts: 0 };
+const FIRST_PASS = { gradientTolerance: 1e-3, maxEvaluations: 80 };
+const SECOND_PASS = { gradientTolerance: 1e-6, maxEvaluations: 200 };
 /** Rounds of guessing the errors again. */
 const ERROR_ROUNDS = 2;
 
@@ -52,7 +52,7 @@ export const SAME_VALUE = 0.02;
 /** Fits one start with the first guess of the errors. */
 export function fitStart(observations: Observations, priors: Priors, start: Start): StartResult {
   const guesses = firstGuesses(observations);
-  const fit = fitLeastSquares(
+  const fit = descend(
     createPenalisedProblem(observations, priors, guesses, 'competition'),
     start.theta,
     FIRST_PASS,
@@ -76,12 +76,12 @@ export function polishMode(
 ): Mode | null {
   let guesses: Pair = firstGuesses(observations);
   let point = theta;
-  let fit: LeastSquaresFit | null = null;
+  let fit: DescentEnd | null = null;
   let evaluations = 0;
   for (let round = 0; round < ERROR_ROUNDS; round++) {
     guesses = refineGuesses(observations, priors, guesses, floors, point);
     const problem = createPenalisedProblem(observations, priors, guesses, part);
-    fit = fitLeastSquares(problem, point, SECOND_PASS);
+    fit = descend(problem, point, SECOND_PASS);
     evaluations += fit.evaluations;
     if (!Number.isFinite(fit.cost)) return null;
     point = fit.theta;
@@ -91,7 +91,6 @@ export function polishMode(
     errors: guesses,
     value: fit!.cost,
     jacobian: fit!.jacobian,
-    conditionNumber: fit!.conditionNumber,
     evaluations,
   };
 }
@@ -135,4 +134,12 @@ export function fitInformation({ jacobian }: Mode): Float64Array {
     }
   }
   return information;
+}
+
+/** Condition number of a mode's Jacobian with its columns scaled to norm 1; Infinity when a direction is flat. */
+export function measureConditioning({ jacobian }: Mode): number {
+  const n = PARAMETERS.length;
+  const m = jacobian.length / n;
+  const scale = columnNorms(jacobian, m, n).map((norm) => norm || 1);
+  return conditionNumber(factorise(jacobian, new Float64Array(m), scale));
 }

@@ -13,6 +13,8 @@ export interface Posterior {
   readonly priors: Priors;
   /** Where six log parameters (r, K, alpha, beta of a segment) begin in q. */
   readonly segments: readonly number[];
+  /** Where the coordinates of the error model are in q: those that say how large errors are and of what kind. */
+  readonly errors: readonly number[];
   /** Names of the values of one draw, in the order of `fillDraw`. */
   readonly columns: readonly string[];
   /** Calls of `logDensity` so far. */

@@ -5,7 +5,7 @@
  *   (ln alpha, ln beta): with weight 1 - w both N(0, 0.8), so that each outcome starts at 25 %;
  *                        with weight w both N(ln 0.1, 1): hardly any competition. Without that part independent growth is nearly
  *                        excluded. Its centre is where it is so that the two parts touch and a sampler can pass between them.
- *   ln(error size) ~ N(ln 0.04, 1)                                logit(persistence) ~ N(-0.5, 1.2)
+ *   ln(error size) ~ N(ln 0.04, 1)      ln(process noise) ~ N(ln 0.005, 1.2)      logit(persistence) ~ N(-0.5, 1.2)
  * An estimate of the addressable market takes the place of the prior of K: ln K ~ N(ln users, ln(1 + relative error)). The rest can be set too
  * (`PriorSettings`). All from the method of the project; r, K and the coefficients are "common practice" ranges of monthly user counts.
  */
@@ -34,7 +34,7 @@ const COMPETITION: LogNormalPrior = { meanLog: 0, sdLog: 0.8 };
 const NO_COMPETITION = { weight: 0.2, meanLog: Math.log(0.1), sdLog: 1 };
 const START_SD = 1;
 const ERROR_SIZE: LogNormalPrior = { meanLog: Math.log(0.04), sdLog: 1 };
-const PROCESS_NOISE: LogNormalPrior = { meanLog: Math.log(0.01), sdLog: 1 };
+const PROCESS_NOISE: LogNormalPrior = { meanLog: Math.log(0.005), sdLog: 1.2 };
 const PERSISTENCE = { meanLogit: -0.5, sdLogit: 1.2 };
 
 /** The settings where nobody says otherwise. */

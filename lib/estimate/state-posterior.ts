@@ -2,10 +2,12 @@
  * The posterior of the state-space model: the log state wanders from the path and is observed with independent errors
  * (`kalman-filter.ts`); optionally with a yearly cycle (`season.ts`) and one break from which all rates and levels may differ.
  *
- * q = (eight log parameters, ln size of the observation error of firm 1 and 2, ln process noise of firm 1 and 2,
+ * q = (eight log parameters, ln total of the noise of firm 1 and 2, logit share of process noise in it of firm 1 and 2,
  *      six log parameters after the break, seasonal coefficients of firm 1, of firm 2); the last two where the model has them.
- * observation sd^2 = floor^2 + size^2 (ln users), process noise in ln users per root month, each log parameter after the break
- * ~ N(the one before, JUMP_SD).
+ * observation sd^2 = floor^2 + size^2 (ln users), noise in ln users per root month, each log parameter after the break
+ * ~ N(the one before, JUMP_SD). What the counts show is how much their second differences vary, 6 size^2 + 2 noise^2, and less of how it
+ * splits: total^2 = 3 size^2 + noise^2 and share = noise^2 / total^2 make a box of what is an L in (ln size, ln noise), with a constant
+ * change of volume.
  */
 import type { RandomStream } from '../numeric/random';
 import { logSizeBeyondFloor, SMALLEST_ERROR } from './ar1-posterior';
@@ -54,13 +56,15 @@ const JUMP_SD = 0.5;
 /** Months that each segment must have at least: fewer say nothing about its parameters. */
 export const SEGMENT_MONTHS = 4;
 
-const SIZE = PARAMETERS.length;
-const NOISE = SIZE + 2;
-const AFTER = NOISE + 2;
+const TOTAL = PARAMETERS.length;
+const SHARE = TOTAL + 2;
+const AFTER = SHARE + 2;
+/** size^2 counts this much in the total. */
+const SIZE_WEIGHT = 3;
 const SEGMENT = 6;
-/** Rough information of one month on a seasonal coefficient of unit prior sd, and of the data on ln process noise. */
+/** Rough information of one month on a seasonal coefficient of unit prior sd, and of data and prior on a logit share. */
 const SEASON_INFORMATION = 3;
-const NOISE_INFORMATION = 1;
+const SHARE_INFORMATION = 0.5;
 
 export interface StatePosterior extends Posterior {
   readonly model: StateModel;
@@ -84,7 +88,7 @@ export function createStatePosterior(
   const season = AFTER + (model.hasBreak ? SEGMENT : 0);
   const dimension = season + 2 * basis.length;
   const input: FilterInput = {
-    theta: new Float64Array(SIZE),
+    theta: new Float64Array(PARAMETERS.length),
     after: model.hasBreak ? new Float64Array(SEGMENT) : null,
     breakMonth: months,
     observation: new Float64Array(2),
@@ -92,19 +96,30 @@ export function createStatePosterior(
     season: basis.length > 0 ? new Float64Array(2 * SEASON_MONTHS) : null,
   };
   const slopes: FilterGradient = {
-    theta: new Float64Array(SIZE),
+    theta: new Float64Array(PARAMETERS.length),
     after: new Float64Array(SEGMENT),
     observation: new Float64Array(2),
     process: new Float64Array(2),
     season: new Float64Array(2 * SEASON_MONTHS),
   };
+  const sizeSquared = new Float64Array(2);
+  const shares = new Float64Array(2);
+  /** Slopes with respect to ln size and ln noise of one firm, carried over to ln total and logit share. */
+  const addNoiseSlopes = (i: number, bySize: number, byNoise: number, gradient: Float64Array) => {
+    gradient[TOTAL + i] += bySize + byNoise;
+    gradient[SHARE + i] += 0.5 * ((1 - shares[i]) * byNoise - shares[i] * bySize);
+  };
   let evaluations = 0;
 
   const readInput = (q: Float64Array) => {
-    for (let j = 0; j < SIZE; j++) input.theta[j] = q[j];
+    for (let j = 0; j < TOTAL; j++) input.theta[j] = q[j];
     for (let i = 0; i < 2; i++) {
-      input.observation[i] = Math.exp(2 * q[SIZE + i]) + floors[i] * floors[i];
-      input.process[i] = Math.exp(2 * q[NOISE + i]);
+      const share = 1 / (1 + Math.exp(-q[SHARE + i]));
+      const total = Math.exp(2 * q[TOTAL + i]);
+      sizeSquared[i] = (total * (1 - share)) / SIZE_WEIGHT;
+      shares[i] = share;
+      input.observation[i] = sizeSquared[i] + floors[i] * floors[i];
+      input.process[i] = total * share;
     }
     if (input.after) for (let j = 0; j < SEGMENT; j++) input.after[j] = q[AFTER + j];
     if (input.season) fillSeason(q, input.season);
@@ -138,8 +153,10 @@ export function createStatePosterior(
     const { errorSize, processNoise } = priors;
     let value = 0;
     for (let i = 0; i < 2; i++) {
-      value += addNormal(SIZE + i, errorSize.meanLog, errorSize.sdLog, q, gradient);
-      value += addNormal(NOISE + i, processNoise.meanLog, processNoise.sdLog, q, gradient);
+      const sizeZ = (Math.log(sizeSquared[i]) / 2 - errorSize.meanLog) / errorSize.sdLog;
+      const noiseZ = (Math.log(input.process[i]) / 2 - processNoise.meanLog) / processNoise.sdLog;
+      value += logNormalDensity(sizeZ, errorSize.sdLog) + logNormalDensity(noiseZ, processNoise.sdLog);
+      if (gradient) addNoiseSlopes(i, -sizeZ / errorSize.sdLog, -noiseZ / processNoise.sdLog, gradient);
     }
     for (let j = 0; input.after && j < SEGMENT; j++) {
       value += addNormal(AFTER + j, q[j], JUMP_SD, q, gradient);
@@ -149,13 +166,17 @@ export function createStatePosterior(
     return value;
   };
 
-  const addLikelihoodGradient = (q: Float64Array, gradient: Float64Array) => {
+  const addLikelihoodGradient = (gradient: Float64Array) => {
     for (const part of Object.values(slopes) as Float64Array[]) part.fill(0);
     filter.sweepBack(input, slopes);
-    for (let j = 0; j < SIZE; j++) gradient[j] += slopes.theta[j];
+    for (let j = 0; j < TOTAL; j++) gradient[j] += slopes.theta[j];
     for (let i = 0; i < 2; i++) {
-      gradient[SIZE + i] += slopes.observation[i] * 2 * Math.exp(2 * q[SIZE + i]);
-      gradient[NOISE + i] += slopes.process[i] * 2 * input.process[i];
+      addNoiseSlopes(
+        i,
+        2 * sizeSquared[i] * slopes.observation[i],
+        2 * input.process[i] * slopes.process[i],
+        gradient,
+      );
     }
     for (let j = 0; input.after && j < SEGMENT; j++) gradient[AFTER + j] += slopes.after[j];
     for (let i = 0; i < 2; i++) {
@@ -174,7 +195,7 @@ export function createStatePosterior(
     const likelihood = filter.run(input);
     if (!(likelihood > Number.NEGATIVE_INFINITY)) return Number.NEGATIVE_INFINITY;
     const prior = logPrior(q, gradient) + addFurtherPriors(q, gradient);
-    if (gradient) addLikelihoodGradient(q, gradient);
+    if (gradient) addLikelihoodGradient(gradient);
     return orImpossible(likelihood + prior);
   };
 
@@ -183,8 +204,10 @@ export function createStatePosterior(
     const q = new Float64Array(dimension);
     q.set(theta);
     guesses.forEach((guess, i) => {
-      q[SIZE + i] = logSizeBeyondFloor(guess.size * Math.sqrt(1 - guess.persistence), floors[i]);
-      q[NOISE + i] = priors.processNoise.meanLog;
+      const logSize = logSizeBeyondFloor(guess.size * Math.sqrt(1 - guess.persistence), floors[i]);
+      const logNoise = priors.processNoise.meanLog;
+      q[TOTAL + i] = Math.log(SIZE_WEIGHT * Math.exp(2 * logSize) + Math.exp(2 * logNoise)) / 2;
+      q[SHARE + i] = 2 * (logNoise - logSize) - Math.log(SIZE_WEIGHT);
     });
     for (let j = 0; model.hasBreak && j < SEGMENT; j++) q[AFTER + j] = theta[j];
     return q;
@@ -196,8 +219,8 @@ export function createStatePosterior(
       information[i * n + j] += value;
     };
     for (let i = 0; i < 2; i++) {
-      add(SIZE + i, SIZE + i, observations.firms[i].months.length + priors.errorSize.sdLog ** -2);
-      add(NOISE + i, NOISE + i, NOISE_INFORMATION + priors.processNoise.sdLog ** -2);
+      add(TOTAL + i, TOTAL + i, observations.firms[i].months.length + priors.errorSize.sdLog ** -2);
+      add(SHARE + i, SHARE + i, SHARE_INFORMATION);
     }
     if (model.hasBreak) splitInformation(information, n, 1 - input.breakMonth / months);
     for (let j = season; j < n; j++) add(j, j, 1 + SEASON_INFORMATION * months);
@@ -206,7 +229,7 @@ export function createStatePosterior(
   const fillDraw = (q: Float64Array, stream: RandomStream, out: Float64Array, offset: number): boolean => {
     readInput(q);
     if (!(filter.run(input) > Number.NEGATIVE_INFINITY)) return false;
-    for (let j = 0; j < SIZE; j++) out[offset + j] = Math.exp(q[j]);
+    for (let j = 0; j < TOTAL; j++) out[offset + j] = Math.exp(q[j]);
     for (let j = 0; input.after && j < SEGMENT; j++) out[offset + j] = Math.exp(q[AFTER + j]);
     const [p11, p12, p22] = filter.covariance;
     const slope = p11 > 0 ? p12 / p11 : 0;
@@ -241,6 +264,7 @@ export function createStatePosterior(
     observations,
     priors,
     segments: model.hasBreak ? [0, AFTER] : [0],
+    errors: [TOTAL, TOTAL + 1, SHARE, SHARE + 1],
     columns: model.harmonics === 0 ? STATE_COLUMNS : [...STATE_COLUMNS, ...seasonColumns()],
     flags: filter.flags,
     get evaluations() {

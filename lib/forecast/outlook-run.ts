@@ -5,6 +5,7 @@ import { readColumn, thinDraws } from '../estimate/draws';
 import { ENGINE_VERSION } from '../estimate/engine-version';
 import { type Fit, type FitFailure, runFit } from '../estimate/fit-run';
 import { INDEX } from '../estimate/parameters';
+import { measureConditioning } from '../estimate/point-fit';
 import { USUAL_PRIORS } from '../estimate/priors';
 import type { DrawSet, FitInput, FitProgress } from '../estimate/types';
 import { readDrawTable } from './draw-table';
@@ -99,7 +100,7 @@ function describeFit(fit: Fit): Diagnostics {
     evaluations: fit.evaluations,
     starts,
     startsAtBest: starts.filter((start) => start.reachedBest).length,
-    conditionNumber: finiteOrNull(fit.best.conditionNumber),
+    conditionNumber: finiteOrNull(measureConditioning(fit.best)),
   };
 }
 

@@ -20,8 +20,8 @@ import type { Cloud, FitReport, Outlook } from './report';
 import { simulateLevels, simulateObservations } from './simulate';
 
 /** Draws that bands are taken from, and those that are followed to their ends for milestones and maps. */
-export const OUTLOOK_DRAWS = 2000;
-const FOLLOWED_DRAWS = 1000;
+export const OUTLOOK_DRAWS = 1000;
+const FOLLOWED_DRAWS = 500;
 /** Observations per draw. */
 const REPLICATES = 2;
 /** Draws shown on the maps. */

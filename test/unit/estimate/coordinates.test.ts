@@ -1,5 +1,5 @@
 import { describe, expect, it } from 'vitest';
-import { createWorkingCoordinates } from '@/lib/estimate/coordinates';
+import { createWorkingCoordinates, fitCoordinates } from '@/lib/estimate/coordinates';
 import { buildPriors } from '@/lib/estimate/priors';
 import { createStatePosterior } from '@/lib/estimate/state-posterior';
 import { createStream } from '@/lib/numeric/random';
@@ -46,9 +46,22 @@ function quartic(at: Float64Array, gradient: Float64Array | null): number {
   }
   return value;
 }
-const { coordinates } = createWorkingCoordinates(quartic, { q, covariance, segments: posterior.segments });
+const target = { logDensity: quartic, segments: posterior.segments, errors: posterior.errors };
+const { coordinates: anchored } = createWorkingCoordinates(target, { q, covariance });
+/** Points whose spread depends on their errors, so that the widths of the fitted map are at work. */
+const visited = Array.from({ length: 300 }, () => {
+  const point = q.slice();
+  for (const j of posterior.errors) point[j] += 0.5 * stream.normal();
+  const width = Math.exp(0.5 * (point[posterior.errors[0]] - q[posterior.errors[0]]));
+  for (let j = 0; j < n; j++) if (!posterior.errors.includes(j)) point[j] += 0.1 * width * stream.normal();
+  return point;
+});
+const fitted = fitCoordinates(target, visited);
 
-describe('working coordinates', () => {
+describe.each([
+  ['anchored', anchored],
+  ['fitted', fitted],
+])('%s working coordinates', (_, coordinates) => {
   it('go there and back', () => {
     const u = new Float64Array(n);
     const back = new Float64Array(n);
