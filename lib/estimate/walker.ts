@@ -3,10 +3,10 @@
  * Each kind of step leaves the posterior as it is, so any fixed mixture of them does.
  */
 import type { RandomStream } from '../numeric/random';
+import type { ModelComponent } from './break-choice';
 import type { WorkingCoordinates } from './coordinates';
 import { createHmcChain } from './hmc';
 import type { LocalMode } from './local-mode';
-import type { ModelComponent } from './break-choice';
 
 /** Mean length of a trajectory in units of the metric: a little more than a quarter turn of a standard normal, so that draws swing over. Drawn anew each time, so that no length resonates. */
 const MEAN_LENGTH = 2;
