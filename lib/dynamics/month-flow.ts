@@ -47,8 +47,8 @@ export interface MonthFlow {
   advance(slot: number): boolean;
   /** Moves `tangent` through month `slot` as taped. */
   pushForward(slot: number): void;
-  /** Fills `out` at `at` with the derivative of the state after month `slot` by the state before, row-major (2 x 2). */
-  fillPropagator(slot: number, out: Float64Array, at: number): void;
+  /** The same, filling `out` at `at` with the derivative of the state after the month by the state before, row-major (2 x 2). */
+  advanceWithPropagator(slot: number, out: Float64Array, at: number): boolean;
   /** Moves `adjoint` back through month `slot` as taped, adding to `gradient`. */
   pullBack(slot: number): void;
   clearGradient(): void;
@@ -129,32 +129,73 @@ export function createMonthFlow(slots: number): MonthFlow {
     let sumAlpha = 0;
     let sumBeta = 0;
     for (let at = tapeStart[slot + 1] - TAPE_WIDTH; at >= tapeStart[slot]; at -= TAPE_WIDTH) {
+      // stages 4 to 1, written out: a loop with its choice of weights takes half as long again
       let nextX = lx;
       let nextY = ly;
       let kx = sixth * lx;
       let ky = sixth * ly;
-      for (let stage = 3; stage >= 0; stage--) {
-        const x = tape[at + 2 * stage];
-        const y = tape[at + 2 * stage + 1];
-        const kxx = kx * x;
-        const kyy = ky * y;
-        const roomX = 1 - x - alpha * y;
-        const roomY = 1 - y - beta * x;
-        sumR1 += kxx * roomX;
-        sumR2 += kyy * roomY;
-        sumAlpha -= kxx * y;
-        sumBeta -= kyy * x;
-        const vx = kx * r1 * (roomX - x) - r2Beta * kyy;
-        const vy = ky * r2 * (roomY - y) - r1Alpha * kxx;
-        nextX += vx;
-        nextY += vy;
-        if (stage > 0) {
-          const weight = stage === 1 ? sixth : third;
-          const reach = stage === 3 ? h : half;
-          kx = weight * lx + reach * vx;
-          ky = weight * ly + reach * vy;
-        }
-      }
+      let x = tape[at + 6];
+      let y = tape[at + 7];
+      let roomX = 1 - x - alpha * y;
+      let roomY = 1 - y - beta * x;
+      let kxx = kx * x;
+      let kyy = ky * y;
+      sumR1 += kxx * roomX;
+      sumR2 += kyy * roomY;
+      sumAlpha -= kxx * y;
+      sumBeta -= kyy * x;
+      let vx = kx * r1 * (roomX - x) - r2Beta * kyy;
+      let vy = ky * r2 * (roomY - y) - r1Alpha * kxx;
+      nextX += vx;
+      nextY += vy;
+      kx = third * lx + h * vx;
+      ky = third * ly + h * vy;
+      x = tape[at + 4];
+      y = tape[at + 5];
+      roomX = 1 - x - alpha * y;
+      roomY = 1 - y - beta * x;
+      kxx = kx * x;
+      kyy = ky * y;
+      sumR1 += kxx * roomX;
+      sumR2 += kyy * roomY;
+      sumAlpha -= kxx * y;
+      sumBeta -= kyy * x;
+      vx = kx * r1 * (roomX - x) - r2Beta * kyy;
+      vy = ky * r2 * (roomY - y) - r1Alpha * kxx;
+      nextX += vx;
+      nextY += vy;
+      kx = third * lx + half * vx;
+      ky = third * ly + half * vy;
+      x = tape[at + 2];
+      y = tape[at + 3];
+      roomX = 1 - x - alpha * y;
+      roomY = 1 - y - beta * x;
+      kxx = kx * x;
+      kyy = ky * y;
+      sumR1 += kxx * roomX;
+      sumR2 += kyy * roomY;
+      sumAlpha -= kxx * y;
+      sumBeta -= kyy * x;
+      vx = kx * r1 * (roomX - x) - r2Beta * kyy;
+      vy = ky * r2 * (roomY - y) - r1Alpha * kxx;
+      nextX += vx;
+      nextY += vy;
+      kx = sixth * lx + half * vx;
+      ky = sixth * ly + half * vy;
+      x = tape[at + 0];
+      y = tape[at + 1];
+      roomX = 1 - x - alpha * y;
+      roomY = 1 - y - beta * x;
+      kxx = kx * x;
+      kyy = ky * y;
+      sumR1 += kxx * roomX;
+      sumR2 += kyy * roomY;
+      sumAlpha -= kxx * y;
+      sumBeta -= kyy * x;
+      vx = kx * r1 * (roomX - x) - r2Beta * kyy;
+      vy = ky * r2 * (roomY - y) - r1Alpha * kxx;
+      nextX += vx;
+      nextY += vy;
       lx = nextX;
       ly = nextY;
     }
@@ -211,56 +252,68 @@ export function createMonthFlow(slots: number): MonthFlow {
     tangent[2 * column + 1] = sy + sixth * (ay + 2 * (by + cy) + dy);
   };
 
-  const fillPropagator = (slot: number, out: Float64Array, to: number): void => {
+  /** `advance` with the derivative of each step: P = I + (h/6) (K1 + 2 K2 + 2 K3 + K4), K1 = J1, K2 = J2 (I + h/2 K1), and so on. */
+  const advanceWithPropagator = (slot: number, out: Float64Array, to: number): boolean => {
+    if (!advance(slot)) return false;
     const h = 1 / stepsOf[slot];
     const half = 0.5 * h;
     const sixth = h / 6;
     const r1Alpha = r1 * alpha;
     const r2Beta = r2 * beta;
+    const end = tapeStart[slot + 1];
     let p11 = 1;
     let p12 = 0;
     let p21 = 0;
     let p22 = 1;
-    for (let at = tapeStart[slot]; at < tapeStart[slot + 1]; at += TAPE_WIDTH) {
-      let s11 = p11;
-      let s12 = p12;
-      let s21 = p21;
-      let s22 = p22;
-      let sum11 = 0;
-      let sum12 = 0;
-      let sum21 = 0;
-      let sum22 = 0;
-      for (let stage = 0; stage < 4; stage++) {
-        const x = tape[at + 2 * stage];
-        const y = tape[at + 2 * stage + 1];
-        const a = r1 * (1 - 2 * x - alpha * y);
-        const b = -r1Alpha * x;
-        const c = -r2Beta * y;
-        const d = r2 * (1 - 2 * y - beta * x);
-        const k11 = a * s11 + b * s21;
-        const k12 = a * s12 + b * s22;
-        const k21 = c * s11 + d * s21;
-        const k22 = c * s12 + d * s22;
-        const weight = stage === 0 || stage === 3 ? sixth : 2 * sixth;
-        sum11 += weight * k11;
-        sum12 += weight * k12;
-        sum21 += weight * k21;
-        sum22 += weight * k22;
-        const reach = stage === 2 ? h : half;
-        s11 = p11 + reach * k11;
-        s12 = p12 + reach * k12;
-        s21 = p21 + reach * k21;
-        s22 = p22 + reach * k22;
-      }
-      p11 += sum11;
-      p12 += sum12;
-      p21 += sum21;
-      p22 += sum22;
+    for (let at = tapeStart[slot]; at < end; at += TAPE_WIDTH) {
+      let x = tape[at];
+      let y = tape[at + 1];
+      const a11 = r1 * (1 - 2 * x) - r1Alpha * y;
+      const a12 = -r1Alpha * x;
+      const a21 = -r2Beta * y;
+      const a22 = r2 * (1 - 2 * y) - r2Beta * x;
+      x = tape[at + 2];
+      y = tape[at + 3];
+      let j11 = r1 * (1 - 2 * x) - r1Alpha * y;
+      let j12 = -r1Alpha * x;
+      let j21 = -r2Beta * y;
+      let j22 = r2 * (1 - 2 * y) - r2Beta * x;
+      const b11 = j11 + half * (j11 * a11 + j12 * a21);
+      const b12 = j12 + half * (j11 * a12 + j12 * a22);
+      const b21 = j21 + half * (j21 * a11 + j22 * a21);
+      const b22 = j22 + half * (j21 * a12 + j22 * a22);
+      x = tape[at + 4];
+      y = tape[at + 5];
+      j11 = r1 * (1 - 2 * x) - r1Alpha * y;
+      j12 = -r1Alpha * x;
+      j21 = -r2Beta * y;
+      j22 = r2 * (1 - 2 * y) - r2Beta * x;
+      const c11 = j11 + half * (j11 * b11 + j12 * b21);
+      const c12 = j12 + half * (j11 * b12 + j12 * b22);
+      const c21 = j21 + half * (j21 * b11 + j22 * b21);
+      const c22 = j22 + half * (j21 * b12 + j22 * b22);
+      x = tape[at + 6];
+      y = tape[at + 7];
+      j11 = r1 * (1 - 2 * x) - r1Alpha * y;
+      j12 = -r1Alpha * x;
+      j21 = -r2Beta * y;
+      j22 = r2 * (1 - 2 * y) - r2Beta * x;
+      const s11 = 1 + sixth * (a11 + 2 * (b11 + c11) + j11 + h * (j11 * c11 + j12 * c21));
+      const s12 = sixth * (a12 + 2 * (b12 + c12) + j12 + h * (j11 * c12 + j12 * c22));
+      const s21 = sixth * (a21 + 2 * (b21 + c21) + j21 + h * (j21 * c11 + j22 * c21));
+      const s22 = 1 + sixth * (a22 + 2 * (b22 + c22) + j22 + h * (j21 * c12 + j22 * c22));
+      const before11 = p11;
+      const before12 = p12;
+      p11 = s11 * before11 + s12 * p21;
+      p12 = s11 * before12 + s12 * p22;
+      p21 = s21 * before11 + s22 * p21;
+      p22 = s21 * before12 + s22 * p22;
     }
     out[to] = p11;
     out[to + 1] = p12;
     out[to + 2] = p21;
     out[to + 3] = p22;
+    return true;
   };
 
   const pushForward = (slot: number): void => {
@@ -287,7 +340,7 @@ export function createMonthFlow(slots: number): MonthFlow {
     },
     advance,
     pushForward,
-    fillPropagator,
+    advanceWithPropagator,
     pullBack,
     clearGradient() {
       gradient.fill(0);

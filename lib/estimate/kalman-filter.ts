@@ -121,6 +121,7 @@ export function createKalmanFilter(observations: Observations): KalmanFilter {
     let p22 = 0;
     let squares = 0;
     let logs = 0;
+    let product = 1;
     for (let t = 0; t < months; t++) {
       const has1 = t >= entry1 && t < exit1;
       const has2 = t >= entry2 && t < exit2;
@@ -162,7 +163,6 @@ export function createKalmanFilter(observations: Observations): KalmanFilter {
       const at = t * WIDTH;
       let move1 = 0;
       let move2 = 0;
-      let product = 1;
       const count1 = counts1[t];
       if (!Number.isNaN(count1)) {
         const variance = flags[t] === 1 ? variance1 * FLAGGED_INFLATION : variance1;
@@ -181,7 +181,7 @@ export function createKalmanFilter(observations: Observations): KalmanFilter {
         p11 *= variance * inverse;
         p12 *= variance * inverse;
         squares += innovation * innovation * inverse;
-        product = total;
+        product *= total;
       }
       const count2 = counts2[t];
       if (!Number.isNaN(count2)) {
@@ -204,7 +204,11 @@ export function createKalmanFilter(observations: Observations): KalmanFilter {
         squares += innovation * innovation * inverse;
         product *= total;
       }
-      logs += Math.log(product);
+      // variances stay far from both ends of the range over this many months
+      if (t % MONTHS_PER_LOG === MONTHS_PER_LOG - 1) {
+        logs += Math.log(product);
+        product = 1;
+      }
       logLevel1 += move1;
       logLevel2 += move2;
       states[state0] = logLevel1;
@@ -218,12 +222,11 @@ export function createKalmanFilter(observations: Observations): KalmanFilter {
       const y = level2 * exponential(move2);
       state[0] = x;
       state[1] = y;
-      if (!flow.advance(t)) return Number.NEGATIVE_INFINITY;
+      const to = 4 * t;
+      if (!flow.advanceWithPropagator(t, jacobians, to)) return Number.NEGATIVE_INFINITY;
       level1 = state[0];
       level2 = state[1];
       if ((has1 && !(level1 > 0)) || (has2 && !(level2 > 0))) return Number.NEGATIVE_INFINITY;
-      const to = 4 * t;
-      flow.fillPropagator(t, jacobians, to);
       // from the scaled state to its logarithm: d ln x' / d ln x = (d x' / d x) x / x'
       const inverse1 = has1 ? 1 / level1 : 0;
       const inverse2 = has2 ? 1 / level2 : 0;
@@ -239,8 +242,8 @@ export function createKalmanFilter(observations: Observations): KalmanFilter {
       kept[at + 1] = y;
       kept[at + 2] = level1;
       kept[at + 3] = level2;
-      if (has1) logLevel1 = logK1 + Math.log(level1);
-      if (has2) logLevel2 = logK2 + Math.log(level2);
+      if (has1) logLevel1 += logRatio(level1, x);
+      if (has2) logLevel2 += logRatio(level2, y);
       const q11 = f11 * p11 + f12 * p12;
       const q12 = f11 * p12 + f12 * p22;
       const q21 = f21 * p11 + f22 * p12;
@@ -254,7 +257,7 @@ export function createKalmanFilter(observations: Observations): KalmanFilter {
     covariance[0] = p11;
     covariance[1] = p12;
     covariance[2] = p22;
-    return orImpossible(-0.5 * (squares + logs));
+    return orImpossible(-0.5 * (squares + logs + Math.log(product)));
   };
 
   /** Moves what the flow has gathered into the gradient of a segment. */
@@ -406,6 +409,18 @@ function exponential(move: number): number {
   );
 }
 const SMALL_MOVE = 0.05;
+
+/** Months whose variances are multiplied before the logarithm is taken: above 1e-18 each, so never 0. */
+const MONTHS_PER_LOG = 8;
+
+/** ln(a / b) for neighbours: 2 artanh((a - b) / (a + b)) as a series within 2e-14 up to NEAR_RATIO, where Math.log takes over. */
+function logRatio(a: number, b: number): number {
+  const s = (a - b) / (a + b);
+  if (!(Math.abs(s) < NEAR_RATIO)) return Math.log(a / b);
+  const q = s * s;
+  return 2 * s * (1 + q * (1 / 3 + q * (1 / 5 + q * (1 / 7 + q * (1 / 9 + q * (1 / 11))))));
+}
+const NEAR_RATIO = 0.1;
 
 /** -Infinity in place of NaN. */
 export function orImpossible(value: number): number {
