@@ -62,8 +62,9 @@ export function findLocalMode(
     const rise: Rise | null = climbFrom(posterior, best?.q ?? q, covariance, isRough);
     if (!rise) break;
     best = rise.mode;
-    if (rise.isSettled || !rise.covariance) break;
-    covariance = rise.covariance;
+    if (rise.isSettled || round === rounds - 1) break;
+    covariance = rise.findCovariance();
+    if (!covariance) break;
   }
   return best;
 }
@@ -72,7 +73,7 @@ interface Rise {
   mode: LocalMode;
   isSettled: boolean;
   /** Covariance of q at the mode, for the next round; null when the curvature there is of no use. */
-  covariance: Float64Array | null;
+  findCovariance(): Float64Array | null;
 }
 
 function climbFrom(
@@ -113,7 +114,7 @@ function climbFrom(
       breakMonth: posterior.breakMonth,
     },
     isSettled: hasEnded && sds.every((sd, j) => sd < SETTLED * scale[j] && scale[j] < SETTLED * sd),
-    covariance: lower && covarianceOfParameters(coordinates, point, metric, sds),
+    findCovariance: () => lower && covarianceOfParameters(coordinates, point, metric, sds),
   };
 }
 

@@ -15,10 +15,9 @@ import { readObservations } from '@/lib/estimate/observations';
 import type { Posterior } from '@/lib/estimate/posterior';
 import { buildPriors } from '@/lib/estimate/priors';
 import { createStatePosterior } from '@/lib/estimate/state-posterior';
-import { createOutlookRun } from '@/lib/forecast/outlook-run';
+import { cpuSeconds, DEFAULT_MARKETS, type Market, readMarkets, runMarket } from './markets';
 import { benchScenario } from './scenario-bench';
 
-const DEFAULT_MARKETS = '../shared/bench/markets.json';
 const DEFAULT_LIMIT = 12;
 const MONTHS = 60;
 const THETA = Float64Array.of(0.15, 0.2, 1e6, 8e5, 0.7, 1.2, 5e4, 2e4).map(Math.log);
@@ -92,44 +91,63 @@ function benchMicro(): void {
   }
 }
 
-interface Market {
-  id: number | string;
-  first: (number | null)[];
-  second: (number | null)[];
-  H: number;
+interface Seconds {
+  wall: number;
+  cpu: number;
 }
 
-/** Seconds per market, sorted. */
-function benchMarkets(markets: readonly Market[]): number[] {
-  return markets
-    .map((market) => {
-      const started = performance.now();
-      const run = createOutlookRun({
-        series: { firstMonth: 0, focal: market.first, rival: market.second },
-        options: { ...DEFAULT_FIT_OPTIONS, horizonMonths: market.H },
-      });
-      while (!run.next().done);
-      return (performance.now() - started) / 1000;
-    })
-    .sort((a, b) => a - b);
+/** Whole markets one after the other, with the horizon of the benchmark. */
+function timeMarkets(markets: readonly Market[]): Seconds[] {
+  return markets.map((market) => {
+    const started = performance.now();
+    const before = cpuSeconds();
+    runMarket(market);
+    return { wall: (performance.now() - started) / 1000, cpu: cpuSeconds() - before };
+  });
 }
 
-/** Mean seconds per market of the analyst's script, or null where it cannot run. */
-function timeAnalyst(marketsFile: string, limit: number): number | null {
+/** Runs the analyst's script inside Python with its libraries loaded, and tells the CPU seconds that it took beyond them. */
+const WRAPPER = `
+import resource, runpy, sys
+import numpy, scipy.integrate, scipy.optimize
+def used():
+    usage = resource.getrusage(resource.RUSAGE_SELF)
+    return usage.ru_utime + usage.ru_stime
+before = used()
+sys.argv = sys.argv[1:]
+runpy.run_path(sys.argv[0], run_name='__main__')
+sys.stderr.write('\\nCPU %.3f' % (used() - before))
+`;
+
+/** Mean seconds per market of the analyst's script on one core, or null where it cannot run. */
+function timeAnalyst(marketsFile: string, limit: number): Seconds | null {
   const script = join(dirname(marketsFile), 'analyst_scipy.py');
   if (!existsSync(script)) return null;
   const folder = mkdtempSync(join(tmpdir(), 'elbowroom-bench-'));
   try {
     const out = join(folder, 'analyst.json');
-    const run = spawnSync('python3', [script, marketsFile, out, String(limit)], {
+    const run = spawnSync('python3', ['-c', WRAPPER, script, marketsFile, out, String(limit)], {
       stdio: ['ignore', 'ignore', 'pipe'],
+      encoding: 'utf8',
+      env: { ...process.env, OMP_NUM_THREADS: '1', OPENBLAS_NUM_THREADS: '1' },
     });
-    if (run.status !== 0) return null;
+    const cpu = Number(/CPU ([\d.]+)$/.exec(run.stderr ?? '')?.[1]);
+    if (run.status !== 0 || !(cpu > 0)) return null;
     const rows = JSON.parse(readFileSync(out, 'utf8')) as { seconds: number }[];
-    return rows.reduce((sum, { seconds }) => sum + seconds, 0) / rows.length;
+    return { wall: meanOf(rows.map(({ seconds }) => seconds)), cpu: cpu / rows.length };
   } finally {
     rmSync(folder, { recursive: true, force: true });
   }
+}
+
+function meanOf(values: readonly number[]): number {
+  return values.reduce((sum, value) => sum + value, 0) / values.length;
+}
+
+function describe(values: readonly number[]): string {
+  const sorted = [...values].sort((a, b) => a - b);
+  const last = sorted[sorted.length - 1];
+  return `median ${sorted[sorted.length >> 1].toFixed(3)}, mean ${meanOf(values).toFixed(3)}, slowest ${last.toFixed(3)}`;
 }
 
 function main(): void {
@@ -141,18 +159,20 @@ function main(): void {
     return;
   }
   const limit = Number(process.argv[3] ?? DEFAULT_LIMIT);
-  const markets = (JSON.parse(readFileSync(marketsFile, 'utf8')) as Market[]).slice(0, limit);
-  const seconds = benchMarkets(markets);
-  const mean = seconds.reduce((sum, value) => sum + value, 0) / seconds.length;
-  console.log(
-    `${markets.length} whole markets: median ${seconds[seconds.length >> 1].toFixed(3)} s, mean ${mean.toFixed(3)} s`,
-  );
+  const times = timeMarkets(readMarkets(marketsFile, limit));
+  const wall = times.map((time) => time.wall);
+  const cpu = times.map((time) => time.cpu);
+  console.log(`${times.length} whole markets, seconds:     ${describe(wall)}`);
+  console.log(`${times.length} whole markets, CPU seconds: ${describe(cpu)}`);
   const analyst = timeAnalyst(marketsFile, limit);
-  if (analyst === null) console.log('the analyst script cannot run here: no ratio');
-  else
-    console.log(
-      `analyst with scipy: mean ${analyst.toFixed(2)} s, ${(analyst / mean).toFixed(1)} times as long`,
-    );
+  if (analyst === null) {
+    console.log('the analyst script cannot run here: no ratio');
+    return;
+  }
+  const ratio = (theirs: number, ours: number) =>
+    `${theirs.toFixed(2)}, ${(theirs / ours).toFixed(1)} times as long`;
+  console.log(`analyst with scipy on the same, mean seconds:     ${ratio(analyst.wall, meanOf(wall))}`);
+  console.log(`analyst with scipy on the same, mean CPU seconds: ${ratio(analyst.cpu, meanOf(cpu))}`);
 }
 
 main();
