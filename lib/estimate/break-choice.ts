@@ -7,7 +7,7 @@
  * averaging, Hoeting, Madigan, Raftery & Volinsky 1999). Before the data: MARKED_PRIOR that the jump was at a marked month, each alike; of
  * the rest BREAK_PRIOR that there was one in another month, each alike.
  */
-import { findLocalMode, type LocalMode, type Thoroughness } from './local-mode';
+import { estimateEvidence, findLocalMode, followMode, type LocalMode } from './local-mode';
 import type { Posterior } from './posterior';
 import { SEGMENT_MONTHS, type StatePosterior } from './state-posterior';
 
@@ -28,12 +28,13 @@ const BREAK_PRIOR = 0.2;
 /** Months tried for a break at most, evenly spread; every other month in a series of up to five years. */
 const MAX_BREAK_TRIES = 30;
 const BREAK_STEP = 2;
-/** First tries, those of a break that is not out of the question, and tries of one slice. */
-const FIRST_TRIES: Thoroughness = { rounds: 2, isRough: true };
-const CLOSER_TRIES: Thoroughness = { rounds: 2, isRough: false };
+/** Rounds of a climb, and tries of one slice. */
+const TRY_ROUNDS = 2;
 const TRIES_PER_SLICE = 6;
+/** Months climbed to whatever the estimates say. */
+const CLIMBED = 3;
 /** A chance of a break below this after the first tries is not looked at more closely: it would have to grow sixfold to count. */
-const HOPELESS = 0.005;
+const HOPELESS = 0.002;
 /** Two months of a break belong to different components when the log evidence between them falls this far below the lower one. */
 const VALLEY = 2;
 
@@ -97,34 +98,60 @@ function* tryBreaks(
   unbroken: LocalMode,
   information: Float64Array,
 ): Generator<undefined, BreakTries> {
-  const { months } = posterior.observations;
-  const possible = months - 2 * SEGMENT_MONTHS + 1;
+  const possible = posterior.observations.months - 2 * SEGMENT_MONTHS + 1;
   const fine = Math.max(BREAK_STEP, Math.ceil(possible / MAX_BREAK_TRIES));
   const start = withSecondSegment(unbroken.q, posterior.dimension);
-  function* tryEvery(step: number, thoroughness: Thoroughness): Generator<undefined, BreakTries> {
-    const modes: LocalMode[] = [];
-    for (let month = SEGMENT_MONTHS; month <= months - SEGMENT_MONTHS; month += step) {
-      posterior.breakMonth = month;
-      const mode = findLocalMode(posterior, start, information, thoroughness);
-      if (mode) modes.push(mode);
-      if (modes.length % TRIES_PER_SLICE === 0) yield;
-    }
-    return { modes, step, possible };
+  const months = posterior.observations.months - SEGMENT_MONTHS;
+  const estimates: number[] = [];
+  for (let month = SEGMENT_MONTHS; month <= months; month += 2 * fine) {
+    posterior.breakMonth = month;
+    estimates.push(estimateEvidence(posterior, start, information));
   }
-  const coarse = yield* tryEvery(2 * fine, FIRST_TRIES);
-  if (chanceOfBreak(unbroken, coarse) < HOPELESS) return coarse;
-  return yield* tryEvery(fine, CLOSER_TRIES);
+  yield;
+  // what a slope promises from far off is checked by climbing where it promises most; the other places promise too much likewise
+  const found = new Map<number, number>();
+  let excess = Number.POSITIVE_INFINITY;
+  const order = Array.from(estimates.keys()).sort((a, b) => estimates[b] - estimates[a]);
+  for (const k of order.slice(0, CLIMBED)) {
+    posterior.breakMonth = SEGMENT_MONTHS + 2 * fine * k;
+    const mode = findLocalMode(posterior, start, information, TRY_ROUNDS);
+    if (mode) {
+      excess = Math.min(excess, Math.max(estimates[k] - mode.logEvidence, 0));
+      found.set(k, mode.logEvidence);
+    }
+    yield;
+  }
+  const logEvidences = estimates.map(
+    (estimate, k) => found.get(k) ?? estimate - (found.size > 0 ? excess : 0),
+  );
+  const coarse = { logEvidences, step: 2 * fine, possible };
+  if (chanceOfBreak(unbroken, coarse) < HOPELESS) return NO_TRIES;
+  const modes: LocalMode[] = [];
+  for (let month = SEGMENT_MONTHS; month <= months; month += fine) {
+    posterior.breakMonth = month;
+    const before = modes[modes.length - 1];
+    const isNear = before && posterior.logDensity(before.q, null) > posterior.logDensity(start, null);
+    const mode =
+      (isNear && followMode(posterior, before, 1)) ||
+      findLocalMode(posterior, start, information, TRY_ROUNDS);
+    if (mode) modes.push(mode);
+    if (modes.length % TRIES_PER_SLICE === 0) yield;
+  }
+  return { modes, step: fine, possible };
 }
 
 /** Without the marked months: whether the others are worth a closer look. */
-function chanceOfBreak(unbroken: LocalMode, tries: BreakTries): number {
-  const broken = logPriorOfTry(tries) + logSumExp(tries.modes.map((mode) => mode.logEvidence));
+function chanceOfBreak(
+  unbroken: LocalMode,
+  tries: Pick<BreakTries, 'step' | 'possible'> & { logEvidences: readonly number[] },
+): number {
+  const broken = logPriorOfTry(tries) + logSumExp(tries.logEvidences);
   const without = Math.log1p(-BREAK_PRIOR) + unbroken.logEvidence;
   return Math.exp(broken - logSumExp([broken, without]));
 }
 
 /** Each try stands for `step` of the months in which a break is possible. */
-function logPriorOfTry({ step, possible }: BreakTries): number {
+function logPriorOfTry({ step, possible }: Pick<BreakTries, 'step' | 'possible'>): number {
   return Math.log(BREAK_PRIOR) + Math.log(step / possible);
 }
 

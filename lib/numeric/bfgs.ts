@@ -118,20 +118,23 @@ export function negativeHessian(ascent: Ascent, point: Float64Array, scale: Floa
   return makeSymmetric(hessian, n);
 }
 
-/** The same by one-sided differences over a tenth of each scale: half the work, first-order accurate. */
-export function roughNegativeHessian(ascent: Ascent, point: Float64Array, scale: Float64Array): Float64Array {
+/** The same by one-sided differences from the gradient at the point: half the work, first-order accurate. */
+export function roughNegativeHessian(
+  ascent: Ascent,
+  point: Float64Array,
+  gradient: Float64Array,
+  scale: Float64Array,
+): Float64Array {
   const n = point.length;
   const hessian = new Float64Array(n * n);
   const shifted = point.slice();
-  const at = new Float64Array(n);
   const above = new Float64Array(n);
-  ascent(point, at);
   for (let j = 0; j < n; j++) {
     const step = 0.1 * scale[j];
     shifted[j] = point[j] + step;
     ascent(shifted, above);
     shifted[j] = point[j];
-    for (let i = 0; i < n; i++) hessian[i * n + j] = (at[i] - above[i]) / step;
+    for (let i = 0; i < n; i++) hessian[i * n + j] = (gradient[i] - above[i]) / step;
   }
   return makeSymmetric(hessian, n);
 }
