@@ -17,12 +17,12 @@ const ABSENT = 'not told';
 export function buildErrorScales(words: Words, scales: ErrorScales): ErrorScaleTable {
   const kinds = [
     ['log', 'in percent'],
-    ['raw', 'of a fixed number'],
+    ['raw', 'by a fixed number'],
   ] as const;
   const rows = kinds.map(([id, kind]) => describeScale(words, id, kind, scales[id]));
   return {
     caption: sentence(
-      'A second opinion: the best single fit by plain least squares, without assumptions, for either kind of counting error.',
+      'The best single fit by plain least squares, without assumptions, for either kind of counting error.',
     ),
     columns: [
       'If the counts err',

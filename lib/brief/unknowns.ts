@@ -21,7 +21,7 @@ function describeUnknown(words: Words, unknown: Unknown): string {
   const months = words.facts.report.months;
   switch (unknown.code) {
     case 'saturation-unseen':
-      return `${possessive(name)} growth has not bent yet, so its saturation level is a guess. It shows once growth slows.`;
+      return describeUnseen(words, firm, name);
     case 'competition-unidentified':
       return describeCompetition(words, unknown, firm);
     case 'short-series':
@@ -39,6 +39,13 @@ function describeUnknown(words: Words, unknown: Unknown): string {
     case 'not-converged':
       return 'The sampler had not settled when it reached its limit, so every number here is rough. Run the fit again, or with more months.';
   }
+}
+
+function describeUnseen(words: Words, firm: FirmRole | null, name: string): string {
+  const stated = firm && words.facts.report.beliefs?.addressable?.[firm];
+  return stated
+    ? `The counts add little to what was stated of ${possessive(name)} addressable market, so its saturation level is mostly that. They show it once growth slows.`
+    : `${possessive(name)} growth has not bent yet, so its saturation level is a guess. It shows once growth slows.`;
 }
 
 function describeCompetition(words: Words, unknown: Unknown, firm: FirmRole | null): string {

@@ -3,6 +3,9 @@
  */
 import type { Fit } from '../estimate/fit-run';
 import type { FirmObservations } from '../estimate/observations';
+import type { Priors } from '../estimate/priors';
+import type { LogNormalPrior } from '../estimate/types';
+import { normalCdf } from '../numeric/normal';
 import { CONSTANT_SUM_SPREAD } from '../series/limits';
 import type { FitReport, ParameterRow, Unknown } from './report';
 
@@ -12,7 +15,7 @@ export const SHORT_SERIES_MONTHS = 24;
 export const UNSEEN_SATURATION_BELOW = 0.7;
 /** A coefficient whose prior variance shrank by less than this share is not identified. */
 export const UNIDENTIFIED_BELOW = 0.5;
-/** A median further than this from the prior mean, in prior sd, is a conflict. */
+/** A median further out in a tail of its prior than this many sd of a normal is a conflict. */
 export const CONFLICT_SDS = 2;
 /** Month-to-month correlation of the errors above which the months are fewer than they look. */
 export const STRONG_PERSISTENCE = 0.7;
@@ -46,12 +49,34 @@ export function listUnknowns(
     const persistence = firm === 1 ? errors.persistenceFocal : errors.persistenceRival;
     if (persistence.q50 > STRONG_PERSISTENCE) add('persistent-errors', firm);
   }
-  for (const id of ['r1', 'r2', 'k1', 'k2'] as const) {
-    const { meanLog, sdLog } = fit.priors.parameters[id];
-    const distance = Math.abs(Math.log(row(id).posterior.q50) - meanLog);
-    if (distance > CONFLICT_SDS * sdLog) add('prior-conflict', id.endsWith('1') ? 1 : 2, id);
+  for (const [id, firm] of CONFLICTING) {
+    const below = sharePriorBelow(fit.priors, id, row(id).posterior.q50);
+    if (!(below > normalCdf(-CONFLICT_SDS) && below < normalCdf(CONFLICT_SDS)))
+      add('prior-conflict', firm, id);
   }
   return unknowns;
+}
+
+/** Parameters whose prior may be far from what the counts say, and the firm that each belongs to. */
+const CONFLICTING = [
+  ['r1', 1],
+  ['r2', 2],
+  ['k1', 1],
+  ['k2', 2],
+  ['alpha', 1],
+  ['beta', 2],
+] as const;
+
+/** Share of the prior of a parameter that lies below a value; that of a coefficient has a part near no competition. */
+function sharePriorBelow(
+  { parameters, noCompetition }: Priors,
+  id: (typeof CONFLICTING)[number][0],
+  value: number,
+): number {
+  const below = ({ meanLog, sdLog }: LogNormalPrior) => normalCdf((Math.log(value) - meanLog) / sdLog);
+  if (id !== 'alpha' && id !== 'beta') return below(parameters[id]);
+  const { weight } = noCompetition;
+  return (1 - weight) * below(parameters[id]) + weight * below(noCompetition);
 }
 
 /** A coefficient that is surely small spans a large factor on the way to 0 and is still known for what it is. */

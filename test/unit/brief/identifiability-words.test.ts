@@ -160,7 +160,7 @@ describe('the second opinion', () => {
     const table = describeFor(facts, { errorScales: { log, raw, disagree: false } }).errorScales!;
     expect(table.rows.map(({ kind, verdict }) => [kind, verdict])).toEqual([
       ['in percent', 'Both firms staying'],
-      ['of a fixed number', 'No outcome at all (not identified)'],
+      ['by a fixed number', 'No outcome at all (not identified)'],
     ]);
     expect(table.rows[0].values.map(plain)).toEqual(['50 %', '40 %', '420,000', '380,000']);
     expect(table.rows[1].values.map(plain)).toEqual(['not told', '120 %', '500,000', 'not told']);

@@ -4,6 +4,7 @@ import { describeSampler } from '@/lib/brief/sampler-health';
 import { plainText } from '@/lib/brief/text';
 import { writeUnknowns } from '@/lib/brief/unknowns';
 import { createWords } from '@/lib/brief/words';
+import { USUAL_PRIORS } from '@/lib/estimate/priors';
 import { type Unknown, unknownSchema } from '@/lib/forecast/report';
 import { factsOf, factsWith, oddsOf, spaced } from './brief-cases';
 
@@ -33,6 +34,15 @@ describe('writeUnknowns', () => {
     );
     expect(say({ code: 'prior-conflict', firm: 1, parameter: 'k1' })).toContain(
       'The data pull Quillfern’s saturation level far',
+    );
+  });
+
+  it('does not call a saturation level a guess that somebody stated', () => {
+    const unknowns: Unknown[] = [{ code: 'saturation-unseen', firm: 2, parameter: 'k2' }];
+    const addressable = { focal: null, rival: 4e5, relativeError: 0.3 };
+    const facts = factsWith('coexistence', {}, { unknowns, beliefs: { priors: USUAL_PRIORS, addressable } });
+    expect(plainText(writeUnknowns(createWords(facts))[0]!.sentence)).toMatch(
+      /^The counts add little to what was stated of Marrowby’s addressable market/,
     );
   });
 

@@ -1,11 +1,13 @@
 import { describe, expect, it } from 'vitest';
 import { DEFAULT_FIT_OPTIONS } from '@/lib/estimate/defaults';
+import { USUAL_PRIORS } from '@/lib/estimate/priors';
+import type { FitOptions } from '@/lib/estimate/types';
 import { createOutlookRun } from '@/lib/forecast/outlook-run';
 import type { MonthlySeries } from '@/lib/series/types';
 import { COEXISTING, FIRST_MONTH, simulateSeries } from '../estimate/simulated-market';
 
-function codesOf(series: MonthlySeries): string[] {
-  const run = createOutlookRun({ series, options: DEFAULT_FIT_OPTIONS });
+function codesOf(series: MonthlySeries, options: Partial<FitOptions> = {}): string[] {
+  const run = createOutlookRun({ series, options: { ...DEFAULT_FIT_OPTIONS, ...options } });
   let step = run.next();
   while (!step.done) step = run.next();
   if (!('report' in step)) throw new Error(step.failure);
@@ -38,6 +40,14 @@ describe('what the data cannot tell', () => {
     expect(codesOf({ ...base, rival: base.rival.map((count, t) => (t < 8 ? 0 : count)) })).toContain(
       'late-launch 2',
     );
+  });
+
+  it('names a prior that the counts contradict, of a coefficient too, and none that they do not', () => {
+    const series = simulateSeries(COEXISTING, 60, 0.02, 1);
+    const alpha = { meanLog: Math.log(2.5), sdLog: 0.5 };
+    const priors = { ...USUAL_PRIORS, alpha, noCompetition: 0 };
+    expect(codesOf(series, { priors })).toContain('prior-conflict 1 alpha');
+    expect(codesOf(series).join()).not.toContain('prior-conflict');
   });
 
   it('says that a firm that only falls does not show its own crowding', () => {
