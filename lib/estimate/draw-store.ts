@@ -2,7 +2,7 @@
  * Kept draws of one component: the table that forecasts read, the points themselves (for paths), and per chain the watched quantities
  * ln alpha, ln beta and both firms' ln users at the horizon.
  */
-import { createTrajectory } from '../dynamics/trajectory';
+import { createMonthFlow } from '../dynamics/month-flow';
 import { bulkEss, splitRHat } from '../numeric/convergence';
 import type { RandomStream } from '../numeric/random';
 import type { Posterior } from './posterior';
@@ -31,21 +31,27 @@ export function createDrawStore(posterior: Posterior, chains: number, horizonMon
   const width = posterior.columns.length;
   const { dimension } = posterior;
   const columns = LEVEL_COLUMNS.map((column) => posterior.columns.indexOf(column));
-  const ahead = createTrajectory({ months: horizonMonths + 1, entry1: 0, entry2: 0 });
-  const theta = new Float64Array(columns.length);
+  const flow = createMonthFlow(1);
   const watched = Array.from({ length: chains }, () => [[], [], [], []] as number[][]);
   let table = new Float64Array(width * FIRST_ROOM);
   let points = new Float64Array(dimension * FIRST_ROOM);
   const breakMonths: (number | null)[] = [];
 
+  /** Keeps ln alpha, ln beta and both firms' ln users at the horizon of the row at `at`. */
   const watch = (chain: number, at: number) => {
-    for (let j = 0; j < columns.length; j++) theta[j] = Math.log(table[at + columns[j]]);
-    const isFollowed = ahead.run(theta);
+    const [r1, r2, k1, k2, alpha, beta, n1, n2] = columns;
+    flow.setParameters(table[at + r1], table[at + r2], table[at + alpha], table[at + beta]);
+    flow.state[0] = table[at + n1] / table[at + k1];
+    flow.state[1] = table[at + n2] / table[at + k2];
+    let isFollowed = true;
+    for (let h = 0; isFollowed && h < horizonMonths; h++) isFollowed = flow.advance(0);
     const kept = watched[chain];
-    kept[0].push(theta[4]);
-    kept[1].push(theta[5]);
-    kept[2].push(isFollowed ? Math.max(ahead.logLevel1[horizonMonths], GONE) : GONE);
-    kept[3].push(isFollowed ? Math.max(ahead.logLevel2[horizonMonths], GONE) : GONE);
+    kept[0].push(Math.log(table[at + alpha]));
+    kept[1].push(Math.log(table[at + beta]));
+    for (let i = 0; i < 2; i++) {
+      const logLevel = Math.log(flow.state[i] * table[at + (i === 0 ? k1 : k2)]);
+      kept[2 + i].push(isFollowed && logLevel > GONE ? logLevel : GONE);
+    }
   };
 
   return {

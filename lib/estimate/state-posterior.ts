@@ -167,7 +167,11 @@ export function createStatePosterior(
   };
 
   const addLikelihoodGradient = (gradient: Float64Array) => {
-    for (const part of Object.values(slopes) as Float64Array[]) part.fill(0);
+    slopes.theta.fill(0);
+    slopes.after.fill(0);
+    slopes.observation.fill(0);
+    slopes.process.fill(0);
+    slopes.season.fill(0);
     filter.sweepBack(input, slopes);
     for (let j = 0; j < TOTAL; j++) gradient[j] += slopes.theta[j];
     for (let i = 0; i < 2; i++) {

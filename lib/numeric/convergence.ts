@@ -71,16 +71,28 @@ function rankNormalise(chains: Float64Array[]): Float64Array[] {
   chains.forEach((chain, c) => {
     all.set(chain, c * length);
   });
-  const sorted = Float64Array.from(all).sort();
-  const scores = new Map<number, number>();
+  const sorted = all.slice().sort();
+  const scores = new Float64Array(total);
   for (let start = 0; start < total; ) {
     let end = start + 1;
     while (end < total && sorted[end] === sorted[start]) end++;
     const averageRank = (start + 1 + end) / 2;
-    scores.set(sorted[start], normalQuantile((averageRank - 0.375) / (total + 0.25)));
+    scores.fill(normalQuantile((averageRank - 0.375) / (total + 0.25)), start, end);
     start = end;
   }
-  return chains.map((chain) => chain.map((value) => scores.get(value)!));
+  return chains.map((chain) => chain.map((value) => scores[findSorted(sorted, value)]));
+}
+
+/** A place of a value that is among the sorted ones. */
+function findSorted(sorted: Float64Array, value: number): number {
+  let low = 0;
+  let high = sorted.length - 1;
+  while (low < high) {
+    const middle = (low + high) >> 1;
+    if (sorted[middle] < value) low = middle + 1;
+    else high = middle;
+  }
+  return low;
 }
 
 function foldAtMedian(chains: Float64Array[]): Float64Array[] {

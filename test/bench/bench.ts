@@ -159,7 +159,10 @@ function main(): void {
     return;
   }
   const limit = Number(process.argv[3] ?? DEFAULT_LIMIT);
-  const times = timeMarkets(readMarkets(marketsFile, limit));
+  const markets = readMarkets(marketsFile, limit);
+  // the first market compiles the code; a worker runs for days
+  runMarket(markets[0]);
+  const times = timeMarkets(markets);
   const wall = times.map((time) => time.wall);
   const cpu = times.map((time) => time.cpu);
   console.log(`${times.length} whole markets, seconds:     ${describe(wall)}`);
