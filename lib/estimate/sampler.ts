@@ -45,8 +45,8 @@ const WARM_UP_WINDOWS = [20, 40];
 /** One more where parameters may jump: more of them to learn, and longer tails. */
 const BREAK_WINDOW = 80;
 const STEP_ONLY_WINDOW = 15;
-/** Draws per chain at the first look at convergence, and between later ones as a share of those there are. */
-const FIRST_LOOK = 200;
+/** Wanted ESS per draw and chain at the first look at convergence: half of what independent draws would have; and draws between later looks as a share. */
+const FIRST_LOOK_SHARE = 0.5;
 const LOOK_SHARE = 0.25;
 /** Draws per chain at which a fit that has not converged stops. */
 export const DRAW_LIMIT = 4000;
@@ -60,9 +60,11 @@ const METRIC_SHRINKAGE = 40;
 /** Fewest draws per chain, and visits of a warm-up window, that a fit at its limit still takes. */
 const FEWEST_DRAWS = 100;
 const FEWEST_VISITS = 10;
-/** Integration steps of one slice: some 30 ms; and those after which a component that has not converged stops: some four seconds. */
+/** Integration steps of one slice: some 30 ms. */
 const SLICE_STEPS = 100_000;
-export const STEP_LIMIT = 15_000_000;
+/** Integration steps after which a fit that has not converged stops: some three seconds. Shared out by weight; every component gets LEAST_SHARE. */
+export const STEP_LIMIT = 10_000_000;
+const LEAST_SHARE = 0.15;
 
 export function* runSampler(
   component: ModelComponent,
@@ -76,16 +78,18 @@ export function* runSampler(
   });
   const firstStep = posterior.steps;
   const tuner = createStepSizeTuner(FIRST_STEP, WANTED_ACCEPTANCE);
-  const isOverspent = () => posterior.steps - firstStep > STEP_LIMIT;
+  const stepLimit = STEP_LIMIT * Math.max(component.weight, LEAST_SHARE);
+  const isOverspent = () => posterior.steps - firstStep > stepLimit;
   const slice = createSlice(posterior);
+  const firstLook = Math.max(Math.ceil(options.essLimit / (CHAINS * FIRST_LOOK_SHARE)), FEWEST_DRAWS);
   const warmUp: SamplerProgress = {
     stage: 'warm-up',
     drawsKept: 0,
-    drawsTarget: FIRST_LOOK * CHAINS,
+    drawsTarget: firstLook * CHAINS,
     rHat: null,
     ess: null,
   };
-  const isWarmUpDear = () => posterior.steps - firstStep > STEP_LIMIT / 2;
+  const isWarmUpDear = () => posterior.steps - firstStep > stepLimit / 2;
   /** Coordinates and metric fitted to where all chains have been, the newest points last. */
   const learn = (visited: readonly Float64Array[]) => {
     coordinates = fitCoordinates(posterior, visited);
@@ -130,7 +134,7 @@ export function* runSampler(
     store.perChain < FEWEST_DRAWS ||
     !(isOverspent() || store.perChain >= DRAW_LIMIT || hasConverged())
   ) {
-    const until = Math.max(Math.ceil(store.perChain * (1 + LOOK_SHARE)), FIRST_LOOK);
+    const until = Math.max(Math.ceil(store.perChain * (1 + LOOK_SHARE)), firstLook);
     while (store.perChain < until && !(isOverspent() && store.perChain >= FEWEST_DRAWS)) {
       walkers.forEach((walker, c) => {
         walker.move(metric, tuner.averaged);
