@@ -7,7 +7,8 @@
  */
 import { climb, negativeHessian, roughNegativeHessian } from '../numeric/bfgs';
 import { choleskyOrNull, invertFromCholesky } from '../numeric/cholesky';
-import { createWorkingCoordinates, type WorkingCoordinates } from './coordinates';
+import type { WorkingCoordinates } from './coordinate-map';
+import { createWorkingCoordinates } from './coordinates';
 import { PARAMETERS } from './parameters';
 import type { Posterior } from './posterior';
 

@@ -10,7 +10,7 @@
 import { type BreakChoice, chooseBreaks, type ModelComponent } from './break-choice';
 import type { Flag } from './flag-counts';
 import { flagCounts } from './flag-counts';
-import { estimateEvidence, findLocalMode, type LocalMode } from './local-mode';
+import { findLocalMode, type LocalMode } from './local-mode';
 import type { Observations } from './observations';
 import { fitInformation, type Mode } from './point-fit';
 import type { Posterior } from './posterior';
@@ -27,8 +27,6 @@ export interface ModelChoice extends BreakChoice {
 /** A yearly cycle needs two years (method of the project). */
 export const SEASON_MIN_MONTHS = 24;
 const CYCLES: readonly Harmonics[] = [1, 2, 6];
-/** Log evidence that a finer cycle promises below the best one at which it is not climbed to: promises from afar are rather too large. */
-const UNPROMISING = 3;
 
 /** Log density below the best mode at which a mode is left out: it would hold less than one draw in twenty thousand. */
 const MODE_DEPTH = 10;
@@ -61,8 +59,6 @@ export function* chooseModels(
     for (const harmonics of CYCLES) {
       const seasonal = create({ harmonics, hasBreak: false }, []);
       const start = extend(from.q, seasonal.dimension);
-      const promise = estimateEvidence(seasonal, start, information);
-      if (starts.length === 0 && promise < modes[0].logEvidence - UNPROMISING) continue;
       const extended = findLocalMode(seasonal, start, information) ?? [];
       const found = rankModes([extended, climbFrom(seasonal, starts)].flat());
       starts = [];

@@ -10,8 +10,9 @@
 import { choleskyOrNull, sampleCovariance } from '../numeric/cholesky';
 import { createStream } from '../numeric/random';
 import type { ModelComponent } from './break-choice';
-import { fitCoordinates, type WorkingCoordinates } from './coordinates';
+import type { WorkingCoordinates } from './coordinate-map';
 import { createDrawStore, type DrawStore } from './draw-store';
+import { fitCoordinates } from './fitted-coordinates';
 import type { Posterior } from './posterior';
 import { createStepSizeTuner } from './step-size';
 import { placeWalker } from './walker';

@@ -4,7 +4,7 @@
  */
 import type { RandomStream } from '../numeric/random';
 import type { ModelComponent } from './break-choice';
-import type { WorkingCoordinates } from './coordinates';
+import type { WorkingCoordinates } from './coordinate-map';
 import { createHmcChain } from './hmc';
 import type { LocalMode } from './local-mode';
 

@@ -1,5 +1,6 @@
 import { describe, expect, it } from 'vitest';
-import { createWorkingCoordinates, fitCoordinates } from '@/lib/estimate/coordinates';
+import { createWorkingCoordinates } from '@/lib/estimate/coordinates';
+import { fitCoordinates } from '@/lib/estimate/fitted-coordinates';
 import { buildPriors } from '@/lib/estimate/priors';
 import { createStatePosterior } from '@/lib/estimate/state-posterior';
 import { createStream } from '@/lib/numeric/random';
