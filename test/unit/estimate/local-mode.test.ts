@@ -1,5 +1,5 @@
 import { describe, expect, it } from 'vitest';
-import { findLocalMode } from '@/lib/estimate/local-mode';
+import { estimateEvidence, findLocalMode, followMode } from '@/lib/estimate/local-mode';
 import { fitInformation, fitStart, polishMode } from '@/lib/estimate/point-fit';
 import { buildPriors } from '@/lib/estimate/priors';
 import { createStarts } from '@/lib/estimate/starts';
@@ -24,7 +24,9 @@ function modeOf(truth: Truth, months: number) {
     { focal: 0, rival: 0 },
     { harmonics: 0, hasBreak: false },
   );
-  return findLocalMode(posterior, posterior.place(point.theta, point.errors), fitInformation(point))!;
+  const information = fitInformation(point);
+  const mode = findLocalMode(posterior, posterior.place(point.theta, point.errors), information)!;
+  return { ...mode, posterior, information };
 }
 
 describe('a mode', () => {
@@ -39,6 +41,17 @@ describe('a mode', () => {
       for (let i = j; i < n; i++) slope += mode.metric[i * n + j] * gradient[i];
       expect(Math.abs(slope)).toBeLessThan(0.3);
     }
+  });
+
+  it('is found again from nearby by its shape, and its evidence promised by slope and curvature there', () => {
+    const { posterior, information, ...mode } = modeOf(COEXISTING, 48);
+    const near = mode.q.map((value, j) => value + (j < 6 ? 0.01 : 0));
+    const again = followMode(posterior, { ...mode, q: near }, 2)!;
+    // a climb stops when it promises less than 1e-3
+    expect(Math.abs(again.density - mode.density)).toBeLessThan(0.01);
+    // one-sided differences over a tenth of a spread: a few per cent of each curvature
+    expect(Math.abs(estimateEvidence(posterior, mode.q, information) - mode.logEvidence)).toBeLessThan(0.5);
+    expect(Math.abs(estimateEvidence(posterior, near, information) - mode.logEvidence)).toBeLessThan(1);
   });
 
   it('has an evidence that agrees with importance sampling', () => {
