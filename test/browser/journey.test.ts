@@ -4,7 +4,7 @@
  */
 import { readFileSync } from 'node:fs';
 import { fileURLToPath } from 'node:url';
-import type { Browser } from 'playwright-core';
+import type { Browser, Page } from 'playwright-core';
 import { afterAll, beforeAll, describe, expect, test } from 'vitest';
 import { findViolations, openBrowser, openPage, shoot, type WatchedPage } from './browser';
 import { giveFile, signUp } from './people';
@@ -111,6 +111,7 @@ describe.sequential('from a file to a link', () => {
 
   test('a push redraws the forecast and says whether it moves the destination or only the path', async () => {
     const { page } = analyst;
+    await scrollOn(page);
     const answer = page
       .getByText(/path, not the destination|moves the destination|may move the destination|path/i)
       .first();
@@ -216,6 +217,7 @@ describe.sequential('the brief on other screens', () => {
       .first()
       .click();
     await page.getByText('Where is it heading?').waitFor();
+    await scrollOn(page);
     await page
       .getByText(/path, not the destination/)
       .first()
@@ -230,3 +232,8 @@ describe.sequential('the brief on other screens', () => {
     await context.close();
   });
 });
+
+/** What lies below the first screen comes once somebody reads on. */
+function scrollOn(page: Page): Promise<void> {
+  return page.mouse.wheel(0, 400);
+}

@@ -13,9 +13,9 @@ export function ArchivedNote({ market, canWrite }: ArchivedNoteProps) {
     <Question id="archived" question="Is it still followed?" isScreenOnly>
       <p>This market is archived: it is off the list, and everything in it is kept.</p>
       {canWrite ? (
-        <p>
+        <div>
           <RestoreButton marketId={market.id} name={market.name} />
-        </p>
+        </div>
       ) : null}
     </Question>
   );

@@ -50,9 +50,9 @@ function MarketRow({ market, thisMonth, canWrite }: MarketRowProps) {
           {market.isDemo ? ', a demonstration' : ''}
         </p>
         {canWrite ? (
-          <p className={styles.archive}>
+          <div className={styles.archive}>
             <ArchiveButton marketId={market.id} name={market.name} />
-          </p>
+          </div>
         ) : null}
       </div>
       <div>
