@@ -67,8 +67,8 @@ export default async function FormatPage() {
             An empty cell, “n/a” or “-” is an unknown month. A zero before the first count means not launched.
           </li>
           <li>
-            A zero after the launch, a negative count and a text become gaps, each told with its row and
-            column.
+            A zero after the launch, a negative count and a text become gaps. Each is told with its row,
+            column and value, and you can choose otherwise.
           </li>
         </Rules>
       </Question>

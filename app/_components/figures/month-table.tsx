@@ -27,7 +27,11 @@ export function MonthTable({ series, exclusions, focalName, rivalName }: MonthTa
             <th scope="col">Month</th>
             <th scope="col">{focalName}</th>
             <th scope="col">{rivalName}</th>
-            {reasons.size > 0 ? <th scope="col">Left out because</th> : null}
+            {reasons.size > 0 ? (
+              <th scope="col" className={styles.reason}>
+                Left out because
+              </th>
+            ) : null}
           </tr>
         </thead>
         <tbody>
