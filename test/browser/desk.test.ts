@@ -1,6 +1,7 @@
 /**
  * The series desk in a browser: files of many spellings, an import by keyboard alone, corrections in the grid, two people saving
- * at once, events, the history of revisions, names that would harm a careless program, a large file.
+ * at once, events, the history of revisions, names that would harm a careless program, a large file. In one file, because each
+ * file of these tests starts an app of its own.
  */
 import { createHash } from 'node:crypto';
 import { mkdtempSync, rmSync, writeFileSync } from 'node:fs';

@@ -32,6 +32,7 @@ function IssueNote() {
     <>
       <p>
         Issuing freezes the numbers with your name and today’s date. Later data or edits do not change them.
+        The events on its chart go with it.
       </p>
       <p>A link shows an issued forecast to whoever has it, until it expires or is withdrawn.</p>
     </>
