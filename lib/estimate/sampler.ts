@@ -64,8 +64,8 @@ const FEWEST_VISITS = 10;
 /** Integration steps of one slice: some 30 ms. */
 const SLICE_STEPS = 100_000;
 /** Integration steps after which a fit that has not converged stops: some three seconds. Shared out by weight; every component gets LEAST_SHARE. */
-export const STEP_LIMIT = 10_000_000;
-const LEAST_SHARE = 0.15;
+export const STEP_LIMIT = 12_000_000;
+const LEAST_SHARE = 0.3;
 
 export function* runSampler(
   component: ModelComponent,
