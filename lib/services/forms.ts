@@ -4,7 +4,10 @@
  */
 import { z } from 'zod';
 import { priorSettingsSchema, RELATIVE_ERROR_RANGE } from '../estimate/prior-schema';
-import { pushesSchema } from '../scenario/push-schema';
+import { targetSchema } from '../scenario/answers';
+import { moneySchema } from '../scenario/money';
+import { MAX_SIDE_BY_SIDE } from '../scenario/push-bounds';
+import { pushesSchema, pushSchema } from '../scenario/push-schema';
 import { MAX_CANONICAL_LENGTH } from '../series/canonical-text';
 import { cleanName } from '../series/clean-name';
 import { MAX_SERIES_MONTHS, MAX_YEAR, MIN_YEAR } from '../series/limits';
@@ -126,18 +129,27 @@ export const priorFormSchema = z.object({
 });
 export type PriorForm = z.infer<typeof priorFormSchema>;
 
-export const scenarioFormSchema = z.object({
+/** A named set of pushes, and what is assumed to count money; null: no money is counted. */
+const namedPushes = z.object({ name, pushes: pushesSchema.min(1), money: moneySchema.nullable().optional() });
+
+export const scenarioFormSchema = namedPushes.extend({
   /** An existing scenario to change; absent: a new one. */
   scenarioId: z.string().min(1).optional(),
-  name,
-  pushes: pushesSchema.min(1),
 });
 export type ScenarioForm = z.infer<typeof scenarioFormSchema>;
 
 export const issueFormSchema = z.object({
-  /** What the forecast is compared under; null or empty: the outlook alone. */
-  pushes: pushesSchema.nullable(),
-  scenarioName: name.optional(),
+  /** What the forecast is compared under; empty: the outlook alone. */
+  scenarios: z
+    .array(
+      namedPushes.extend({
+        /** What the counter-push is asked for; absent: nothing. */
+        question: z.object({ target: targetSchema, counter: pushSchema }).nullable().optional(),
+      }),
+    )
+    .max(MAX_SIDE_BY_SIDE),
+  /** Readers of a link may move the sliders of the pushes. */
+  mayReadersTry: z.boolean(),
 });
 export type IssueForm = z.infer<typeof issueFormSchema>;
 

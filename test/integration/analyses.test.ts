@@ -85,7 +85,7 @@ describeOnDatabases('analyses', () => {
       ok: true,
       value: { analyses: { backtest: { state: 'done' } }, facts: { backtest: FAKE_BACKTEST } },
     });
-    const issued = await issueForecast(viewer, marketId, { pushes: null });
+    const issued = await issueForecast(viewer, marketId, { scenarios: [], mayReadersTry: false });
     if (!issued.ok) throw new Error(issued.code);
     const read = await readIssued(viewer, issued.value.issuedId);
     expect(read).toMatchObject({ ok: true, value: { content: { backtest: FAKE_BACKTEST } } });

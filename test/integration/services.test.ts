@@ -74,7 +74,10 @@ describeOnDatabases('services', () => {
   }
 
   async function issue(pushes: Push[] | null = null): Promise<string> {
-    const outcome = await issueForecast(viewer, marketId, { pushes });
+    const outcome = await issueForecast(viewer, marketId, {
+      scenarios: pushes ? [{ name: 'Scenario', pushes }] : [],
+      mayReadersTry: false,
+    });
     if (!outcome.ok) throw new Error(outcome.code);
     return outcome.value.issuedId;
   }
@@ -164,7 +167,7 @@ describeOnDatabases('services', () => {
     expect(page.outlook?.staleReasons).toEqual(['newer-revision']);
     expect(page.fit).toMatchObject({ state: 'queued', isStale: true });
     expect((await listMarkets(viewer))[0]?.fit).toMatchObject({ isStale: true });
-    expect(await issueForecast(viewer, marketId, { pushes: null })).toEqual({
+    expect(await issueForecast(viewer, marketId, { scenarios: [], mayReadersTry: false })).toEqual({
       ok: false,
       code: 'is-stale',
       reasons: ['newer-revision'],
@@ -191,7 +194,10 @@ describeOnDatabases('services', () => {
   });
 
   it('a forecast is not issued before there is an outlook', async () => {
-    expect(await issueForecast(viewer, marketId, { pushes: null })).toEqual({ ok: false, code: 'no-result' });
+    expect(await issueForecast(viewer, marketId, { scenarios: [], mayReadersTry: false })).toEqual({
+      ok: false,
+      code: 'no-result',
+    });
   });
 
   it('an issued forecast holds names, data, outlook and the comparison under its pushes', async () => {
@@ -205,8 +211,8 @@ describeOnDatabases('services', () => {
       revision: { number: 1 },
     });
     expect(content?.report).toEqual(sampleResult().report);
-    expect(content?.scenario?.pushes).toEqual([PUSH]);
-    expect(content?.scenario?.comparison.effect.worstShareDifference.q50).toBeLessThan(0);
+    expect(content?.scenarios?.[0]?.pushes).toEqual([PUSH]);
+    expect(content?.scenarios?.[0]?.comparison.effect.worstShareDifference.q50).toBeLessThan(0);
   });
 
   it('an issued forecast stays as it was after a new revision, a new fit and an edit', async () => {
@@ -322,7 +328,7 @@ describeOnDatabases('services', () => {
         name: 'Theirs',
         pushes: [PUSH],
       }),
-      issueForecast: await issueForecast(as, marketId, { pushes: null }),
+      issueForecast: await issueForecast(as, marketId, { scenarios: [], mayReadersTry: false }),
       createForecastLink: await createForecastLink(as, issuedId, { expiresAt: null }),
       revokeForecastLink: await revokeForecastLink(as, linkId),
     };

@@ -1,0 +1,3 @@
+-- AlterTable
+ALTER TABLE "scenario" ADD COLUMN     "fitId" TEXT,
+ADD COLUMN     "money" JSONB;
