@@ -9,12 +9,7 @@
  */
 import { z } from 'zod';
 import { intervalSchema } from '../forecast/report';
-import { MAX_MONEY, MAX_PUSH_MONTHS } from './push-bounds';
-
-/** Longest label of a currency: "EUR", "1,000 US$". */
-export const MAX_CURRENCY_LENGTH = 16;
-/** Largest discount rate per year: 1,000 %. */
-export const MAX_DISCOUNT_RATE = 10;
+import { MAX_CURRENCY_LENGTH, MAX_DISCOUNT_RATE, MAX_MONEY, MAX_PUSH_MONTHS } from './push-bounds';
 
 const margin = z.number().min(0).max(MAX_MONEY);
 

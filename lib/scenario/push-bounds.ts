@@ -17,3 +17,8 @@ export const MAX_MONEY = 1e15;
 export const MAX_SCENARIO_NAME_LENGTH = 80;
 /** Most scenarios side by side. */
 export const MAX_SIDE_BY_SIDE = 4;
+
+/** Longest label of a currency: "EUR", "1,000 US$". */
+export const MAX_CURRENCY_LENGTH = 16;
+/** Largest discount rate per year: 1,000 %. */
+export const MAX_DISCOUNT_RATE = 10;

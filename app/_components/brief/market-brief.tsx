@@ -7,7 +7,8 @@ import type { MarketPage } from '@/lib/services/read-market';
 import { canWrite as canWriteMarkets, type Viewer } from '@/lib/services/viewer';
 import { BacktestStanding } from '../backtest/backtest-standing';
 import { ChangeSection } from '../change/change-section';
-import { PushProvider } from '../change/push-state';
+import type { KeptScenario } from '../change/kept-scenarios';
+import { ScenarioProvider } from '../change/scenario-state';
 import { FitStanding } from '../fit/fit-standing';
 import { PageFrame } from '../frame/page-frame';
 import { IdentifiabilityStanding } from '../identifiability/identifiability-standing';
@@ -37,13 +38,14 @@ export function MarketBrief({ viewer, page, facts }: MarketBriefProps) {
       <FitStanding page={page} canWrite={canWrite} />
       <WhereSection where={brief.where} />
       <WhySection why={brief.why} />
-      <PushProvider facts={slimFacts(facts)}>
+      <ScenarioProvider facts={slimFacts(facts)}>
         {page.outlook ? (
           <ChangeSection
             change={brief.change}
             marketId={page.market.id}
             fitId={page.outlook.fitId}
-            scenarios={page.scenarios.map(({ id, name, pushes }) => ({ id, name, pushes }))}
+            scenarios={keepScenarios(page)}
+            phaseMap={brief.why.phaseMap}
             canWrite={canWrite}
           />
         ) : null}
@@ -59,10 +61,14 @@ export function MarketBrief({ viewer, page, facts }: MarketBriefProps) {
         >
           <BacktestStanding page={page} canWrite={canWrite} />
         </TrustSection>
-        <IssueSection page={page} canWrite={canWrite} />
-      </PushProvider>
+        <IssueSection page={page} scenarios={keepScenarios(page)} canWrite={canWrite} />
+      </ScenarioProvider>
     </PageFrame>
   );
+}
+
+function keepScenarios({ scenarios }: MarketPage): KeptScenario[] {
+  return scenarios.map(({ id, name, pushes, money, fitId }) => ({ id, name, pushes, money, fitId }));
 }
 
 function DataFacts({ page, dataLine }: { page: MarketPage; dataLine: string }) {

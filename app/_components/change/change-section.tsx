@@ -1,15 +1,15 @@
 'use client';
 
-/** What would change it? A push to try, what it does, and the scenarios that were kept. The trial loads after the page. */
+/** What would change it? Pushes to try, what they do, and the scenarios that were kept. The trial loads when it is wanted. */
 import dynamic from 'next/dynamic';
 import { useRef } from 'react';
 import { useIsWanted } from '@/app/_lib/use-is-wanted';
-import type { ChangeSection as ChangeSectionData } from '@/lib/brief/types';
+import type { ChangeSection as ChangeSectionData, PhaseMap } from '@/lib/brief/types';
 import { Question } from '../frame/question';
 import { SensitivityFigure } from '../identifiability/sensitivity-figure';
 import { SentenceText } from '../text/sentence-text';
 import styles from './change.module.css';
-import type { KeptScenario } from './save-scenario';
+import type { KeptScenario } from './kept-scenarios';
 
 const PushTrial = dynamic(() => import('./push-trial').then((module) => module.PushTrial), {
   ssr: false,
@@ -21,6 +21,7 @@ interface ChangeSectionProps {
   marketId: string;
   fitId: string;
   scenarios: KeptScenario[];
+  phaseMap: PhaseMap;
   canWrite: boolean;
 }
 

@@ -1,49 +1,43 @@
 'use client';
 
-/** The push being tried: controls, what it does, its figures. Computed in the browser on the posterior draws, fetched once. */
-import { useMemo } from 'react';
-import { buildPushBrief } from '@/lib/brief/push-brief';
+/** The scenario being tried, on the posterior draws that the browser fetched once: controls, what it does, figures, answers, what is kept. */
+import type { PhaseMap } from '@/lib/brief/types';
 import { Button } from '../controls/button';
-import { NumberLocale } from '../controls/number-locale';
 import styles from './change.module.css';
-import { PushAnswer } from './push-answer';
-import { PushControls } from './push-controls';
-import { PushFigures } from './push-figures';
-import { usePush } from './push-state';
-import { type KeptScenario, SaveScenario } from './save-scenario';
-import { useComparison } from './use-comparison';
+import { type KeptScenario, KeptScenarios } from './kept-scenarios';
+import { ScenarioDesk } from './scenario-desk';
+import { useScenario } from './scenario-state';
+import { usePrepared } from './use-comparison';
 import { useDraws } from './use-draws';
 
 interface PushTrialProps {
   marketId: string;
   fitId: string;
   scenarios: KeptScenario[];
+  phaseMap: PhaseMap;
   canWrite: boolean;
 }
 
-export function PushTrial({ marketId, fitId, scenarios, canWrite }: PushTrialProps) {
-  const { facts, push } = usePush();
+export function PushTrial({ marketId, fitId, scenarios, phaseMap, canWrite }: PushTrialProps) {
+  const { facts } = useScenario();
   const [fetched, retry] = useDraws(marketId, fitId);
   const draws = fetched.state === 'ready' ? fetched.draws : null;
-  const options = { horizonMonths: facts.report.outlook.horizonMonths, seed: facts.report.seed };
-  const comparison = useComparison(draws, push, options);
-  const brief = useMemo(() => comparison && buildPushBrief(comparison, facts), [comparison, facts]);
+  const { outlook, seed } = facts.report;
+  const prepared = usePrepared(draws, outlook.horizonMonths, seed);
   return (
     <>
-      <div className={styles.layout}>
-        <NumberLocale>
-          <PushControls isDisabled={!brief} />
-        </NumberLocale>
-        <div className={styles.answer}>
-          {brief ? (
-            <PushAnswer push={brief} />
-          ) : (
-            <Waiting isFailed={fetched.state === 'failed'} onRetry={retry} />
-          )}
-        </div>
-      </div>
-      <div className={styles.figuresPlace}>{brief ? <PushFigures push={brief} /> : null}</div>
-      <SaveScenario marketId={marketId} scenarios={scenarios} canWrite={canWrite} />
+      <ScenarioDesk
+        prepared={prepared}
+        phaseMap={phaseMap}
+        waiting={<Waiting isFailed={fetched.state === 'failed'} onRetry={retry} />}
+      />
+      <KeptScenarios
+        marketId={marketId}
+        fitId={fitId}
+        scenarios={scenarios}
+        prepared={prepared}
+        canWrite={canWrite}
+      />
     </>
   );
 }

@@ -22,13 +22,18 @@ export function NumbersTable({ table, isLive = false }: NumbersTableProps) {
       onToggle={(event) => setIsOpen(event.currentTarget.open)}
     >
       <summary>Table of numbers</summary>
-      {isOpen || !isLive ? (
-        // biome-ignore lint/a11y/noNoninteractiveTabindex: a frame that scrolls must be reachable by keyboard
-        <section className={styles.scroller} aria-label={table.title} tabIndex={0}>
-          <Numbers table={table} />
-        </section>
-      ) : null}
+      {isOpen || !isLive ? <NumbersGrid table={table} /> : null}
     </details>
+  );
+}
+
+/** A table of numbers in the open, in a frame of its own. */
+export function NumbersGrid({ table }: { table: FigureTable }) {
+  return (
+    // biome-ignore lint/a11y/noNoninteractiveTabindex: a frame that scrolls must be reachable by keyboard
+    <section className={styles.scroller} aria-label={table.title} tabIndex={0}>
+      <Numbers table={table} />
+    </section>
   );
 }
 

@@ -24,7 +24,13 @@ const HEAD_TURN = 0.5;
 const FAINTEST_ARROW = 0.12;
 const EQUILIBRIUM_RADIUS = 5.5;
 
-export function PhaseLayers({ map, labels }: { map: PhaseMap; labels: PlacedLabel[] }) {
+interface PhaseLayersProps {
+  map: PhaseMap;
+  labels: PlacedLabel[];
+  pushed?: MapPoint[] | undefined;
+}
+
+export function PhaseLayers({ map, labels, pushed }: PhaseLayersProps) {
   const frame = usePlotArea();
   const scaleX = useXAxisScale();
   const scaleY = useYAxisScale();
@@ -47,6 +53,7 @@ export function PhaseLayers({ map, labels }: { map: PhaseMap; labels: PlacedLabe
         <polyline points={listPoints(map.separatrix, place)} className={styles.separatrix} />
       ) : null}
       <Paths map={map} place={place} />
+      {pushed ? <polyline points={listPoints(pushed, place)} className={styles.pushed} /> : null}
       {map.equilibria.map((equilibrium) => renderEquilibrium(equilibrium, place))}
       {labels.map((label) => renderLabel(label, frame))}
     </ZIndexLayer>

@@ -3,7 +3,7 @@
 /** The phase map inside Recharts: the cloud of destinations as a scatter, everything else as layers over it. */
 import { Scatter, ScatterChart, type ScatterShapeProps } from 'recharts';
 import { markColour } from '@/app/_lib/tone';
-import type { PhaseMap, PlacedLabel, Tone } from '@/lib/brief/types';
+import type { MapPoint, PhaseMap, PlacedLabel, Tone } from '@/lib/brief/types';
 import { MapFrame, renderMapAxes } from './map-axes';
 import type { MapLayout } from './map-layout';
 import { PhaseLayers } from './phase-layers';
@@ -13,9 +13,11 @@ interface PhasePlotProps {
   labels: PlacedLabel[];
   layout: MapLayout;
   size: { width: number; height: number };
+  /** A path under pushes, drawn over the path ahead. */
+  pushed?: MapPoint[];
 }
 
-export function PhasePlot({ map, labels, layout, size }: PhasePlotProps) {
+export function PhasePlot({ map, labels, layout, size, pushed }: PhasePlotProps) {
   const cloud = map.cloud.map(({ point, tone }) => ({ x: point[0], y: point[1], tone }));
   return (
     <ScatterChart width={size.width} height={size.height} margin={layout.margin} accessibilityLayer={false}>
@@ -27,7 +29,7 @@ export function PhasePlot({ map, labels, layout, size }: PhasePlotProps) {
       )}
       <MapFrame xLabel={map.xLabel} yLabel={map.yLabel} />
       <Scatter data={cloud} shape={renderCloudPoint} isAnimationActive={false} />
-      <PhaseLayers map={map} labels={labels} />
+      <PhaseLayers map={map} labels={labels} pushed={pushed} />
     </ScatterChart>
   );
 }

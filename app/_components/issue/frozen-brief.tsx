@@ -3,16 +3,21 @@
  * its cautions. It reads nothing but the record, so it stays as it was whatever happens to the market.
  */
 import { formatDay, LOCALE } from '@/app/_lib/locale';
+import { slimFacts } from '@/app/_lib/slim-facts';
 import type { IssuedForecast } from '@/lib/issue/format';
-import { openIssued } from '@/lib/issue/open';
+import { factsOfIssued, listScenarios, type OpenedScenario, openIssued } from '@/lib/issue/open';
 import { TrustSection } from '../brief/trust-section';
 import { WhereSection } from '../brief/where-section';
 import { WhySection } from '../brief/why-section';
 import { PushAnswer } from '../change/push-answer';
 import { PushFigures } from '../change/push-figures';
+import { ReaderTrial } from '../change/reader-trial';
+import { SideBySideView } from '../change/side-by-side-figure';
+import { ToldSentences } from '../change/told-sentences';
 import { PageFrame, type PageViewer } from '../frame/page-frame';
 import { Question } from '../frame/question';
 import { SensitivityFigure } from '../identifiability/sensitivity-figure';
+import styles from './issue.module.css';
 
 interface FrozenBriefProps {
   forecast: IssuedForecast;
@@ -20,7 +25,7 @@ interface FrozenBriefProps {
 }
 
 export function FrozenBrief({ forecast, viewer }: FrozenBriefProps) {
-  const { brief, scenario, stamp } = openIssued(forecast, { locale: LOCALE });
+  const { brief, scenarios, sideBySide, trial, stamp } = openIssued(forecast, { locale: LOCALE });
   const { sensitivity } = brief.change;
   return (
     <PageFrame
@@ -30,17 +35,19 @@ export function FrozenBrief({ forecast, viewer }: FrozenBriefProps) {
     >
       <WhereSection where={brief.where} />
       <WhySection why={brief.why} />
-      {scenario || sensitivity ? (
-        <Question
-          id="change"
-          question={brief.change.question}
-          note={scenario ? <ScenarioNote name={scenario.name} pushes={scenario.pushes} /> : undefined}
-        >
-          {scenario ? (
-            <>
-              <PushAnswer push={scenario.push} />
-              <PushFigures push={scenario.push} />
-            </>
+      {scenarios.length > 0 || sensitivity ? (
+        <Question id="change" question={brief.change.question}>
+          {scenarios.map((scenario) => (
+            <FrozenScenario key={scenario.name} scenario={scenario} />
+          ))}
+          {sideBySide ? <SideBySideView view={sideBySide} names={forecast.market} /> : null}
+          {trial && scenarios.length > 0 ? (
+            <ReaderTrial
+              facts={slimFacts(factsOfIssued(forecast))}
+              trial={trial}
+              pushes={listScenarios(forecast)[0]?.pushes ?? []}
+              phaseMap={brief.why.phaseMap}
+            />
           ) : null}
           {sensitivity ? <SensitivityFigure figure={sensitivity} /> : null}
         </Question>
@@ -59,13 +66,19 @@ function IssuedFacts({ forecast, dataLine }: { forecast: IssuedForecast; dataLin
   );
 }
 
-function ScenarioNote({ name, pushes }: { name: string; pushes: string[] }) {
+function FrozenScenario({ scenario }: { scenario: OpenedScenario }) {
+  const { name, pushes, push, money, answers } = scenario;
   return (
-    <>
-      <p>Scenario: {name}</p>
-      {pushes.map((push) => (
-        <p key={push}>{push}.</p>
-      ))}
-    </>
+    <section className={styles.scenario} aria-label={`Scenario: ${name}`}>
+      <h3 className={styles.scenarioName}>{name}</h3>
+      <ul className={styles.pushes}>
+        {pushes.map((one) => (
+          <li key={one}>{one}.</li>
+        ))}
+      </ul>
+      <PushAnswer push={push} />
+      <ToldSentences sentences={[...answers.smallestPush, ...answers.lastUsefulMonth, ...money]} />
+      <PushFigures push={push} />
+    </section>
   );
 }
