@@ -186,7 +186,7 @@ function KeptScenarioLine({
       <span className={styles.keptActions}>
         <Button
           kind="text"
-          aria-label={`Bring ${name} back into the controls`}
+          aria-label={`Bring back ${name}`}
           onClick={() => change(() => ({ pushes: [...pushes], open: 0, money }))}
         >
           Bring back
@@ -225,7 +225,7 @@ function KeptScenarioLine({
           {canWrite ? (
             <Button
               kind="text"
-              aria-label={`Run ${name} on this fit`}
+              aria-label={`Run it on this fit: ${name}`}
               onClick={() => run(save({ scenarioId: id, name }))}
             >
               Run it on this fit

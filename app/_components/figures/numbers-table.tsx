@@ -43,11 +43,15 @@ function Numbers({ table }: { table: FigureTable }) {
       <caption>{table.title}</caption>
       <thead>
         <tr>
-          {table.columns.map((column) => (
-            <th key={column} scope="col">
-              {column}
-            </th>
-          ))}
+          {table.columns.map((column) =>
+            column === '' ? (
+              <td key="corner" />
+            ) : (
+              <th key={column} scope="col">
+                {column}
+              </th>
+            ),
+          )}
         </tr>
       </thead>
       <tbody>
