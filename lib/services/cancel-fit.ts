@@ -9,11 +9,12 @@ export async function cancelFit(
   marketId: string,
 ): Promise<Success<{ fitId: string }> | NotAllowed | NotFound | Refusal<'nothing-running'>> {
   if (!canWrite(viewer)) return refuse('not-allowed');
-  const { workspaceId } = viewer;
+  const { workspaceId, userId } = viewer;
   const fit = await latestFit({ workspaceId, marketId });
   if (!fit) return refuse('not-found');
   if (fit.state !== 'queued' && fit.state !== 'running') return refuse('nothing-running');
-  const end = await askCancel({ workspaceId, fitId: fit.id });
+  const audit = { userId, action: 'cancel-fit', detail: { marketId, wasRunning: fit.state === 'running' } };
+  const end = await askCancel({ workspaceId, fitId: fit.id, audit });
   if (end === null) return refuse('not-found');
   return end === 'ended' ? refuse('nothing-running') : succeed({ fitId: fit.id });
 }

@@ -114,18 +114,20 @@ export async function insertFit(
   return id;
 }
 
-/** 'asked': its worker will end it; 'ended': it had ended before; null: the workspace has no such fit. */
+/** 'asked': its worker will end it; 'ended': it had ended well or failed before; null: the workspace has no such fit. */
 export async function askCancel(args: {
   workspaceId: string;
   fitId: string;
+  audit?: Deed;
 }): Promise<'cancelled' | 'asked' | 'ended' | null> {
-  const { fitId: id, workspaceId } = args;
+  const { fitId: id, workspaceId, audit } = args;
   return getPrisma().$transaction(async (db) => {
     await cancelUnfinishedFits(db, { id, workspaceId });
     const row = await db.fit.findFirst({ where: { id, workspaceId }, select: { state: true } });
     if (!row) return null;
-    if (row.state === 'running') return 'asked';
-    return row.state === 'cancelled' ? 'cancelled' : 'ended';
+    if (row.state !== 'running' && row.state !== 'cancelled') return 'ended';
+    if (audit) await insertAuditEntry(db, workspaceId, { ...audit, subjectType: 'fit', subjectId: id });
+    return row.state === 'running' ? 'asked' : 'cancelled';
   });
 }
 
