@@ -9,66 +9,78 @@ import { askCounterPush, type CounterAnswers } from './ask-counter-push';
 import { ChanceMapFigure } from './chance-map-figure';
 import styles from './change.module.css';
 import { CounterForm, type CounterQuestion, firstQuestion } from './counter-form';
+import { OldAnswer } from './old-answer';
 import { addPush } from './scenario-draft';
 import { useScenario } from './scenario-state';
 import { ToldSentences } from './told-sentences';
 import { useAnswerRun } from './use-answer-run';
 
 export function AnswersPanel({ prepared }: { prepared: PreparedScenario }) {
-  const { facts, pushes, scale, words, change, draft } = useScenario();
+  const { facts, pushes, scale, words } = useScenario();
   const [question, setQuestion] = useState<CounterQuestion>(() => firstQuestion(facts, scale, pushes));
-  const [answer, ask, stop] = useAnswerRun<CounterAnswers>();
+  const { answer, isOld, ask, stop } = useAnswerRun<CounterAnswers>([question, ...pushes]);
   const isRunning = answer.state === 'running';
   return (
-    <section className={styles.panel} aria-label="The smallest answer">
+    <section className={`${styles.panel} ${styles.wide}`} aria-label="The smallest answer">
       <h3 className={styles.figureName}>What is the smallest answer?</h3>
-      <CounterForm question={question} onChange={setQuestion} />
-      <p className={styles.actions}>
-        <Button
-          isBusy={isRunning}
-          busyLabel="Looking"
-          onClick={() => ask(askCounterPush(prepared, { ...question, pushes }, scale))}
-        >
-          Look for it
-        </Button>
-        {isRunning ? (
-          <Button kind="text" onClick={stop}>
-            Stop
-          </Button>
-        ) : null}
-      </p>
-      {isRunning ? (
-        <progress
-          className={styles.progress}
-          max={1}
-          value={answer.progress}
-          aria-label="Part of the draws followed"
-        />
-      ) : null}
-      <div aria-live="polite">
-        {answer.state === 'done' ? (
-          <>
-            <ToldSentences
-              sentences={writeSmallestPush(words, answer.answer.smallest, draft.money?.currency)}
+      <div className={styles.layout}>
+        <div className={styles.panel}>
+          <CounterForm question={question} onChange={setQuestion} />
+          <p className={styles.actions}>
+            <Button
+              isBusy={isRunning}
+              busyLabel="Looking"
+              onClick={() => ask(askCounterPush(prepared, { ...question, pushes }, scale))}
+            >
+              Look for it
+            </Button>
+            {isRunning ? (
+              <Button kind="text" onClick={stop}>
+                Stop
+              </Button>
+            ) : null}
+          </p>
+          {isRunning ? (
+            <progress
+              className={styles.progress}
+              max={1}
+              value={answer.progress}
+              aria-label="Part of the draws followed"
             />
-            {answer.answer.lastMonth ? (
-              <ToldSentences sentences={writeLastUsefulMonth(words, answer.answer.lastMonth)} />
-            ) : null}
-            {'push' in answer.answer.smallest ? (
-              <TakeButton
-                onTake={() => {
-                  const { smallest } = answer.answer;
-                  if ('push' in smallest) change((known) => addPush(known, smallest.push));
-                }}
-              />
-            ) : null}
-          </>
-        ) : null}
+          ) : null}
+        </div>
+        <div className={styles.panel}>
+          <div aria-live="polite">
+            {answer.state === 'done' && isOld ? <OldAnswer /> : null}
+            {answer.state === 'done' ? <Told answers={answer.answer} /> : null}
+          </div>
+          {answer.state === 'done' ? (
+            <ChanceMapFigure
+              map={answer.answer.chanceMap}
+              goal={spellTarget(words, answer.answer.chanceMap.target)}
+            />
+          ) : (
+            <p className={styles.waiting}>
+              Say what is to be kept; then the draws are searched for the smallest push that keeps it, for the
+              last month in which it may start, and for the chance at other sizes and starts.
+            </p>
+          )}
+        </div>
       </div>
-      {answer.state === 'done' ? (
-        <ChanceMapFigure map={answer.answer.chanceMap} goal={spellTarget(words, question.target)} />
-      ) : null}
     </section>
+  );
+}
+
+function Told({ answers: { smallest, lastMonth } }: { answers: CounterAnswers }) {
+  const { words, draft, change } = useScenario();
+  return (
+    <>
+      <ToldSentences sentences={writeSmallestPush(words, smallest, draft.money?.currency)} />
+      {lastMonth ? <ToldSentences sentences={writeLastUsefulMonth(words, lastMonth)} /> : null}
+      {'push' in smallest ? (
+        <TakeButton onTake={() => change((known) => addPush(known, smallest.push))} />
+      ) : null}
+    </>
   );
 }
 

@@ -13,6 +13,7 @@ import { Button } from '../controls/button';
 import { TextField } from '../controls/text-field';
 import styles from './change.module.css';
 import { NumberInput } from './number-input';
+import { OldAnswer } from './old-answer';
 import { useScenario } from './scenario-state';
 import { ToldSentences } from './told-sentences';
 import { useAnswerRun } from './use-answer-run';
@@ -72,7 +73,7 @@ function MoneyFields({ money, onChange }: MoneyFieldsProps) {
   const { words, scale } = useScenario();
   const { focal, rival } = money.marginPerUserMonth;
   return (
-    <div className={styles.form}>
+    <div className={styles.moneyFields}>
       <TextField
         label="Currency, as a label"
         value={money.currency}
@@ -114,8 +115,8 @@ function MoneyFields({ money, onChange }: MoneyFieldsProps) {
 /** Up to which spend a month the open push pays. */
 function BreakEvenQuestion({ prepared, money }: { prepared: PreparedScenario; money: Money }) {
   const { draft, words } = useScenario();
-  const [answer, ask, stop] = useAnswerRun<BreakEven>();
   const push = draft.pushes[draft.open];
+  const { answer, isOld, ask, stop } = useAnswerRun<BreakEven>([push, money, ...draft.pushes]);
   if (!push || !(push.size > 0)) return null;
   const others = draft.pushes.filter((one) => one !== push && one.size > 0);
   const isRunning = answer.state === 'running';
@@ -136,6 +137,7 @@ function BreakEvenQuestion({ prepared, money }: { prepared: PreparedScenario; mo
         ) : null}
       </p>
       <div aria-live="polite">
+        {answer.state === 'done' && isOld ? <OldAnswer /> : null}
         {answer.state === 'done' ? <ToldSentences sentences={writeBreakEven(words, answer.answer)} /> : null}
       </div>
     </>

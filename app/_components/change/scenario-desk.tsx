@@ -42,8 +42,8 @@ export function ScenarioDesk({ prepared, phaseMap, waiting }: ScenarioDeskProps)
       {comparison && prepared ? (
         <div className={styles.further}>
           <PushPathMap map={phaseMap} comparison={comparison} />
-          <AnswersPanel prepared={prepared} />
           <MoneyPanel prepared={prepared} comparison={comparison} />
+          <AnswersPanel prepared={prepared} />
         </div>
       ) : null}
     </NumberLocale>
