@@ -50,7 +50,7 @@ export function AnswersPanel({ prepared }: { prepared: PreparedScenario }) {
           ) : null}
         </div>
         <div className={styles.panel}>
-          <div aria-live="polite">
+          <div aria-live="polite" className={styles.answered}>
             {answer.state === 'done' && isOld ? <OldAnswer /> : null}
             {answer.state === 'done' ? <Told answers={answer.answer} /> : null}
           </div>

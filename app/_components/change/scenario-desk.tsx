@@ -36,9 +36,11 @@ export function ScenarioDesk({ prepared, phaseMap, waiting }: ScenarioDeskProps)
           <PushTabs />
           <PushControls isDisabled={!brief} />
         </div>
-        <div className={styles.answer}>{brief ? <PushAnswer push={brief} /> : waiting}</div>
+        <div className={styles.answer}>
+          {brief ? <PushAnswer push={brief} /> : waiting}
+          <div className={styles.figuresPlace}>{brief ? <PushFigures push={brief} /> : null}</div>
+        </div>
       </div>
-      <div className={styles.figuresPlace}>{brief ? <PushFigures push={brief} /> : null}</div>
       {comparison && prepared ? (
         <div className={styles.further}>
           <PushPathMap map={phaseMap} comparison={comparison} />

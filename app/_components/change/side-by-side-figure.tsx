@@ -37,7 +37,7 @@ export function SideBySideView({ view, names }: SideBySideViewProps) {
     { id: 'rival', label: names.rivalName },
   ] as const;
   return (
-    <FigureFrame caption={view.caption} table={view.table} isLive>
+    <FigureFrame caption={view.caption} table={null}>
       <h3 className={styles.figureName}>Side by side</h3>
       <ViewSwitch label="What the chart counts" views={views} value={key} onChange={setKey} />
       <p className={styles.names}>
@@ -59,7 +59,7 @@ export function SideBySideView({ view, names }: SideBySideViewProps) {
           {size ? <SideBySidePlot rows={view.figures[key]} isShare={key === 'share'} size={size} /> : null}
         </div>
       </div>
-      <NumbersGrid table={view.table} />
+      <NumbersGrid table={view.table} isWhole />
     </FigureFrame>
   );
 }

@@ -10,7 +10,8 @@ import { NumbersTable } from './numbers-table';
 
 interface FigureFrameProps {
   caption: Sentence;
-  table: FigureTable;
+  /** null: the figure shows its numbers itself. */
+  table: FigureTable | null;
   /** The figure follows a slider. */
   isLive?: boolean;
   children: ReactNode;
@@ -23,7 +24,7 @@ export function FigureFrame({ caption, table, isLive = false, children }: Figure
       <figcaption className={styles.caption}>
         <SentenceText sentence={caption} />
       </figcaption>
-      <NumbersTable table={table} isLive={isLive} />
+      {table ? <NumbersTable table={table} isLive={isLive} /> : null}
     </figure>
   );
 }

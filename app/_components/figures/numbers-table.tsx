@@ -27,11 +27,22 @@ export function NumbersTable({ table, isLive = false }: NumbersTableProps) {
   );
 }
 
+interface NumbersGridProps {
+  table: FigureTable;
+  /** All rows show at once. */
+  isWhole?: boolean;
+}
+
 /** A table of numbers in the open, in a frame of its own. */
-export function NumbersGrid({ table }: { table: FigureTable }) {
+export function NumbersGrid({ table, isWhole = false }: NumbersGridProps) {
   return (
-    // biome-ignore lint/a11y/noNoninteractiveTabindex: a frame that scrolls must be reachable by keyboard
-    <section className={styles.scroller} aria-label={table.title} tabIndex={0}>
+    <section
+      className={styles.scroller}
+      data-whole={isWhole || undefined}
+      aria-label={table.title}
+      // biome-ignore lint/a11y/noNoninteractiveTabindex: a frame that scrolls must be reachable by keyboard
+      tabIndex={0}
+    >
       <Numbers table={table} />
     </section>
   );
