@@ -21,7 +21,6 @@ const INPUTS = [
   inputOf(simulateSeries(COEXISTING, 30, 0.03, 1), 1),
   inputOf(simulateSeries(RIVAL_LOSES, 36, 0.03, 2), 2),
   inputOf(simulateSeries(COEXISTING, 24, 0.05, 3), 1),
-  inputOf(simulateSeries(RIVAL_LOSES, 20, 0.02, 4), 9),
 ];
 
 function digestAlone(input: FitInput): string {
@@ -72,11 +71,11 @@ describe('the numbers of a fit', () => {
     expect(new Set(alone).size).toBe(INPUTS.length);
   });
 
-  it.each([1, 2, 3])('are the same whatever fits run between its slices, order %d', (seed) => {
+  it.each([1, 2])('are the same whatever fits run between its slices, order %d', (seed) => {
     expect(digestsInterleaved(seed)).toEqual(alone);
   });
 
-  it.each([1, 2, 4])(
+  it.each([1, 3])(
     'are the same from %d processes',
     async (processes) => {
       expect(await digestsOfProcesses(processes)).toEqual(alone);
