@@ -75,8 +75,8 @@ describe.sequential('a scenario of three pushes', () => {
     await page.getByRole('button', { name: 'Add another push' }).click();
     await page.getByLabel('Begin from').selectOption('price-promotion');
     await page.getByRole('button', { name: 'Add another push' }).click();
-    await page.getByRole('radio', { name: 'Pull' }).check();
-    await page.getByRole('radio', { name: 'For good' }).check();
+    await page.getByRole('radio', { name: 'Pull', exact: true }).check();
+    await page.getByRole('radio', { name: 'For good', exact: true }).check();
     expect(await tabsOf(page).count()).toBe(3);
     await expect.poll(() => deskOf(page).textContent()).toMatch(/3 pushes by/);
     expect(await findViolations(page)).toEqual([]);
@@ -85,9 +85,13 @@ describe.sequential('a scenario of three pushes', () => {
   test('is undone and done again step by step', async () => {
     const { page } = analyst;
     await page.getByRole('button', { name: 'Undo' }).click();
-    await expect.poll(() => page.getByRole('radio', { name: 'For a time' }).isChecked()).toBe(true);
+    await expect
+      .poll(() => page.getByRole('radio', { name: 'For a time', exact: true }).isChecked())
+      .toBe(true);
     await page.getByRole('button', { name: 'Redo' }).click();
-    await expect.poll(() => page.getByRole('radio', { name: 'For good' }).isChecked()).toBe(true);
+    await expect
+      .poll(() => page.getByRole('radio', { name: 'For good', exact: true }).isChecked())
+      .toBe(true);
     await page.getByRole('button', { name: 'Remove it' }).click();
     await expect.poll(() => tabsOf(page).count()).toBe(2);
     await page.getByRole('button', { name: 'Undo' }).click();
@@ -109,13 +113,13 @@ describe.sequential('a scenario of three pushes', () => {
   });
 
   test.each([
-    'push=',
-    'push=9_recruits_3_6_1000_1_3',
-    'push=2_recruits_3_6_NaN_1_3',
-    `push=${'9'.repeat(3000)}`,
-    'push=2_recruits_3_6_1e99_1_3&money=%00__',
-    'push=%E0%A4%A',
-  ])('is not taken from a bad address: %s', async (query) => {
+    { what: 'nothing', query: 'push=' },
+    { what: 'a third firm', query: 'push=9_recruits_3_6_1000_1_3' },
+    { what: 'no number', query: 'push=2_recruits_3_6_NaN_1_3' },
+    { what: 'a long row of digits', query: `push=${'9'.repeat(3000)}` },
+    { what: 'a size beyond all bounds', query: 'push=2_recruits_3_6_1e99_1_3&money=%00__' },
+    { what: 'a broken escape', query: 'push=%E0%A4%A' },
+  ])('is not taken from an address with $what', async ({ query }) => {
     const { page, context, errors } = await openPage(browser, {
       storageState: await analyst.context.storageState(),
     });

@@ -16,22 +16,22 @@ import { ToldSentences } from './told-sentences';
 import { useAnswerRun } from './use-answer-run';
 
 export function AnswersPanel({ prepared }: { prepared: PreparedScenario }) {
-  const { facts, pushes, scale, words } = useScenario();
+  const { facts, pushes, scale, words, setAsked } = useScenario();
   const [question, setQuestion] = useState<CounterQuestion>(() => firstQuestion(facts, scale, pushes));
   const { answer, isOld, ask, stop } = useAnswerRun<CounterAnswers>([question, ...pushes]);
   const isRunning = answer.state === 'running';
+  const look = () => {
+    setAsked(question);
+    ask(askCounterPush(prepared, { ...question, pushes }, scale));
+  };
   return (
     <section className={`${styles.panel} ${styles.wide}`} aria-label="The smallest answer">
       <h3 className={styles.figureName}>What is the smallest answer?</h3>
       <div className={styles.layout}>
         <div className={styles.panel}>
-          <CounterForm question={question} onChange={setQuestion} />
+          <CounterForm question={question} words={words} scale={scale} onChange={setQuestion} />
           <p className={styles.actions}>
-            <Button
-              isBusy={isRunning}
-              busyLabel="Looking"
-              onClick={() => ask(askCounterPush(prepared, { ...question, pushes }, scale))}
-            >
+            <Button isBusy={isRunning} busyLabel="Looking" onClick={look}>
               Look for it
             </Button>
             {isRunning ? (

@@ -1,8 +1,10 @@
 'use client';
 
-import type { BriefFacts } from '@/lib/brief/facts';
 /** The share to keep, until when and how surely; and the kind of push that is to keep it. */
+import { memo } from 'react';
+import type { BriefFacts } from '@/lib/brief/facts';
 import { spellPushField } from '@/lib/brief/push-words';
+import type { Words } from '@/lib/brief/words';
 import type { PushKind } from '@/lib/dynamics/push';
 import type { Target } from '@/lib/scenario/answers';
 import { firstPush, limitsForPush, type MarketScale } from '@/lib/scenario/push-limits';
@@ -10,7 +12,6 @@ import type { PricedPush } from '@/lib/scenario/spend';
 import { ChoiceField } from '../controls/choice-field';
 import { RangeField } from '../controls/range-field';
 import styles from './change.module.css';
-import { useScenario } from './scenario-state';
 
 export interface CounterQuestion {
   target: Target;
@@ -57,11 +58,13 @@ const LASTING = 'good';
 
 interface CounterFormProps {
   question: CounterQuestion;
+  words: Words;
+  scale: MarketScale;
   onChange: (question: CounterQuestion) => void;
 }
 
-export function CounterForm({ question, onChange }: CounterFormProps) {
-  const { words, scale } = useScenario();
+/** Drawn anew only for another question, not for each move of a push above it. */
+export const CounterForm = memo(function CounterForm({ question, words, scale, onChange }: CounterFormProps) {
   const { target, counter } = question;
   const limits = limitsForPush(counter.kind, scale);
   const set = (change: Partial<Target>) => onChange({ ...question, target: { ...target, ...change } });
@@ -139,4 +142,4 @@ export function CounterForm({ question, onChange }: CounterFormProps) {
       />
     </div>
   );
-}
+});

@@ -7,6 +7,7 @@ import type { BriefFacts } from '@/lib/brief/facts';
 import { createWords, type Words } from '@/lib/brief/words';
 import type { MarketScale } from '@/lib/scenario/push-limits';
 import type { PricedPush } from '@/lib/scenario/spend';
+import type { CounterQuestion } from './counter-form';
 import { readMarketScale } from './market-scale';
 import {
   type DraftHistory,
@@ -34,6 +35,9 @@ interface ScenarioState {
   pushes: PricedPush[];
   /** What is pushed, in a few words; empty when nothing is. */
   name: string;
+  /** The last question about a counter-push that was looked for; null: none yet. */
+  asked: CounterQuestion | null;
+  setAsked: (question: CounterQuestion) => void;
 }
 
 const ScenarioContext = createContext<ScenarioState | null>(null);
@@ -49,6 +53,7 @@ export function ScenarioProvider({ facts, start, children }: ScenarioProviderPro
   const words = useMemo(() => createWords(facts, LOCALE), [facts]);
   const scale = useMemo(() => readMarketScale(facts), [facts]);
   const [history, setHistory] = useState<DraftHistory>(() => startHistory(start ?? firstDraft(scale)));
+  const [asked, setAsked] = useState<CounterQuestion | null>(null);
   const isChanged = history.past.length > 0 || history.future.length > 0;
   const reset = useCallback((draft: ScenarioDraft) => setHistory(startHistory(draft)), []);
   useQueryDraft(history.now, isChanged, start ? null : reset);
@@ -71,8 +76,10 @@ export function ScenarioProvider({ facts, start, children }: ScenarioProviderPro
       redo: forth && (() => setHistory(forth)),
       pushes,
       name: nameScenario(words, pushes),
+      asked,
+      setAsked,
     };
-  }, [facts, words, scale, history, change]);
+  }, [facts, words, scale, history, change, asked]);
   return <ScenarioContext value={state}>{children}</ScenarioContext>;
 }
 

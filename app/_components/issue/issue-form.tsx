@@ -19,9 +19,10 @@ interface IssueFormProps {
 }
 
 export function IssueForm({ marketId, scenarios }: IssueFormProps) {
-  const { pushes, draft, name } = useScenario();
+  const { pushes, draft, name, asked } = useScenario();
   const [chosen, setChosen] = useState<string[]>([]);
   const [mayTry, setMayTry] = useState(false);
+  const [withAnswer, setWithAnswer] = useState(true);
   const [explanation, setExplanation] = useState<Explanation | null>(null);
   const [isPending, startTransition] = useTransition();
   const tried = { id: TRIED, name, pushes, money: draft.money };
@@ -30,7 +31,12 @@ export function IssueForm({ marketId, scenarios }: IssueFormProps) {
   const issue = () =>
     startTransition(async () => {
       const form = {
-        scenarios: taken.map(({ name, pushes, money }) => ({ name, pushes, money })),
+        scenarios: taken.map(({ id, name, pushes, money }) => ({
+          name,
+          pushes,
+          money,
+          question: id === TRIED && withAnswer ? asked : null,
+        })),
         mayReadersTry: mayTry && taken.length > 0,
       };
       setExplanation(await issueForecastAction(marketId, form));
@@ -57,6 +63,16 @@ export function IssueForm({ marketId, scenarios }: IssueFormProps) {
               {scenario.id === TRIED ? `with the push tried above: ${scenario.name}` : scenario.name}
             </label>
           ))}
+          {asked && chosen.includes(TRIED) ? (
+            <label>
+              <input
+                type="checkbox"
+                checked={withAnswer}
+                onChange={(event) => setWithAnswer(event.target.checked)}
+              />
+              with the smallest answer to it, as it was looked for
+            </label>
+          ) : null}
           {taken.length > 0 ? (
             <label>
               <input type="checkbox" checked={mayTry} onChange={(event) => setMayTry(event.target.checked)} />
