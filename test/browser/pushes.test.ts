@@ -9,9 +9,10 @@ import { signUp, tabTo } from './people';
 import { type RunningApp, startApp } from './running-app';
 
 const FIT_LIMIT_MS = 120_000;
-/** A quiet machine redraws within a twentieth of a second (the bench measures it); one that runs many tests must not stand still. */
-const REDRAW_LIMIT_MS = 2000;
-/** The best of so many moves counts: other work on the machine is no property of the page. */
+/** Work of the page for a move of a slider, in processor time: other work on the machine does not count. Counts all that follows
+ * the move, also what comes after its figures; the bench has the time to the redraw. */
+const WORK_LIMIT_MS = 150;
+/** Moves that the mean is taken over. */
 const MOVES = 12;
 
 let app: RunningApp;
@@ -137,32 +138,45 @@ describe.sequential('a scenario of three pushes', () => {
     await tabsOf(page).first().check();
     const slider = deskOf(page).getByRole('slider', { name: 'Recruits' }).first();
     await slider.focus();
+    const devtools = await page.context().newCDPSession(page);
+    await devtools.send('Performance.enable', { timeDomain: 'threadTicks' });
+    const readWork = async () => {
+      const { metrics } = await devtools.send('Performance.getMetrics');
+      return 1000 * (metrics.find(({ name }) => name === 'TaskDuration')?.value ?? Number.NaN);
+    };
+    const before = await readWork();
     const times = await page.evaluate(measureMoves, MOVES);
-    console.log(`slider to redraw, three pushes: ${times.map((time) => time.toFixed(0)).join(', ')} ms`);
+    const work = ((await readWork()) - before) / MOVES;
+    const spelt = times.map((time) => time.toFixed(0)).join(', ');
+    console.log(
+      `slider to redraw, three pushes: ${spelt} ms; work of the page a move: ${work.toFixed(0)} ms`,
+    );
     expect(times).toHaveLength(MOVES);
-    expect(Math.min(...times)).toBeLessThan(REDRAW_LIMIT_MS);
+    expect(work).toBeLessThan(WORK_LIMIT_MS);
   });
 });
 
-/** Runs in the page: milliseconds from a key on the focused slider to the changed line of the figure on the screen. */
+/** Runs in the page: milliseconds from each move of the focused slider to the frame after the first line that it changes. */
 async function measureMoves(moves: number): Promise<number[]> {
   const slider = document.activeElement as HTMLInputElement;
   const place = document.querySelector('#change')!;
-  const lines = () => [...place.querySelectorAll('svg path')].map((path) => path.getAttribute('d')).join();
+  const setValue = Object.getOwnPropertyDescriptor(HTMLInputElement.prototype, 'value')!.set!;
   const times: number[] = [];
   for (let move = 0; move < moves; move++) {
-    const before = lines();
     const start = performance.now();
-    const setValue = Object.getOwnPropertyDescriptor(HTMLInputElement.prototype, 'value')!.set!;
+    const redrawn = new Promise<void>((resolve) => {
+      const watcher = new MutationObserver(() => {
+        watcher.disconnect();
+        requestAnimationFrame(() => resolve());
+      });
+      watcher.observe(place, { attributeFilter: ['d'], subtree: true });
+    });
     setValue.call(slider, String(Number(slider.value) + 5 * Number(slider.step || 1)));
     slider.dispatchEvent(new Event('input', { bubbles: true }));
     slider.dispatchEvent(new Event('change', { bubbles: true }));
-    while (lines() === before) {
-      if (performance.now() - start > 5000) throw new Error('nothing was redrawn');
-      await new Promise((resolve) => setTimeout(resolve, 0));
-    }
-    await new Promise((resolve) => requestAnimationFrame(resolve));
+    await redrawn;
     times.push(performance.now() - start);
+    await new Promise((resolve) => setTimeout(resolve, 100));
   }
   return times;
 }
@@ -194,8 +208,10 @@ describe.sequential('the further questions', () => {
       .getByText(/on average/)
       .first()
       .waitFor();
+    await panel.getByText(/known, it can be said up to which spend/).waitFor();
+    await typeNumber(panel.getByLabel(/^The same of/), '2');
     await panel.getByRole('button', { name: /^Up to which spend/ }).click();
-    await panel.getByText(/pays/i).last().waitFor();
+    await panel.getByText(/brings? back/).waitFor();
     await expect.poll(() => new URL(page.url()).searchParams.get('money')).toMatch(/EUR.*3/);
     expect(await findViolations(page)).toEqual([]);
   });

@@ -118,6 +118,13 @@ function BreakEvenQuestion({ prepared, money }: { prepared: PreparedScenario; mo
   const push = draft.pushes[draft.open];
   const { answer, isOld, ask, stop } = useAnswerRun<BreakEven>([push, money, ...draft.pushes]);
   if (!push || !(push.size > 0)) return null;
+  const pusher = push.firm === 1 ? 'focal' : 'rival';
+  if (money.marginPerUserMonth[pusher] === null)
+    return (
+      <p className={styles.note}>
+        With the margin of {words.name(pusher)} known, it can be said up to which spend the open push pays.
+      </p>
+    );
   const others = draft.pushes.filter((one) => one !== push && one.size > 0);
   const isRunning = answer.state === 'running';
   return (
