@@ -221,8 +221,15 @@ describe.sequential('corrections', () => {
     await page.getByLabel('Compared with').selectOption('2');
     await page.getByRole('button', { name: 'Compare' }).click();
     await page.getByText('1 month changed, 1 taken in again.').waitFor();
-    await page.getByRole('button', { name: 'Bring it back as revision 3' }).click();
-    await page.getByRole('button', { name: 'Bring it back', exact: true }).click();
+    const confirm = page.getByRole('button', { name: 'Bring it back', exact: true });
+    // A page that was just opened answers once its scripts run.
+    await expect
+      .poll(async () => {
+        await page.getByRole('button', { name: 'Bring it back as revision 3' }).click();
+        return confirm.isVisible();
+      })
+      .toBe(true);
+    await confirm.click();
     await page.waitForURL(marketUrl);
     await page.goto(`${marketUrl}/data`);
     await page.getByText('revision 1 brought back').waitFor();
