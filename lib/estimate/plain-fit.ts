@@ -33,12 +33,15 @@ export interface PlainFitOptions {
   errorScale: ErrorScale;
   starts: number;
   seed: number;
+  /** No further start is tried after so many evaluations: counts that follow no path would take them all to their limit. */
+  maxWork: number;
 }
 
 const DEFAULT_PLAIN_FIT_OPTIONS: Readonly<PlainFitOptions> = {
   errorScale: 'log',
   starts: 12,
   seed: 1,
+  maxWork: Number.POSITIVE_INFINITY,
 };
 
 export interface PlainFit {
@@ -104,7 +107,7 @@ export function* fitPlainInSteps(
   series: PlainSeries,
   options: Partial<PlainFitOptions> = {},
 ): Generator<void, PlainFit> {
-  const { errorScale, starts, seed } = { ...DEFAULT_PLAIN_FIT_OPTIONS, ...options };
+  const { errorScale, starts, seed, maxWork } = { ...DEFAULT_PLAIN_FIT_OPTIONS, ...options };
   const problem = createPlainProblem(series, errorScale);
   if (!(problem.residualCount >= PLAIN_PARAMETER_COUNT)) {
     throw new RangeError(
@@ -113,8 +116,12 @@ export function* fitPlainInSteps(
   }
   const isBounded = IDS.map((_, j) => j >= FIRST_CROWDING);
   const ends: NonNegativeFit[] = [];
+  let work = 0;
   for (const start of createPlainStarts(series, problem, starts, seed)) {
-    ends.push(yield* fitNonNegativeInSteps(problem, start, isBounded, FIRST_PASS));
+    const end = yield* fitNonNegativeInSteps(problem, start, isBounded, FIRST_PASS);
+    ends.push(end);
+    work += end.evaluations;
+    if (work > maxWork) break;
   }
   const first = ends.reduce((a, b) => (b.fit.cost < a.fit.cost ? b : a));
   const best = yield* fitNonNegativeInSteps(problem, first.theta, isBounded, SECOND_PASS);

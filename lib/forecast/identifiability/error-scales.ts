@@ -12,6 +12,8 @@ import type { IdentifiabilityReport, Verdict } from './report';
 
 /** Starts of each fit; the regression among them is mostly at the best value already. */
 const STARTS = 3;
+/** Evaluations after which no further start is tried: several times what counts of a market take. */
+const MAX_WORK = 1000;
 /** Fewer counts beyond the parameters leave nothing to judge a fit by. */
 const SPARE_COUNTS = 4;
 
@@ -51,7 +53,7 @@ export function fitScale(
   errorScale: ErrorScale,
   seed: number,
 ): Generator<void, PlainFit> {
-  return fitPlainInSteps(series, { errorScale, starts: STARTS, seed });
+  return fitPlainInSteps(series, { errorScale, starts: STARTS, seed, maxWork: MAX_WORK });
 }
 
 /** @returns null where a fit found nothing finite */

@@ -16,7 +16,7 @@ import { anySeries, driveInSlices, ODD_SERIES } from '../odd-series';
 import { drawSetAround } from './draw-sets';
 
 /** A series that wanders far from any path makes the plain fits work to their limit. */
-const SLOW = 60_000;
+const SLOW = 180_000;
 
 /** The series with a fit that somebody else made: the middle of the priors, and draws of any market. */
 function inputFor(series: MonthlySeries): AnalysisInput | null {
