@@ -339,6 +339,8 @@ describe.sequential('the desk on other screens', () => {
       .or(deskOf(page).getByRole('button').first())
       .first()
       .focus();
+    // The kind of push and, after it, the number of recruits are both called so.
+    await tabTo(page, /^Recruits$/);
     await tabTo(page, /^Recruits$/);
     await page.keyboard.press('Control+A');
     await page.keyboard.type('250');
