@@ -10,7 +10,7 @@ export function DecisionFigure({ figure }: { figure: DecisionFigureData }) {
       <p className={styles.headline}>
         <SentenceText sentence={figure.headline} />
       </p>
-      <FigureFrame caption={figure.caption} table={figure.table}>
+      <FigureFrame caption={figure.caption} table={figure.table} isDrawn={false}>
         <div className={styles.bars} data-short-labels role="img" aria-label={figure.description}>
           <div className={styles.barRow} data-head>
             <span className={styles.barHead}>likely · very likely</span>

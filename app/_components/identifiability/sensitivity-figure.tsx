@@ -13,7 +13,7 @@ export function SensitivityFigure({ figure }: { figure: SensitivityFigureData })
       <p className={styles.headline}>
         <SentenceText sentence={figure.headline} />
       </p>
-      <FigureFrame caption={figure.caption} table={figure.table}>
+      <FigureFrame caption={figure.caption} table={figure.table} isDrawn={false}>
         <div className={styles.bars} role="img" aria-label={`${figure.title}. ${spoken.join('. ')}`}>
           <div className={styles.barRow} data-head>
             <span className={styles.barHead}>of the spread</span>
