@@ -79,8 +79,9 @@ function resolveStyles(original: Element, copy: Element): void {
   if (original.tagName === 'text' || original.tagName === 'tspan') {
     rules.push(`font-family:${/literata/i.test(style.fontFamily) ? SERIF : SANS}`);
   }
+  // What stands in attributes may name variables that the file does not know.
+  for (const name of [...PROPERTIES, 'class']) copy.removeAttribute(name);
   copy.setAttribute('style', rules.join(';'));
-  copy.removeAttribute('class');
   for (let index = 0; index < original.children.length; index++) {
     resolveStyles(original.children[index]!, copy.children[index]!);
   }

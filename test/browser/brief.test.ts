@@ -3,6 +3,7 @@
  * demonstration markets are enough; they are fitted when the app starts.
  */
 import { readFileSync } from 'node:fs';
+import Papa from 'papaparse';
 import type { Browser, Download, Page } from 'playwright-core';
 import { afterAll, beforeAll, describe, expect, test } from 'vitest';
 import { findViolations, openBrowser, openPage, shoot, type WatchedPage } from './browser';
@@ -46,22 +47,22 @@ describe.sequential('the main figure is saved', () => {
   test('as its unrounded numbers, which a spreadsheet reads as numbers', async () => {
     const download = await save(analyst.page, /^CSV/);
     expect(download.suggestedFilename()).toMatch(/^[\p{L}\p{N}-]+\.csv$/u);
-    const [header, ...rows] = (await contentOf(download))
-      .toString('utf8')
-      .replace('\uFEFF', '')
-      .trim()
-      .split('\r\n');
-    expect(header).toContain('Ostrel');
+    const text = (await contentOf(download)).toString('utf8').replace('\uFEFF', '');
+    const [header, ...rows] = Papa.parse<string[]>(text, { skipEmptyLines: true }).data;
+    expect(header!.join(' ')).toContain('Ostrel');
     expect(rows.length).toBeGreaterThan(24);
-    for (const row of rows) expect(row.split(',').length).toBe(header!.split(',').length);
+    for (const row of rows) {
+      expect(row).toHaveLength(header!.length);
+      for (const cell of row.slice(1)) expect(Number(cell)).not.toBeNaN();
+    }
   });
 
   test('as an SVG that stands alone: title, description, no variables, no class', async () => {
     const text = (await contentOf(await save(analyst.page, /^SVG/))).toString('utf8');
-    expect(text).toMatch(/^<svg[^>]*xmlns="http:\/\/www\.w3\.org\/2000\/svg"/);
-    expect(text).toMatch(/<title>.+<\/title><desc>.+<\/desc>/s);
-    expect(text).not.toMatch(/var\(--(?!band)/);
-    expect(text).not.toContain('class=');
+    expect(text.slice(0, 900)).toContain('xmlns="http://www.w3.org/2000/svg"');
+    expect(/<title>.+<\/title><desc>.+<\/desc>/s.test(text)).toBe(true);
+    expect(/var\(--/.test(text)).toBe(false);
+    expect(text.includes('class=')).toBe(false);
     const { page, context } = await openPage(browser);
     await page.setContent(`<img alt="" src="data:image/svg+xml;charset=utf-8,${encodeURIComponent(text)}">`);
     expect(
